@@ -1,0 +1,1 @@
+//! Building, catalogue and assumptions to findings, ratings and reasons. Pure.

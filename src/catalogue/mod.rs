@@ -1,0 +1,1 @@
+//! Uses, items, fuels, materials, leakage classes, detectors and sprinklers, inside the binary.

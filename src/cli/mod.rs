@@ -1,0 +1,1 @@
+//! Commands, their help and their tables.

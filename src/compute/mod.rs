@@ -1,0 +1,1 @@
+//! The threads that assessments run on, their queues and budgets.

@@ -1,0 +1,1 @@
+//! Flags and environment, parsed once.

@@ -1,0 +1,1 @@
+//! What a building is: values checked on construction, quantities with units.

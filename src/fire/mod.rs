@@ -1,0 +1,1 @@
+//! Enclosure fire dynamics: numbers in, numbers out.

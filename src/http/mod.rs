@@ -1,0 +1,1 @@
+//! Routes, extractors, errors to status.

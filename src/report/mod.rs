@@ -1,0 +1,1 @@
+//! Findings to the documents that people and programs receive.

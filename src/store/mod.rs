@@ -1,0 +1,1 @@
+//! All SQL. Rows and connections never leave this folder.

@@ -1,0 +1,1 @@
+//! The JSON forms that clients read and write.
