@@ -1,0 +1,97 @@
+//! Quantities: a number with a unit and physical limits, checked on construction.
+
+use std::marker::PhantomData;
+
+/// What a quantity measures: its name in the OpenAPI document, its unit, its limits.
+pub trait Kind: Copy + std::fmt::Debug + 'static {
+    /// Name of the schema, e.g. `RoomLength`.
+    const NAME: &'static str;
+    /// Unit in which the number stands, as people write it, e.g. `m`.
+    const UNIT: &'static str;
+    /// Least lawful value.
+    const MIN: f64;
+    /// Greatest lawful value.
+    const MAX: f64;
+    /// Why the limits stand where they do.
+    const LIMITS_BECAUSE: &'static str;
+}
+
+/// A finite number within the limits of its kind.
+#[derive(Debug, Clone, Copy, PartialEq, PartialOrd)]
+pub struct Quantity<K: Kind>(f64, PhantomData<K>);
+
+impl<K: Kind> Quantity<K> {
+    /// Checks the limits; NaN and infinities are outside them.
+    pub fn new(value: f64) -> Option<Self> {
+        (K::MIN..=K::MAX).contains(&value).then_some(Self(value, PhantomData))
+    }
+
+    /// The number, in the kind's unit.
+    pub fn get(self) -> f64 {
+        self.0
+    }
+}
+
+macro_rules! kinds {
+    ($($(#[$meta:meta])* $alias:ident = $kind:ident, $unit:literal, $min:literal ..= $max:literal, $because:literal;)*) => {$(
+        #[doc = concat!("Kind of [`", stringify!($alias), "`].")]
+        #[derive(Debug, Clone, Copy, PartialEq, PartialOrd)]
+        pub struct $kind;
+        impl Kind for $kind {
+            const NAME: &'static str = stringify!($alias);
+            const UNIT: &'static str = $unit;
+            const MIN: f64 = $min;
+            const MAX: f64 = $max;
+            const LIMITS_BECAUSE: &'static str = $because;
+        }
+        $(#[$meta])*
+        pub type $alias = Quantity<$kind>;
+    )*};
+}
+
+kinds! {
+    /// Length or width of a room.
+    RoomLength = RoomLengthKind, "m", 0.3..=1000.0, "from a riser cupboard to the longest hall";
+    /// Height of a room.
+    RoomHeight = RoomHeightKind, "m", 0.3..=150.0, "from a crawl space to an atrium or shaft";
+    /// Floor area of a room given by area and perimeter.
+    FloorArea = FloorAreaKind, "m2", 0.09..=1000000.0, "the square of the length's limits";
+    /// Perimeter of a room given by area and perimeter.
+    Perimeter = PerimeterKind, "m", 1.2..=20000.0, "four times the length's limits and some";
+    /// Width or height of an opening.
+    OpeningSide = OpeningSideKind, "m", 0.01..=100.0, "from a gap to a hangar door";
+    /// Height of an opening's lower edge above the floor.
+    Sill = SillKind, "m", 0.0..=150.0, "no higher than a room can be";
+    /// Elevation of a floor above the entrance level.
+    Elevation = ElevationKind, "m", -500.0..=1000.0, "deepest station to tallest tower";
+    /// Position on the plan.
+    PlanOffset = PlanOffsetKind, "m", -100000.0..=100000.0, "a site";
+    /// An angle.
+    Angle = AngleKind, "deg", -360.0..=360.0, "one turn either way";
+    /// Height above the floor or below the ceiling, or a distance inside a room.
+    Distance = DistanceKind, "m", 0.0..=1000.0, "no farther than a room is long";
+    /// A leakage area.
+    LeakageArea = LeakageAreaKind, "m2", 0.0..=100.0, "beyond it, it is an opening";
+    /// A mechanical air flow.
+    AirFlow = AirFlowKind, "m3/s", 0.0..=1000.0, "smoke extraction of a large hall";
+    /// Thickness of a lining.
+    Thickness = ThicknessKind, "m", 0.0001..=5.0, "from paint to a fortress wall";
+    /// Heat of the contents per floor area.
+    FireLoadDensity = FireLoadDensityKind, "MJ/m2", 0.0..=100000.0, "high racks full of plastics";
+    /// Mass of a fuel package.
+    Mass = MassKind, "kg", 0.0..=1000000.0, "a lorry load and more";
+    /// Share between nothing and all.
+    Fraction = FractionKind, "", 0.0..=1.0, "a share of one";
+    /// A span of time.
+    Span = SpanKind, "s", 0.0..=86400.0, "one day";
+    /// A flow of water.
+    WaterFlow = WaterFlowKind, "L/min", 0.0..=1000000.0, "a fire main and more";
+    /// A fire resistance.
+    FireRating = FireRatingKind, "min", 0.0..=480.0, "eight hours";
+    /// A temperature.
+    Temperature = TemperatureKind, "C", -60.0..=1500.0, "climate to flame";
+    /// A longitude.
+    Longitude = LongitudeKind, "deg", -180.0..=180.0, "the globe";
+    /// A latitude.
+    Latitude = LatitudeKind, "deg", -90.0..=90.0, "the globe";
+}
