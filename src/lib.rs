@@ -15,16 +15,12 @@ pub mod wire;
 
 pub mod report;
 
-pub mod exchange;
-
 pub mod store;
 
 pub mod compute;
 
-pub mod jobs;
+pub mod http;
 
 pub mod config;
-
-pub mod http;
 
 pub mod cli;

@@ -1,1 +1,0 @@
-//! Formats of others.

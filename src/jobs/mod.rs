@@ -1,1 +1,0 @@
-//! Long work in the background.
