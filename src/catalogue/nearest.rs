@@ -18,8 +18,8 @@ pub(super) fn nearest<'a>(keys: Vec<&'a str>, name: &str) -> Option<&'a str> {
         .map(|c| if c.is_ascii_alphanumeric() { c.to_ascii_lowercase() } else { '_' })
         .collect();
 
-    let holds_the_word = |key: &&str| key.split('_').any(|word| word == wanted);
-    if let Some(key) = keys.iter().copied().filter(holds_the_word).min_by_key(|key| key.len()) {
+    // Files put the usual rows first, so the first that holds the word is the likeliest.
+    if let Some(key) = keys.iter().find(|key| key.split('_').any(|word| word == wanted)) {
         return Some(key);
     }
     keys.into_iter()

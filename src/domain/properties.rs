@@ -40,7 +40,12 @@ pub trait Properties {
         Vec::new()
     }
 
-    /// Every number out of its limits, and every pair that contradicts itself.
+    /// What else is wrong, beyond single numbers and pairs.
+    fn own_fault(&self) -> Option<PropertyFault> {
+        None
+    }
+
+    /// Every number out of its limits, every pair that contradicts itself, and what else is wrong.
     fn faults(&self) -> Vec<PropertyFault> {
         let numbers = self.numbers();
         let value = |member| numbers.iter().find(|(name, _)| *name == member).map(|(_, v)| *v);
@@ -61,6 +66,7 @@ pub trait Properties {
                 faults.push(PropertyFault { member: low, reason: format!("must not exceed `{high}`") });
             }
         }
+        faults.extend(self.own_fault());
         faults
     }
 }
@@ -131,6 +137,9 @@ pub enum IgnitionEase {
 }
 
 impl IgnitionEase {
+    /// Every one of them, for reading names and printing them.
+    pub const ALL: [Self; 3] = [Self::Easy, Self::Normal, Self::Hard];
+
     /// Received flux at which the thing is taken to ignite, in kW/m²: 10, 20 and 40.
     ///
     /// Source: Babrauskas, *Will the second item ignite?*, Fire Safety Journal 4 (1981/82).
@@ -261,6 +270,14 @@ impl Properties for FuelProperties {
     fn ordered(&self) -> Vec<[&'static str; 2]> {
         vec![["chemical_heat_mj_kg", "heat_of_combustion_mj_kg"]]
     }
+
+    /// Without carbon or hydrogen the formula has nothing to burn.
+    fn own_fault(&self) -> Option<PropertyFault> {
+        (self.carbon == 0.0 && self.hydrogen == 0.0).then(|| PropertyFault {
+            member: "carbon",
+            reason: "must be above 0 when `hydrogen` is 0".into(),
+        })
+    }
 }
 
 /// What a combustible lining does to the growth of a fire in its room.
@@ -273,6 +290,9 @@ pub enum ExposedGrowth {
 }
 
 impl ExposedGrowth {
+    /// Every one of them, for reading names and printing them.
+    pub const ALL: [Self; 2] = [Self::Fast, Self::UltraFast];
+
     /// Least growth coefficient of a fire in a room so lined, in kW/s².
     ///
     /// The classes are those of EN 1991-1-2, Table E.5 (1 MW in 150 s and in 75 s, from
@@ -370,6 +390,10 @@ pub enum DetectorKind {
 }
 
 impl DetectorKind {
+    /// Every one of them, for reading names and printing them.
+    pub const ALL: [Self; 5] =
+        [Self::SmokePoint, Self::SmokeBeam, Self::SmokeAspirating, Self::HeatFixed, Self::HeatRateOfRise];
+
     /// Name on the wire and in the catalogue.
     pub const fn name(self) -> &'static str {
         match self {
@@ -416,6 +440,15 @@ impl Properties for DetectorProperties {
             ("activation_rate_k_min", self.activation_rate_k_min),
             ("activation_optical_density_1_m", self.activation_optical_density_1_m),
         ])
+    }
+
+    /// A detector without a criterion would never act.
+    fn own_fault(&self) -> Option<PropertyFault> {
+        let criteria = self.numbers().iter().filter(|(member, _)| member.starts_with("activation_")).count();
+        (criteria == 0).then(|| PropertyFault {
+            member: "activation_rise_k",
+            reason: "must be given, or another criterion that makes the detector act".into(),
+        })
     }
 }
 
@@ -543,5 +576,33 @@ mod tests {
 
         assert_eq!(silent.faults(), vec![]);
         assert_eq!(silent.numbers(), [("activation_rise_k", 13.0)]);
+        let deaf = DetectorProperties { activation_rise_k: None, ..silent };
+        assert_eq!(members(deaf.faults()), ["activation_rise_k"]);
+    }
+
+    #[test]
+    fn a_fuel_needs_carbon_or_hydrogen_and_cannot_release_more_than_it_holds() {
+        let methane = FuelProperties {
+            heat_of_combustion_mj_kg: 50.1,
+            chemical_heat_mj_kg: 49.6,
+            radiative_fraction: 0.141,
+            carbon: 1.0,
+            hydrogen: 4.0,
+            oxygen: 0.0,
+            nitrogen: 0.0,
+            chlorine: 0.0,
+            co_yield_kg_kg: None,
+            soot_yield_kg_kg: None,
+            hcn_yield_kg_kg: None,
+            stoichiometric_air_kg_kg: 17.2,
+        };
+        let hydrogen = FuelProperties { carbon: 0.0, ..methane.clone() };
+        let nothing = FuelProperties { hydrogen: 0.0, ..hydrogen.clone() };
+        let swapped = FuelProperties { chemical_heat_mj_kg: 51.0, ..methane.clone() };
+
+        assert_eq!(methane.faults(), vec![]);
+        assert_eq!(hydrogen.faults(), vec![]);
+        assert_eq!(members(nothing.faults()), ["carbon"]);
+        assert_eq!(members(swapped.faults()), ["chemical_heat_mj_kg"]);
     }
 }

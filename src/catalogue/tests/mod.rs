@@ -1,3 +1,4 @@
+mod names;
 mod physics;
 mod rows;
 mod sources;

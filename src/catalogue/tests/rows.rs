@@ -131,6 +131,7 @@ fn a_slip_of_the_pen_is_offered_the_key_that_was_meant() {
         (Kind::Uses, "Hotel room", "hotel_room"),
         (Kind::Uses, "class_room", "classroom"),
         (Kind::Items, "matress", "mattress"),
+        (Kind::Items, "sofa", "upholstered_sofa"),
         (Kind::Items, "wardrob", "wardrobe"),
         (Kind::Materials, "gypsum", "gypsum_board"),
         (Kind::Materials, "gypsumboard", "gypsum_board"),
