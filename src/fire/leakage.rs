@@ -6,7 +6,28 @@ use super::constants::{AIR_SPECIFIC_HEAT_KJ_KGK, GRAVITY_M_S2, air_density_kg_m3
 /// Discharge coefficient of cracks. Source: [`KLOTE_MILKE`](crate::fire::sources::KLOTE_MILKE).
 pub const CRACK_DISCHARGE_COEFFICIENT: f64 = 0.65;
 
-/// Leakage area of a surface from its ratio, m².
+/// Leakage area of a surface from its ratio, in m².
+///
+/// ```text
+/// A_leak = r A
+/// ```
+///
+/// | symbol | argument        | unit  |
+/// |--------|-----------------|-------|
+/// | `A`    | `area_m2`       | m²    |
+/// | `r`    | `leakage_ratio` | m²/m² |
+///
+/// Range: ratios of the source run from 0.00007 (tight) to 0.0013 (very loose) for outer walls: the spread of one class to the
+/// next is a factor of two to three, and it decides.
+///
+/// Source: [`KLOTE_MILKE`](crate::fire::sources::KLOTE_MILKE).
+///
+/// ```
+/// use sootline::fire::leakage::surface_area_m2;
+///
+/// // By hand: 35 m² of average outer wall: 35 · 0.00021 = 0.00735 m².
+/// assert!((surface_area_m2(35.0, 2.1e-4) - 0.00735).abs() < 1e-9);
+/// ```
 #[must_use]
 pub fn surface_area_m2(area_m2: f64, leakage_ratio: f64) -> f64 {
     area_m2 * leakage_ratio
@@ -16,6 +37,22 @@ pub fn surface_area_m2(area_m2: f64, leakage_ratio: f64) -> f64 {
 ///
 /// ```text
 /// V' = Q / (ρ_a c_p T_a)
+/// ```
+///
+/// | symbol | argument                | unit |
+/// |--------|-------------------------|------|
+/// | `Q`    | `net_heat_release_kw`   | kW   |
+/// | `T_a`  | `ambient_temperature_k` | K    |
+///
+/// `Q` is the heat that stays in the gas. Exact for an ideal gas at constant pressure.
+///
+/// Source: [`KARLSSON_QUINTIERE_2000`](crate::fire::sources::KARLSSON_QUINTIERE_2000).
+///
+/// ```
+/// use sootline::fire::leakage::expansion_m3_s;
+///
+/// // By hand: 500 / (1.2042 · 1.005 · 293.15) = 500 / 354.77 = 1.409 m³/s.
+/// assert!((expansion_m3_s(500.0, 293.15) - 1.409).abs() < 0.001);
 /// ```
 #[must_use]
 pub fn expansion_m3_s(net_heat_release_kw: f64, ambient_temperature_k: f64) -> f64 {
@@ -29,6 +66,25 @@ pub fn expansion_m3_s(net_heat_release_kw: f64, ambient_temperature_k: f64) -> f
 ///
 /// ```text
 /// Δp = ( Q / (c_p T_a C_d A) )² / (2 ρ_a)
+/// ```
+///
+/// | symbol | field                   | unit |
+/// |--------|-------------------------|------|
+/// | `Q`    | `net_heat_release_kw`   | kW   |
+/// | `T_a`  | `ambient_temperature_k` | K    |
+/// | `C_d`  | `discharge_coefficient` | -    |
+/// | `A`    | `leakage_area_m2`       | m²   |
+///
+/// Range: see [`quasi_steady_pressure_limits`].
+///
+/// Source: [`KARLSSON_QUINTIERE_2000`](crate::fire::sources::KARLSSON_QUINTIERE_2000).
+///
+/// ```
+/// use sootline::fire::leakage::{PressureInput, quasi_steady_pressure_pa};
+///
+/// // By hand: 100/(1.005·293) = 0.33960 kg/s; (0.33960/(0.6·0.01))² / (2·1.20478) = 1329.5 Pa.
+/// let vent = PressureInput { net_heat_release_kw: 100.0, leakage_area_m2: 0.01, ambient_temperature_k: 293.0, discharge_coefficient: 0.6 };
+/// assert!((quasi_steady_pressure_pa(vent) - 1329.5).abs() < 0.5);
 /// ```
 #[must_use]
 pub fn quasi_steady_pressure_pa(vent: PressureInput) -> f64 {
@@ -77,6 +133,26 @@ pub struct LeakyRoom {
 ///
 /// ```text
 /// z_n = H / (1 + ρ_a/ρ_g)      m = C_d (A/2) √( 2 ρ_a (ρ_a - ρ_g) g z_n )
+/// ```
+///
+/// | symbol | field                                 | unit |
+/// |--------|---------------------------------------|------|
+/// | `A`    | `leakage_area_m2`                     | m²   |
+/// | `H`    | `height_m`                            | m    |
+/// | `ρ_g`  | from `gas_temperature_k`              | kg/m³|
+/// | `ρ_a`  | from `ambient_temperature_k`          | kg/m³|
+///
+/// `C_d` is [`CRACK_DISCHARGE_COEFFICIENT`]. The most that cracks let in: half of them at the floor and half at the ceiling is
+/// the best place for a draught. No wind.
+///
+/// Source: [`KARLSSON_QUINTIERE_2000`](crate::fire::sources::KARLSSON_QUINTIERE_2000).
+///
+/// ```
+/// use sootline::fire::leakage::{LeakyRoom, buoyant_exchange_kg_s};
+///
+/// // By hand: ρ 1.20478 and 0.8825, z_n = 3/2.36519 = 1.26840 m; 0.65·0.01·√(2·1.20478·0.32228·9.80665·1.2684) = 0.020202 kg/s.
+/// let room = LeakyRoom { leakage_area_m2: 0.02, height_m: 3.0, gas_temperature_k: 400.0, ambient_temperature_k: 293.0 };
+/// assert!((buoyant_exchange_kg_s(room) - 0.020202).abs() < 1e-5);
 /// ```
 #[must_use]
 pub fn buoyant_exchange_kg_s(room: LeakyRoom) -> f64 {
