@@ -199,3 +199,144 @@ impl Phases {
         }
     }
 }
+
+#[cfg(test)]
+mod tests {
+    use super::*;
+    use approx::assert_relative_eq;
+    use proptest::prelude::*;
+
+    const FIRE: DesignFire = DesignFire {
+        growth_kw_s2: 0.0469,
+        peak_kw: 2000.0,
+        energy_kj: 600_000.0,
+        decay_from_share: DECAY_FROM_SHARE,
+    };
+
+    #[test]
+    fn a_fast_fire_in_a_small_room_has_the_course_worked_by_hand() {
+        // √(2000/0.0469) = 206.504 s with 2000·206.504/3 = 137 669 kJ; 420 000 kJ are burnt after another
+        // 282 331/2000 = 141.165 s; the last 180 000 kJ take 2·180 000/2000 = 180 s.
+        let phases = FIRE.phases();
+
+        assert_relative_eq!(phases.growth_end_s, 206.504, max_relative = 1e-5);
+        assert_relative_eq!(phases.decay_start_s, 347.669, max_relative = 1e-5);
+        assert_relative_eq!(phases.end_s, 527.669, max_relative = 1e-5);
+        assert_eq!(phases.reached_kw, 2000.0);
+    }
+
+    #[test]
+    fn little_fuel_decays_before_the_peak() {
+        // 10 000 kJ: 7000 kJ are burnt after (3·7000/0.0469)^(1/3) = 76.51 s, at 0.0469·76.51² = 274.5 kW; decay 2·3000/274.5 = 21.86 s.
+        let small = DesignFire {
+            energy_kj: 10_000.0,
+            ..FIRE
+        };
+        let phases = small.phases();
+
+        assert_relative_eq!(phases.reached_kw, 274.5, max_relative = 1e-3);
+        assert_eq!(phases.growth_end_s, phases.decay_start_s);
+        assert_relative_eq!(
+            phases.end_s - phases.decay_start_s,
+            21.86,
+            max_relative = 1e-3
+        );
+        assert_eq!(small.time_to_kw_s(300.0), None);
+    }
+
+    #[test]
+    fn a_fire_of_nothing_is_nothing() {
+        for nothing in [
+            DesignFire {
+                energy_kj: 0.0,
+                ..FIRE
+            },
+            DesignFire {
+                peak_kw: 0.0,
+                ..FIRE
+            },
+            DesignFire {
+                growth_kw_s2: 0.0,
+                ..FIRE
+            },
+        ] {
+            assert_eq!(nothing.reached_kw(), 0.0);
+            assert_eq!(nothing.heat_release_kw(100.0), 0.0);
+            assert_eq!(nothing.energy_released_kj(100.0), 0.0);
+            assert_eq!(nothing.established_s(), None);
+        }
+    }
+
+    #[test]
+    fn all_fuel_before_the_decay_ends_at_a_blow() {
+        let burner = DesignFire {
+            decay_from_share: 1.0,
+            ..FIRE
+        };
+
+        assert_eq!(burner.phases().decay_start_s, burner.phases().end_s);
+        assert_eq!(burner.heat_release_kw(burner.duration_s() + 1e-6), 0.0);
+    }
+
+    #[test]
+    fn a_cap_lengthens_the_fire_and_keeps_its_fuel() {
+        let capped = FIRE.capped_kw(1000.0);
+
+        assert!(capped.duration_s() > FIRE.duration_s());
+        assert_relative_eq!(capped.energy_released_kj(1e6), FIRE.energy_kj);
+    }
+
+    fn any_fire() -> impl Strategy<Value = DesignFire> {
+        (-3.0..0.0_f64, 1.0..4.5_f64, 2.0..7.0_f64, 0.05..1.0_f64).prop_map(
+            |(growth, peak, energy, share)| DesignFire {
+                growth_kw_s2: 10.0_f64.powf(growth),
+                peak_kw: 10.0_f64.powf(peak),
+                energy_kj: 10.0_f64.powf(energy),
+                decay_from_share: share,
+            },
+        )
+    }
+
+    proptest! {
+        #[test]
+        fn the_area_under_the_curve_is_the_fuel(fire in any_fire()) {
+            let end_s = fire.duration_s();
+            let steps = 20_000_u32;
+            let step_s = end_s / f64::from(steps);
+            let area_kj: f64 = (0..steps).map(|i| fire.heat_release_kw((f64::from(i) + 0.5) * step_s) * step_s).sum();
+
+            prop_assert!((area_kj / fire.energy_kj - 1.0).abs() < 1e-3);
+            prop_assert!((fire.energy_released_kj(end_s) / fire.energy_kj - 1.0).abs() < 1e-9);
+        }
+
+        #[test]
+        fn the_energy_is_the_integral_at_every_moment(fire in any_fire(), share in 0.0..1.0_f64) {
+            let time_s = share * fire.duration_s();
+            let step_s = 1e-4 * fire.duration_s();
+            let slope_kw = (fire.energy_released_kj(time_s + step_s) - fire.energy_released_kj(time_s)) / step_s;
+            let (a, b) = (fire.heat_release_kw(time_s), fire.heat_release_kw(time_s + step_s));
+
+            // The law may change within the step: the mean slope lies between the ends, or between them and the peak.
+            let slack = 1e-6 * fire.reached_kw() + 1e-12 * fire.energy_kj / step_s;
+            prop_assert!(slope_kw >= a.min(b) - slack);
+            prop_assert!(slope_kw <= fire.reached_kw() + slack);
+        }
+
+        #[test]
+        fn more_fuel_never_burns_less_at_any_moment(fire in any_fire(), more in 1.0..20.0_f64, share in 0.0..1.2_f64) {
+            let richer = DesignFire { energy_kj: more * fire.energy_kj, ..fire };
+            let time_s = share * fire.duration_s();
+
+            prop_assert!(richer.heat_release_kw(time_s) >= fire.heat_release_kw(time_s) * (1.0 - 1e-9));
+        }
+
+        #[test]
+        fn the_time_to_a_heat_release_is_the_first(fire in any_fire(), share in 0.0..1.0_f64) {
+            let kw = share * fire.reached_kw();
+            let time_s = fire.time_to_kw_s(kw).unwrap();
+
+            prop_assert!(fire.heat_release_kw(time_s * (1.0 - 1e-9)) <= kw * (1.0 + 1e-9));
+            prop_assert!(time_s <= fire.phases().decay_start_s * (1.0 + 1e-9));
+        }
+    }
+}

@@ -275,3 +275,246 @@ pub fn smoke_alarm_limits(place: CeilingPlace) -> Exceeded {
             "ceiling higher than the 15.5 m of the tests",
         )
 }
+
+#[cfg(test)]
+mod tests {
+    use super::*;
+    use approx::assert_relative_eq;
+
+    fn link(rti_m05s05: f64) -> HeatElement {
+        HeatElement {
+            rti_m05s05,
+            c_factor_m05s05: 0.0,
+            activation_temperature_k: 293.15 + 48.0,
+        }
+    }
+
+    fn watch(height_m: f64, radius_m: f64) -> Watch {
+        Watch {
+            place: CeilingPlace { height_m, radius_m },
+            ambient_temperature_k: 293.15,
+            until_s: 3600.0,
+        }
+    }
+
+    #[test]
+    fn steady_fires_set_links_off_when_others_worked_it_out() {
+        // By hand: t = RTI/√u ln(ΔT/(ΔT-48)); the third jet is too cool for ever.
+        let expected = [
+            (1000.0, watch(5.0, 2.5), 100.0, Some(121.0)),
+            (500.0, watch(3.0, 0.3), 50.0, Some(7.2)),
+            (200.0, watch(3.0, 3.0), 50.0, None),
+        ];
+        for (heat_kw, watch, rti, expected_s) in expected {
+            let got_s = activation_s(&link(rti), &watch, |_| heat_kw);
+            match expected_s {
+                Some(expected_s) => {
+                    assert_relative_eq!(got_s.unwrap(), expected_s, max_relative = 6e-3)
+                }
+                None => assert_eq!(got_s, None),
+            }
+        }
+    }
+
+    #[test]
+    fn steady_gas_gives_the_closed_form() {
+        // Derived: τ = 50/√2 = 35.355 s; 48 K of 100 K after 35.355 · ln(100/52) = 23.12 s.
+        let mut rise_k = 0.0;
+        for _ in 0..2312 {
+            rise_k = element_rise_k(
+                &link(50.0),
+                rise_k,
+                GasStep {
+                    gas_rise_k: 100.0,
+                    velocity_m_s: 2.0,
+                    step_s: 0.01,
+                },
+            );
+        }
+
+        assert_relative_eq!(rise_k, 48.0, max_relative = 1e-3);
+    }
+
+    #[test]
+    fn a_ramp_gives_the_closed_form_and_the_error_falls_with_the_square_of_the_step() {
+        // Derived: 0.5 K/s, u 2 m/s, 120 s: 0.5 (t - τ (1 - e^(-t/τ))) = 42.916 K.
+        let tau_s = 50.0 / 2.0_f64.sqrt();
+        let exact_k = 0.5 * (120.0 - tau_s * (1.0 - (-120.0 / tau_s).exp()));
+        assert_relative_eq!(exact_k, 42.916, max_relative = 1e-4);
+
+        let computed = |steps: u32| {
+            let step_s = 120.0 / f64::from(steps);
+            (0..steps).fold(0.0, |rise_k, i| {
+                let gas_rise_k = 0.5 * (f64::from(i) + 0.5) * step_s;
+                element_rise_k(
+                    &link(50.0),
+                    rise_k,
+                    GasStep {
+                        gas_rise_k,
+                        velocity_m_s: 2.0,
+                        step_s,
+                    },
+                )
+            })
+        };
+        let coarse = (computed(12) - exact_k).abs();
+        let fine = (computed(24) - exact_k).abs();
+        assert!((3.5..4.5).contains(&(coarse / fine)), "{coarse} {fine}");
+    }
+
+    #[test]
+    fn heat_lost_to_the_fitting_delays_and_can_prevent() {
+        let held_back = HeatElement {
+            c_factor_m05s05: 1.0,
+            ..link(100.0)
+        };
+        let free_s = activation_s(&link(100.0), &watch(4.0, 2.0), |_| 1500.0).unwrap();
+        let held_s = activation_s(&held_back, &watch(4.0, 2.0), |_| 1500.0).unwrap();
+        assert!(held_s > free_s);
+
+        // ΔT √u/(√u + C) must reach 48 K: 58.41 · 1.4255/(1.4255 + 0.5) = 43.2 K never does.
+        let lossy = HeatElement {
+            c_factor_m05s05: 0.5,
+            ..link(100.0)
+        };
+        assert_eq!(activation_s(&lossy, &watch(5.0, 2.5), |_| 1000.0), None);
+    }
+
+    #[test]
+    fn a_growing_fire_sets_links_off_later_the_slower_and_the_further() {
+        let fast = DesignFire {
+            growth_kw_s2: 0.0469,
+            peak_kw: 5000.0,
+            energy_kj: 5e6,
+            decay_from_share: 0.7,
+        };
+        let medium = DesignFire {
+            growth_kw_s2: 0.0117,
+            ..fast
+        };
+        let at_s = |rti: f64, radius_m: f64, fire: &DesignFire| {
+            activation_by_fire_s(&link(rti), &watch(3.0, radius_m), fire).unwrap()
+        };
+
+        assert!(at_s(50.0, 2.0, &fast) < at_s(150.0, 2.0, &fast));
+        assert!(at_s(50.0, 2.0, &fast) < at_s(50.0, 4.0, &fast));
+        assert!(at_s(50.0, 2.0, &fast) < at_s(50.0, 2.0, &medium));
+    }
+
+    #[test]
+    fn coarse_steps_hardly_move_the_answer() {
+        // Against steps of a hundredth of a second, done here by hand with the same jet.
+        let fire = DesignFire {
+            growth_kw_s2: 0.003,
+            peak_kw: 5000.0,
+            energy_kj: 5e6,
+            decay_from_share: 0.7,
+        };
+        let watch = watch(3.0, 3.0);
+        let (mut time_s, mut rise_k) = (0.0, 0.0);
+        while rise_k < 48.0 {
+            let heat_kw = fire.heat_release_kw(time_s + 0.005);
+            rise_k = element_rise_k(
+                &link(100.0),
+                rise_k,
+                GasStep {
+                    gas_rise_k: crate::fire::ceiling_jet::alpert_rise_k(heat_kw, watch.place),
+                    velocity_m_s: crate::fire::ceiling_jet::alpert_velocity_m_s(
+                        heat_kw,
+                        watch.place,
+                    ),
+                    step_s: 0.01,
+                },
+            );
+            time_s += 0.01;
+        }
+
+        let coarse_s = activation_by_fire_s(&link(100.0), &watch, &fire).unwrap();
+        assert!((coarse_s - time_s).abs() < 1.0, "{coarse_s} {time_s}");
+    }
+
+    #[test]
+    fn an_element_that_is_warm_enough_acts_at_once() {
+        let warm = HeatElement {
+            activation_temperature_k: 290.0,
+            ..link(50.0)
+        };
+
+        assert_eq!(activation_s(&warm, &watch(3.0, 3.0), |_| 0.0), Some(0.0));
+        assert_eq!(activation_s(&link(50.0), &watch(3.0, 3.0), |_| 0.0), None);
+    }
+
+    #[test]
+    fn a_wind_tunnel_gives_the_index_that_was_printed() {
+        // SNI 03-3985, after the NFPA 72 guide: 80 s at 5 ft/s, printed 180 (ft s)^½, exactly 178.9.
+        assert_relative_eq!(rti_m05s05(80.0, 5.0), 180.0, max_relative = 8e-3);
+    }
+
+    #[test]
+    fn a_modern_smoke_detector_is_sooner_and_a_far_one_waits_for_the_front() {
+        let fire = DesignFire {
+            growth_kw_s2: 0.0469,
+            peak_kw: 2000.0,
+            energy_kj: 1e6,
+            decay_from_share: 0.7,
+        };
+        let place = CeilingPlace {
+            height_m: 3.0,
+            radius_m: 4.0,
+        };
+        let old_s = smoke_alarm_s(&fire, place, SMOKE_DETECTOR_RISE_13_K).unwrap();
+        let modern_s = smoke_alarm_s(&fire, place, SMOKE_DETECTOR_RISE_4_K).unwrap();
+        assert!(modern_s < old_s);
+
+        let far = CeilingPlace {
+            height_m: 3.0,
+            radius_m: 12.0,
+        };
+        let front_s = heskestad_delichatsios_front_s(fire.growth_kw_s2, far);
+        assert!(smoke_alarm_s(&fire, far, 0.01).unwrap() >= front_s);
+    }
+
+    #[test]
+    fn a_fire_too_small_sets_no_smoke_detector_off() {
+        let spark = DesignFire {
+            growth_kw_s2: 0.0117,
+            peak_kw: 5.0,
+            energy_kj: 1e4,
+            decay_from_share: 0.7,
+        };
+
+        assert_eq!(
+            smoke_alarm_s(
+                &spark,
+                CeilingPlace {
+                    height_m: 8.0,
+                    radius_m: 6.0
+                },
+                13.0
+            ),
+            None
+        );
+    }
+
+    #[test]
+    fn limits_are_told() {
+        assert!(element_limits(&link(100.0)).is_empty());
+        assert!(
+            !element_limits(&link(10.0)).is_empty() && !element_limits(&link(400.0)).is_empty()
+        );
+        assert!(
+            smoke_alarm_limits(CeilingPlace {
+                height_m: 3.0,
+                radius_m: 6.0
+            })
+            .is_empty()
+        );
+        assert!(
+            !smoke_alarm_limits(CeilingPlace {
+                height_m: 3.0,
+                radius_m: 13.0
+            })
+            .is_empty()
+        );
+    }
+}

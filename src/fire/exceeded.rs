@@ -62,3 +62,27 @@ impl Exceeded {
         other.iter().fold(self, |all, note| all.when(true, note))
     }
 }
+
+#[cfg(test)]
+mod tests {
+    use super::*;
+
+    #[test]
+    fn only_what_holds_is_kept_and_in_order() {
+        let exceeded = Exceeded::none()
+            .when(true, "a")
+            .when(false, "b")
+            .when(true, "c");
+
+        assert_eq!(exceeded.iter().collect::<Vec<_>>(), ["a", "c"]);
+        assert!(!exceeded.is_empty() && exceeded.len() == 2);
+    }
+
+    #[test]
+    fn a_seventh_explanation_is_dropped_without_a_panic() {
+        let full = (0..9).fold(Exceeded::none(), |all, _| all.when(true, "x"));
+
+        assert_eq!(full.len(), CAPACITY);
+        assert_eq!(full.and(full).len(), CAPACITY);
+    }
+}

@@ -193,3 +193,171 @@ pub fn screen_limits(room: &ShutRoom<'_>, layer_temperature_k: f64) -> Exceeded 
         "layer above some 900 K: the gas would take fire in the opening rather than mix first",
     )
 }
+
+#[cfg(test)]
+mod tests {
+    use super::*;
+    use crate::fire::linings::Surface;
+    use crate::fire::oxygen::LimitingOxygen;
+    use approx::assert_relative_eq;
+    use proptest::prelude::*;
+
+    const BOARD: Surface = Surface {
+        area_m2: 62.0,
+        conductivity_w_mk: 0.17,
+        density_kg_m3: 790.0,
+        specific_heat_j_kgk: 900.0,
+        thickness_m: 0.0159,
+    };
+
+    const FIRE: DesignFire = DesignFire {
+        growth_kw_s2: 0.0469,
+        peak_kw: 3000.0,
+        energy_kj: 2e6,
+        decay_from_share: 0.7,
+    };
+
+    fn shut(volume_m3: f64, leakage_area_m2: f64) -> ShutRoom<'static> {
+        ShutRoom {
+            volume_m3,
+            height_m: 2.4,
+            leakage_area_m2,
+            surfaces: &[BOARD],
+            ambient_temperature_k: 293.15,
+            limit: LimitingOxygen::TYPICAL,
+        }
+    }
+
+    fn input(fire: DesignFire, room: ShutRoom<'static>) -> ExcessInput<'static> {
+        ExcessInput {
+            fire,
+            room,
+            aftergas: AftergasShare::NONCOMBUSTIBLE_LINING,
+            horizon_s: 7200.0,
+        }
+    }
+
+    #[test]
+    fn little_fuel_in_a_big_leaky_room_is_not_indicated() {
+        let basket = DesignFire {
+            growth_kw_s2: 0.0117,
+            peak_kw: 300.0,
+            energy_kj: 30_000.0,
+            decay_from_share: 0.7,
+        };
+        let answer = screen(&input(basket, shut(400.0, 0.2)));
+
+        assert_eq!(answer.outcome, Outcome::NotIndicated);
+        assert!(!answer.burn.starved);
+    }
+
+    #[test]
+    fn a_small_shut_room_full_of_fuel_cannot_be_excluded() {
+        for growth_kw_s2 in [0.0117, 0.0469, 0.1876] {
+            let answer = screen(&input(
+                DesignFire {
+                    growth_kw_s2,
+                    ..FIRE
+                },
+                shut(30.0, 0.005),
+            ));
+
+            assert_eq!(answer.outcome, Outcome::CannotBeExcluded, "{growth_kw_s2}");
+            assert!(answer.burn.starved);
+        }
+    }
+
+    #[test]
+    fn fuel_that_hardly_outlasts_the_oxygen_is_not_indicated() {
+        // What is left when the flame dies is all that can turn to gas: 30 m³ of air burn about 35 MJ, so 45 MJ leave less than 0.7 MJ per kg.
+        let fire = DesignFire {
+            energy_kj: 45_000.0,
+            ..FIRE
+        };
+        let answer = screen(&input(fire, shut(30.0, 0.005)));
+
+        assert!(answer.burn.starved);
+        assert_eq!(answer.outcome, Outcome::NotIndicated);
+        assert!(
+            answer.high_kj_kg
+                <= answer.burn.state.unburned_kj_kg
+                    + (fire.energy_kj - answer.burn.state.gasified_kj)
+                        / answer.burn.state.gas_mass_kg
+                    + 1e-9
+        );
+    }
+
+    #[test]
+    fn a_lining_that_burns_can_only_make_it_worse() {
+        let mineral = screen(&input(FIRE, shut(30.0, 0.005)));
+        let timber = screen(&ExcessInput {
+            aftergas: AftergasShare::COMBUSTIBLE_LINING,
+            ..input(FIRE, shut(30.0, 0.005))
+        });
+
+        assert!(timber.low_kj_kg > mineral.low_kj_kg);
+        assert!(timber.typical_kj_kg > mineral.typical_kj_kg);
+        assert!(timber.high_kj_kg > mineral.high_kj_kg);
+    }
+
+    #[test]
+    fn the_threshold_is_below_both_published_experiments() {
+        // Methane 0.10 by mass at 50.0 MJ/kg (Fleischmann) and diesel 0.16 at about 42.5 MJ/kg (Gottuk): a screen must not stay silent
+        // where backdrafts were seen.
+        for published_kj_kg in [0.10 * 50_000.0, 0.16 * 42_500.0] {
+            assert!(
+                THRESHOLD_LOW_KJ_KG < published_kj_kg && THRESHOLD_HIGH_KJ_KG < published_kj_kg
+            );
+        }
+    }
+
+    #[test]
+    fn the_threshold_falls_above_600_k_as_the_critical_fractions_do() {
+        // Critical fractions at 1700 K, computed by equilibrium, at 450 and 600 K times the heat of combustion: methane (0.089 - 0.078)·50.0,
+        // propane (0.089 - 0.078)·46.4, ethylene (0.076 - 0.067)·47.2 MJ/kg over 150 K: 3.7, 3.4 and 2.8 kJ/kg per kelvin.
+        let slope = (threshold_kj_kg(600.0) - threshold_kj_kg(700.0)) / 100.0;
+        assert!((2.8..=3.7).contains(&slope));
+        assert_eq!(threshold_kj_kg(599.9), THRESHOLD_LOW_KJ_KG);
+        assert!(threshold_kj_kg(5000.0) > 0.0);
+    }
+
+    #[test]
+    fn corners_stand_in_order_and_the_high_one_decides() {
+        let answer = screen(&input(FIRE, shut(30.0, 0.005)));
+
+        assert!(
+            answer.low_kj_kg <= answer.typical_kj_kg && answer.typical_kj_kg <= answer.high_kj_kg
+        );
+        assert_eq!(
+            answer.outcome == Outcome::CannotBeExcluded,
+            answer.high_kj_kg >= answer.threshold_kj_kg
+        );
+        assert_relative_eq!(
+            answer.threshold_kj_kg,
+            threshold_kj_kg(answer.layer_temperature_k)
+        );
+    }
+
+    #[test]
+    fn a_room_out_of_range_is_told() {
+        assert!(screen_limits(&shut(30.0, 0.005), 700.0).is_empty());
+        assert!(!screen_limits(&shut(30.0, 0.005), 950.0).is_empty());
+        assert!(!screen_limits(&shut(30.0, 0.5), 700.0).is_empty());
+        assert!(!screen_limits(&shut(600.0, 0.05), 700.0).is_empty());
+    }
+
+    proptest! {
+        #[test]
+        fn more_fuel_of_the_same_growth_never_turns_the_outcome_to_not_indicated(
+            fuel in 2e4..2e6_f64, more in 1.0..5.0_f64, volume in 10.0..200.0_f64,
+        ) {
+            // A peak so high that only the energy differs while the flame lives.
+            let fire = DesignFire { peak_kw: 1e5, energy_kj: fuel, ..FIRE };
+            let richer = DesignFire { energy_kj: more * fuel, ..fire };
+            let before = screen(&input(fire, shut(volume, 0.0)));
+            let after = screen(&input(richer, shut(volume, 0.0)));
+
+            prop_assert!(after.outcome >= before.outcome);
+        }
+    }
+}

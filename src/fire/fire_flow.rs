@@ -182,3 +182,105 @@ pub fn compare(needed_l_min: f64, available_l_min: f64) -> Supply {
         shortfall_l_min: (needed_l_min - available_l_min).max(0.0),
     }
 }
+
+#[cfg(test)]
+mod tests {
+    use super::*;
+    use approx::assert_relative_eq;
+
+    const GPM: f64 = LITRES_PER_GALLON;
+
+    #[test]
+    fn iowa_gives_the_printed_rates() {
+        // Carolina Fire Rescue EMS Journal: 50 × 75 × 12 ft, 450 gpm. Fire Fighting in Canada (Sells, 2010): 4/3 L/min per m³, that is 4
+        // L/min per m² under 3 m; exactly 1.3368.
+        let cubic_feet = 50.0 * 75.0 * 12.0;
+        assert_relative_eq!(
+            royer_nelson_l_min(cubic_feet * CUBIC_METRES_PER_CUBIC_FOOT),
+            450.0 * GPM,
+            max_relative = 1e-9
+        );
+        assert_relative_eq!(royer_nelson_l_min(3.0), 4.0, max_relative = 0.003);
+    }
+
+    #[test]
+    fn the_academy_gives_the_printed_rates() {
+        // Firefighter Nation: 30 × 50 ft, 500 gpm involved all over, 125 gpm by a quarter.
+        let area_m2 = 30.0 * 50.0 * SQUARE_METRES_PER_SQUARE_FOOT;
+        assert_relative_eq!(nfa_l_min(area_m2, 1.0), 500.0 * GPM, max_relative = 1e-9);
+        assert_relative_eq!(nfa_l_min(area_m2, 0.25), 125.0 * GPM, max_relative = 1e-9);
+    }
+
+    #[test]
+    fn a_gallon_has_the_litres_that_were_printed() {
+        // Rate-of-flow notes after Royer and Nelson: 100 gpm, 378.5 L/min. UFC 3-600-01: 1000 gpm, 3785 L/min.
+        assert_relative_eq!(100.0 * GPM, 378.5, max_relative = 5e-4);
+        assert_relative_eq!(1000.0 * GPM, 3785.0, max_relative = 5e-4);
+    }
+
+    fn building(effective_area_m2: f64, construction: IsoConstruction) -> IsoBuilding {
+        IsoBuilding {
+            effective_area_m2,
+            construction,
+            occupancy_factor: 1.0,
+            exposure: 0.0,
+        }
+    }
+
+    #[test]
+    fn the_guide_gives_the_table_that_is_built_on_it() {
+        // IFC Table B105.1(2), from memory: type VB (frame, F 1.5) of 372 m² (4000 ft²): 1750 gpm; by hand 18·1.5·√4000 = 1707.6.
+        let frame = iso_needed_fire_flow_l_min(building(
+            4000.0 * SQUARE_METRES_PER_SQUARE_FOOT,
+            IsoConstruction::Frame,
+        ));
+
+        assert_relative_eq!(frame, 1750.0 * GPM, max_relative = 1e-9);
+    }
+
+    #[test]
+    fn the_guide_rounds_and_bounds_on_both_sides() {
+        // Below 2500 gpm to 250, above to 500; 500 at least, 12 000 at most.
+        let tiny = iso_needed_fire_flow_l_min(building(5.0, IsoConstruction::FireResistive));
+        let huge = iso_needed_fire_flow_l_min(building(1e6, IsoConstruction::Frame));
+        assert_relative_eq!(tiny, 500.0 * GPM, max_relative = 1e-9);
+        assert_relative_eq!(huge, 12_000.0 * GPM, max_relative = 1e-9);
+
+        // By hand: 18·√(2100 m²) = 2706.2 gpm, rounded to 2500; 18·√(2200 m²) = 2769.9 to 3000.
+        for (area_m2, gpm) in [(2100.0, 2500.0), (2200.0, 3000.0)] {
+            let got =
+                iso_needed_fire_flow_l_min(building(area_m2, IsoConstruction::JoistedMasonry));
+            assert_relative_eq!(got, gpm * GPM, max_relative = 1e-9);
+        }
+    }
+
+    #[test]
+    fn more_building_never_needs_less_water() {
+        let mut last = [0.0; 3];
+        for step in 1..400 {
+            let area_m2 = 10.0 * f64::from(step);
+            let now = [
+                royer_nelson_l_min(area_m2 * 3.0),
+                nfa_l_min(area_m2, 0.5),
+                iso_needed_fire_flow_l_min(building(area_m2, IsoConstruction::Frame)),
+            ];
+            assert!(
+                now.iter()
+                    .zip(last)
+                    .all(|(new, old)| new.is_finite() && *new >= old)
+            );
+            last = now;
+        }
+        assert!(nfa_limits(0.5).is_empty() && !nfa_limits(0.51).is_empty());
+    }
+
+    #[test]
+    fn supply_is_set_against_need() {
+        let short = compare(6000.0, 4000.0);
+        let ample = compare(3000.0, 4000.0);
+
+        assert!(short.shortfall_l_min == 2000.0 && short.ratio < 1.0);
+        assert!(ample.shortfall_l_min == 0.0 && ample.ratio > 1.0);
+        assert!(compare(0.0, 0.0).ratio.is_infinite());
+    }
+}

@@ -206,3 +206,147 @@ fn no_opening(room: Enclosure) -> Exceeded {
         "no wall opening: the oxygen in the room decides, not this correlation",
     )
 }
+
+#[cfg(test)]
+mod tests {
+    use super::*;
+    use approx::relative_eq;
+
+    fn rooms() -> [(Enclosure, f64, [f64; 3], &'static str); 4] {
+        let door = |width_m: f64, height_m: f64| WallOpening {
+            area_m2: width_m * height_m,
+            height_m,
+        };
+        [
+            (
+                Enclosure::of_box(3.0, 3.0, 2.4, door(0.6, 1.8)),
+                0.03,
+                [1087.0, 904.0, 860.0],
+                "SFPE Handbook, Walton and Thomas, from memory",
+            ),
+            (
+                Enclosure::of_box(3.6, 2.4, 2.4, door(0.8, 2.0)),
+                0.03,
+                [1697.1, 1202.3, 1060.0],
+                "by hand: 3.6 × 2.4 × 2.4 m, 16 mm plaster",
+            ),
+            (
+                Enclosure::of_box(3.66, 3.66, 2.44, door(0.9, 2.0)),
+                0.010_692,
+                [1909.2, 1435.8, 784.1],
+                "by hand: 3.66 × 3.66 × 2.44 m, 15.9 mm board after 600 s",
+            ),
+            (
+                Enclosure::of_box(6.0, 4.0, 3.0, door(2.0, 1.2)),
+                0.054_16,
+                [1971.8, 1817.5, 2365.4],
+                "by hand: 6 × 4 × 3 m with a window, concrete after 600 s",
+            ),
+        ]
+    }
+
+    #[test]
+    fn three_correlations_give_what_others_worked_out() {
+        for (room, conductance, expected, origin) in rooms() {
+            let got = [
+                babrauskas_kw(room),
+                thomas_kw(room),
+                mccaffrey_kw(room, conductance * room.bounding_area_m2),
+            ];
+            for (got_kw, expected_kw) in got.into_iter().zip(expected) {
+                assert!(
+                    relative_eq!(got_kw, expected_kw, max_relative = 5e-3),
+                    "{origin}: {got_kw}"
+                );
+            }
+        }
+    }
+
+    #[test]
+    fn the_three_agree_within_the_published_scatter_in_ordinary_rooms() {
+        // Two thirds of the data between 450 and 1050 about Babrauskas' 750: a factor of 0.6 to 1.4. The board room after its
+        // lining has warmed through is left out: there the correlations part by design.
+        for (room, conductance, _, origin) in [rooms()[0], rooms()[1], rooms()[3]] {
+            let middle_kw = babrauskas_kw(room);
+            for kw in [
+                thomas_kw(room),
+                mccaffrey_kw(room, conductance * room.bounding_area_m2),
+            ] {
+                assert!((0.6..=1.4).contains(&(kw / middle_kw)), "{origin}: {kw}");
+            }
+        }
+    }
+
+    #[test]
+    fn a_taller_opening_never_lowers_the_heat_asked_for() {
+        let mut last = [0.0; 3];
+        for step in 1..250 {
+            let height_m = 0.01 * f64::from(step);
+            let room = Enclosure {
+                bounding_area_m2: 60.0,
+                opening_area_m2: 0.9 * height_m,
+                opening_height_m: height_m,
+            };
+            let now = [
+                babrauskas_kw(room),
+                thomas_kw(room),
+                mccaffrey_kw(room, 1.2),
+            ];
+
+            assert!(
+                now.iter()
+                    .zip(last)
+                    .all(|(new, old)| new.is_finite() && *new > old)
+            );
+            last = now;
+        }
+    }
+
+    #[test]
+    fn half_of_the_air_is_what_babrauskas_asks_for() {
+        let room = rooms()[1].0;
+        let all_air_kw = crate::fire::ventilation::kawagoe_limit_kw(room.opening());
+
+        assert!(relative_eq!(
+            babrauskas_kw(room) / all_air_kw,
+            0.5,
+            max_relative = 1e-12
+        ));
+    }
+
+    #[test]
+    fn limits_are_told_on_their_far_side_only() {
+        let room = rooms()[1].0;
+        let shut = Enclosure {
+            opening_area_m2: 0.0,
+            opening_height_m: 0.0,
+            ..room
+        };
+        let hall = Enclosure {
+            bounding_area_m2: 400.0,
+            ..room
+        };
+        let tall = Enclosure {
+            opening_height_m: 3.5,
+            ..room
+        };
+
+        for limits in [
+            babrauskas_limits(room),
+            thomas_limits(room),
+            mccaffrey_limits(room),
+        ] {
+            assert!(limits.is_empty());
+        }
+        for limits in [
+            babrauskas_limits(shut),
+            thomas_limits(shut),
+            mccaffrey_limits(shut),
+        ] {
+            assert!(!limits.is_empty());
+        }
+        assert!(!babrauskas_limits(hall).is_empty() && !thomas_limits(hall).is_empty());
+        assert!(!mccaffrey_limits(hall).is_empty());
+        assert!(!babrauskas_limits(tall).is_empty() && !mccaffrey_limits(tall).is_empty());
+    }
+}

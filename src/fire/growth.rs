@@ -147,3 +147,66 @@ pub fn t_squared_limits(growth_kw_s2: f64) -> Exceeded {
             "growth faster than the fastest class (1055 kW in 75 s)",
         )
 }
+
+#[cfg(test)]
+mod tests {
+    use super::*;
+    use approx::assert_relative_eq;
+
+    #[test]
+    fn the_classes_have_the_published_coefficients() {
+        // NFPA 204 classes with 1055 kW: published 0.00293, 0.0117, 0.0469, 0.1876; more digits by hand: 1055/t².
+        for (class, expected) in GrowthClass::ALL
+            .into_iter()
+            .zip([0.002_931, 0.011_722, 0.046_889, 0.187_556])
+        {
+            assert_relative_eq!(class.coefficient_kw_s2(), expected, max_relative = 2e-4);
+        }
+    }
+
+    #[test]
+    fn the_rival_reference_is_five_and_a_half_percent_slower() {
+        // EN 1991-1-2, fast, from memory: 0.04444 kW/s².
+        let en = REFERENCE_EN_1991_KW / 150.0_f64.powi(2);
+
+        assert_relative_eq!(en, 0.044_44, max_relative = 2e-4);
+        assert_relative_eq!(
+            GrowthClass::Fast.coefficient_kw_s2() / en,
+            1.055,
+            max_relative = 1e-9
+        );
+    }
+
+    #[test]
+    fn time_and_heat_release_are_each_other_s_inverse() {
+        for class in GrowthClass::ALL {
+            let growth = class.coefficient_kw_s2();
+            for time_s in [1.0, 60.0, 600.0] {
+                let heat_kw = t_squared_kw(growth, time_s);
+                assert_relative_eq!(
+                    t_squared_time_to_kw_s(growth, heat_kw).unwrap(),
+                    time_s,
+                    max_relative = 1e-12
+                );
+            }
+        }
+    }
+
+    #[test]
+    fn what_does_not_grow_never_gets_there() {
+        assert_eq!(t_squared_time_to_kw_s(0.0, 20.0), None);
+        assert_eq!(t_squared_time_to_kw_s(0.0, 0.0), Some(0.0));
+        assert_eq!(t_squared_kw(0.0469, -5.0), 0.0);
+    }
+
+    #[test]
+    fn the_four_classes_lie_in_range_and_their_neighbours_do_not() {
+        assert!(
+            GrowthClass::ALL
+                .iter()
+                .all(|class| t_squared_limits(class.coefficient_kw_s2()).is_empty())
+        );
+        assert!(!t_squared_limits(0.002).is_empty());
+        assert!(!t_squared_limits(0.25).is_empty());
+    }
+}

@@ -401,3 +401,331 @@ pub fn beyler_closed_limits(room: Closed, rise_k: f64) -> Exceeded {
             "rise above 150 K, where the lost gas mass begins to matter",
         )
 }
+
+#[cfg(test)]
+mod tests {
+    use super::*;
+    use approx::{assert_relative_eq, relative_eq};
+    use proptest::prelude::*;
+
+    fn vented(heat_release_kw: f64, width_m: f64, height_m: f64, conductance_kw_k: f64) -> Vented {
+        Vented {
+            heat_release_kw,
+            opening: WallOpening {
+                area_m2: width_m * height_m,
+                height_m,
+            },
+            conductance_kw_k,
+        }
+    }
+
+    #[test]
+    fn the_vented_rise_is_what_others_worked_out() {
+        for (room, expected_k, origin) in [
+            (
+                vented(300.0, 0.8, 2.0, 0.03 * 44.48),
+                212.39,
+                "by hand: plaster room, 300 kW",
+            ),
+            (
+                vented(500.0, 0.9, 2.0, 0.010_692 * 60.713),
+                365.0,
+                "by hand: board room, 500 kW",
+            ),
+            (
+                vented(1000.0, 2.0, 1.2, 0.054_16 * 105.6),
+                277.53,
+                "by hand: concrete room, 1000 kW",
+            ),
+        ] {
+            let got_k = mccaffrey_rise_k(room);
+            assert!(
+                relative_eq!(got_k, expected_k, max_relative = 5e-3),
+                "{origin}: {got_k}"
+            );
+        }
+    }
+
+    #[test]
+    fn the_two_prints_of_the_vented_rise_agree_within_two_percent() {
+        // 480 (Q/(√g c_p ρ T A√H))^(2/3) (h A/(√g c_p ρ A√H))^(-1/3) for 295 K, the other print of the same paper.
+        let room = vented(300.0, 0.8, 2.0, 0.03 * 44.48);
+        let group = 9.81_f64.sqrt() * 1.0 * 1.2 * room.opening.factor_m5_2();
+        let other_k = 480.0
+            * (room.heat_release_kw / (group * 295.0)).powf(2.0 / 3.0)
+            * (room.conductance_kw_k / group).powf(-1.0 / 3.0);
+
+        assert_relative_eq!(mccaffrey_rise_k(room), other_k, max_relative = 0.02);
+    }
+
+    #[test]
+    fn flashover_by_610_is_a_rise_of_about_500_k() {
+        // (500/6.85)^1.5 = 623.6, printed 610: 1.5 % less rise.
+        let room = vented(
+            610.0 * (1.2 * 0.9 * 2.0_f64.powf(1.5)).sqrt(),
+            0.9,
+            2.0,
+            1.2,
+        );
+
+        assert_relative_eq!(mccaffrey_rise_k(room), 492.7, max_relative = 1e-3);
+    }
+
+    #[test]
+    fn the_vented_rise_grows_with_heat_over_its_whole_range() {
+        let mut last_k = 0.0;
+        for step in 1..400 {
+            let rise_k = mccaffrey_rise_k(vented(10.0 * f64::from(step), 0.9, 2.0, 0.6));
+            assert!(rise_k.is_finite() && rise_k > last_k);
+            last_k = rise_k;
+        }
+        assert_eq!(mccaffrey_rise_k(vented(0.0, 0.9, 2.0, 0.6)), 0.0);
+    }
+
+    #[test]
+    fn limits_of_the_vented_rise_lie_at_20_and_600_k() {
+        let room = vented(300.0, 0.8, 2.0, 1.3);
+
+        assert!(
+            mccaffrey_limits(room, 20.0).is_empty() && mccaffrey_limits(room, 600.0).is_empty()
+        );
+        assert!(
+            !mccaffrey_limits(room, 19.9).is_empty() && !mccaffrey_limits(room, 600.1).is_empty()
+        );
+    }
+
+    #[test]
+    fn measured_places_matter_less_than_mowrer_and_williamson_say() {
+        for position in [Position::Centre, Position::Wall, Position::Corner] {
+            let (low, high) = measured_position_factor(position);
+            assert!(low <= high && high <= mowrer_williamson_factor(position));
+        }
+    }
+
+    const BOARD: Surface = Surface {
+        area_m2: 60.713,
+        conductivity_w_mk: 0.17,
+        density_kg_m3: 790.0,
+        specific_heat_j_kgk: 900.0,
+        thickness_m: 0.0159,
+    };
+
+    #[test]
+    fn the_time_of_a_steady_fire_is_the_one_worked_by_hand() {
+        // 500 kW from the start: 300 K needs h A = (6.85/300)³ · 500²/2.5456 = 1.16914 kW/K, h = 0.0192568, so
+        // t = kρc/h² = 0.12087/0.000370826 = 325.9 s. But the board is warmed through after 264.3 s, when h falls below: 264.3 s.
+        let mut room = GrowingVented {
+            fire: DesignFire {
+                growth_kw_s2: 1e6,
+                peak_kw: 500.0,
+                energy_kj: 1e6,
+                decay_from_share: 0.7,
+            },
+            opening: WallOpening {
+                area_m2: 1.8,
+                height_m: 2.0,
+            },
+            surfaces: &[BOARD],
+            position_factor: 1.0,
+        };
+        let time_s = mccaffrey_time_to_rise_s(&room, 300.0).unwrap().unwrap();
+        assert_relative_eq!(time_s, 264.3, max_relative = 1e-3);
+
+        // 270 K needs h A = 1.60377 kW/K, h = 0.0264156, t = 0.12087/0.00069778 = 173.2 s: before that.
+        let time_s = mccaffrey_time_to_rise_s(&room, 270.0).unwrap().unwrap();
+        assert_relative_eq!(time_s, 173.2, max_relative = 2e-3);
+
+        // The same fire in a corner by a factor 1.7: 459 K are as 270 K.
+        room.position_factor = 1.7;
+        let time_s = mccaffrey_time_to_rise_s(&room, 459.0).unwrap().unwrap();
+        assert_relative_eq!(time_s, 173.2, max_relative = 2e-3);
+    }
+
+    #[test]
+    fn heat_that_comes_through_the_lining_in_the_decay_is_not_missed() {
+        // Steady until 125 000 kJ / 500 kW = 250 s, then down over 2·65 840/500 = 263 s. The board is warmed through at 264.3 s with
+        // 473 kW left: the rise falls from 250 s on and then jumps by 2^(1/3), above all it was.
+        let fire = DesignFire {
+            growth_kw_s2: 1e6,
+            peak_kw: 500.0,
+            energy_kj: 190_840.0,
+            decay_from_share: 0.655,
+        };
+        let room = GrowingVented {
+            fire,
+            opening: WallOpening {
+                area_m2: 1.8,
+                height_m: 2.0,
+            },
+            surfaces: &[BOARD],
+            position_factor: 1.0,
+        };
+        let jump_s = penetration_time_s(&BOARD);
+        let rise_at = |time_s| {
+            mccaffrey_rise_k(Vented {
+                heat_release_kw: fire.heat_release_kw(time_s),
+                opening: room.opening,
+                conductance_kw_k: total_conductance_kw_k(room.surfaces, time_s),
+            })
+        };
+        let before_k = rise_at(fire.phases().decay_start_s).max(rise_at(jump_s * (1.0 - 1e-9)));
+        let after_k = rise_at(jump_s);
+        assert!(after_k > 1.05 * before_k);
+
+        let found = mccaffrey_time_to_rise_s(&room, 0.5 * (before_k + after_k)).unwrap();
+
+        assert_relative_eq!(found.unwrap(), jump_s, max_relative = 1e-6);
+        assert_eq!(mccaffrey_time_to_rise_s(&room, 1.01 * after_k), Ok(None));
+    }
+
+    #[test]
+    fn numbers_that_are_not_finite_are_told() {
+        let room = GrowingVented {
+            fire: DesignFire {
+                growth_kw_s2: 0.01,
+                peak_kw: 500.0,
+                energy_kj: f64::INFINITY,
+                decay_from_share: 0.7,
+            },
+            opening: WallOpening {
+                area_m2: 1.8,
+                height_m: 2.0,
+            },
+            surfaces: &[BOARD],
+            position_factor: 1.0,
+        };
+
+        assert!(mccaffrey_time_to_rise_s(&room, 500.0).is_err());
+    }
+
+    proptest! {
+        #[test]
+        fn the_time_to_a_rise_is_the_first_time_it_is_there(
+            growth in 0.001..0.3_f64, peak in 100.0..5000.0_f64, fuel in 1e4..1e7_f64, width in 0.1..4.0_f64, rise in 30.0..900.0_f64,
+        ) {
+            let fire = DesignFire { growth_kw_s2: growth, peak_kw: peak, energy_kj: fuel, decay_from_share: 0.7 };
+            let opening = WallOpening { area_m2: 2.0 * width, height_m: 2.0 };
+            let room = GrowingVented { fire, opening, surfaces: &[BOARD], position_factor: 1.0 };
+            let rise_at = |time_s: f64| mccaffrey_rise_k(Vented {
+                heat_release_kw: fire.heat_release_kw(time_s),
+                opening,
+                conductance_kw_k: total_conductance_kw_k(&[BOARD], time_s),
+            });
+            let samples = (1..=400).map(|i| fire.duration_s() * f64::from(i) / 400.0);
+
+            match mccaffrey_time_to_rise_s(&room, rise).unwrap() {
+                Some(time_s) => {
+                    prop_assert!(rise_at(time_s) >= rise * (1.0 - 1e-9));
+                    let mut earlier = samples.filter(|&at_s| at_s < time_s - 0.011);
+                    prop_assert!(earlier.all(|at_s| rise_at(at_s) < rise));
+                }
+                None => {
+                    let mut any = samples;
+                    prop_assert!(any.all(|at_s| rise_at(at_s) < rise));
+                }
+            }
+        }
+    }
+
+    fn forced(conductance_kw_k: f64) -> Forced {
+        Forced {
+            heat_release_kw: 1000.0,
+            mass_flow_kg_s: 2.4,
+            conductance_kw_k,
+            ambient_temperature_k: 293.0,
+            specific_heat_kj_kgk: 1.0,
+        }
+    }
+
+    #[test]
+    fn both_forced_forms_give_what_others_worked_out_and_agree() {
+        // By hand: 1000 kW, 2.4 kg/s, 130 m² of concrete after 300 s: 142.5 K and 156.7 K.
+        let foote_k = foote_pagni_alvares_rise_k(forced(0.076_59 * 130.0));
+        let deal_k = deal_beyler_rise_k(forced(0.030_64 * 130.0));
+
+        assert_relative_eq!(foote_k, 142.5, max_relative = 5e-3);
+        assert_relative_eq!(deal_k, 156.7, max_relative = 5e-3);
+        assert_relative_eq!(foote_k, deal_k, max_relative = 0.3);
+    }
+
+    #[test]
+    fn a_lumped_loss_gives_the_closed_form() {
+        // Derived: Q/(m c_p + hA) = 500/(0.6·1.005 + 0.02·40) = 356.38 K.
+        let room = Forced {
+            heat_release_kw: 500.0,
+            mass_flow_kg_s: 0.6,
+            conductance_kw_k: 0.8,
+            ambient_temperature_k: 293.0,
+            specific_heat_kj_kgk: 1.005,
+        };
+        assert_relative_eq!(deal_beyler_rise_k(room), 356.38, max_relative = 1e-4);
+    }
+
+    #[test]
+    fn more_air_cools_and_more_heat_warms_a_forced_room() {
+        for step in 1..100 {
+            let flow = 0.05 * f64::from(step);
+            let less = Forced {
+                mass_flow_kg_s: flow,
+                ..forced(4.0)
+            };
+            let more = Forced {
+                mass_flow_kg_s: flow + 0.05,
+                ..forced(4.0)
+            };
+            let hotter = Forced {
+                heat_release_kw: 1200.0,
+                ..less
+            };
+            for rise in [foote_pagni_alvares_rise_k, deal_beyler_rise_k] {
+                assert!(rise(more) < rise(less) && rise(hotter) > rise(less));
+            }
+        }
+        assert!(!foote_pagni_alvares_limits(forced(4.0), 142.0).is_empty());
+        assert!(deal_beyler_limits(2000.0).is_empty() && !deal_beyler_limits(2001.0).is_empty());
+    }
+
+    fn closed(time_s: f64, inertia_kw2_s_m4k2: f64) -> Closed {
+        Closed {
+            heat_release_kw: 100.0,
+            time_s,
+            inertia_kw2_s_m4k2,
+            bounding_area_m2: 94.0,
+            air_mass_kg: 72.0,
+            specific_heat_kj_kgk: 1.0,
+        }
+    }
+
+    #[test]
+    fn the_closed_rise_is_what_others_worked_out() {
+        // By hand, with A_T in K1: 89.3 K.
+        assert_relative_eq!(
+            beyler_closed_rise_k(closed(200.0, 0.113_76)),
+            89.3,
+            max_relative = 5e-3
+        );
+    }
+
+    #[test]
+    fn the_closed_rise_has_both_ends_right() {
+        // Early: all heat in the gas, Q t/(m c_p). Late: the loss decides, Q √t / (0.4 √(kρc) A_T).
+        let early = closed(0.01, 0.113_76);
+        assert_relative_eq!(
+            beyler_closed_rise_k(early),
+            100.0 * 0.01 / 72.0,
+            max_relative = 0.03
+        );
+        let late = closed(1e8, 0.113_76);
+        let steady_k = 100.0 * 1e4 / (0.4 * 0.113_76_f64.sqrt() * 94.0);
+        assert_relative_eq!(beyler_closed_rise_k(late), steady_k, max_relative = 0.01);
+        assert_relative_eq!(beyler_closed_rise_k(closed(50.0, 0.0)), 100.0 * 50.0 / 72.0);
+        assert_eq!(beyler_closed_rise_k(closed(0.0, 0.1)), 0.0);
+    }
+
+    #[test]
+    fn a_closed_room_short_of_oxygen_is_told() {
+        // 72 kg of air yield 72 · 0.0815 · 13 100 = 76 871 kJ, which 100 kW use in 769 s.
+        assert!(beyler_closed_limits(closed(760.0, 0.113_76), 100.0).is_empty());
+        assert!(!beyler_closed_limits(closed(780.0, 0.113_76), 100.0).is_empty());
+    }
+}

@@ -167,3 +167,93 @@ pub fn buoyant_exchange_kg_s(room: LeakyRoom) -> f64 {
         * room.leakage_area_m2
         * (2.0 * outside * (outside - inside) * GRAVITY_M_S2 * neutral_plane_m).sqrt()
 }
+
+#[cfg(test)]
+mod tests {
+    use super::*;
+    use approx::assert_relative_eq;
+
+    #[test]
+    fn heated_gas_grows_as_others_worked_out() {
+        // By hand with ρ 1.2, c_p 1.0, 293 K: 500 kW, 1.4221 m³/s; ours has 1.2048 and 1.005, hence 1 %.
+        assert_relative_eq!(expansion_m3_s(500.0, 293.0), 1.4221, max_relative = 0.01);
+        assert_eq!(expansion_m3_s(-10.0, 293.0), 0.0);
+    }
+
+    fn vent(
+        net_heat_release_kw: f64,
+        leakage_area_m2: f64,
+        discharge_coefficient: f64,
+    ) -> PressureInput {
+        PressureInput {
+            net_heat_release_kw,
+            leakage_area_m2,
+            ambient_temperature_k: 293.0,
+            discharge_coefficient,
+        }
+    }
+
+    #[test]
+    fn the_pressure_is_that_of_the_closed_form() {
+        // Derived: 100 kW, 0.01 m², C_d 0.6: 1329.5 Pa. Karlsson and Quintiere, worked: 500 kW, 0.02 m², C_d 1: 3.0 kPa.
+        assert_relative_eq!(
+            quasi_steady_pressure_pa(vent(100.0, 0.01, 0.6)),
+            1329.51,
+            max_relative = 1e-3
+        );
+        assert_relative_eq!(
+            quasi_steady_pressure_pa(vent(500.0, 0.02, 1.0)),
+            3000.0,
+            max_relative = 0.01
+        );
+    }
+
+    #[test]
+    fn twice_the_crack_is_a_quarter_of_the_pressure() {
+        let ratio = quasi_steady_pressure_pa(vent(100.0, 0.01, 0.65))
+            / quasi_steady_pressure_pa(vent(100.0, 0.02, 0.65));
+
+        assert_relative_eq!(ratio, 4.0, max_relative = 1e-12);
+    }
+
+    #[test]
+    fn pressure_that_breaks_glass_is_told() {
+        assert!(
+            quasi_steady_pressure_limits(2000.0).is_empty()
+                && !quasi_steady_pressure_limits(2001.0).is_empty()
+        );
+    }
+
+    #[test]
+    fn the_exchange_is_that_of_two_vents() {
+        // Derived for two vents of 1 m² 3 m apart, 400 K in 293 K, C_d 0.6: 1.8651 kg/s; ours takes 0.65.
+        let room = LeakyRoom {
+            leakage_area_m2: 2.0,
+            height_m: 3.0,
+            gas_temperature_k: 400.0,
+            ambient_temperature_k: 293.0,
+        };
+
+        assert_relative_eq!(
+            buoyant_exchange_kg_s(room),
+            1.8651 * 0.65 / 0.6,
+            max_relative = 1e-3
+        );
+    }
+
+    #[test]
+    fn a_cold_room_exchanges_nothing_and_a_hotter_one_more_until_its_gas_is_thin() {
+        let at = |gas_temperature_k| {
+            buoyant_exchange_kg_s(LeakyRoom {
+                leakage_area_m2: 0.02,
+                height_m: 2.4,
+                gas_temperature_k,
+                ambient_temperature_k: 293.0,
+            })
+        };
+
+        assert_eq!(at(293.0), 0.0);
+        assert_eq!(at(280.0), 0.0);
+        assert!(at(350.0) < at(500.0) && at(1200.0).is_finite());
+    }
+}

@@ -164,3 +164,90 @@ pub fn conductance_limits(surfaces: &[Surface]) -> Exceeded {
             "a metal surface: the film of gas decides, not the conduction",
         )
 }
+
+#[cfg(test)]
+mod tests {
+    use super::*;
+    use approx::assert_relative_eq;
+
+    fn lining(
+        conductivity_w_mk: f64,
+        density_kg_m3: f64,
+        specific_heat_j_kgk: f64,
+        thickness_m: f64,
+    ) -> Surface {
+        Surface {
+            area_m2: 10.0,
+            conductivity_w_mk,
+            density_kg_m3,
+            specific_heat_j_kgk,
+            thickness_m,
+        }
+    }
+
+    #[test]
+    fn penetration_time_and_conductance_match_the_worked_rooms() {
+        // By hand, three constructed rooms: plaster, board, concrete.
+        for (surface, time_s, penetration_s, conductance) in [
+            (lining(0.48, 1440.0, 840.0, 0.016), 300.0, 161.3, 0.03),
+            (lining(0.17, 790.0, 900.0, 0.0159), 600.0, 264.3, 0.010_69),
+            (lining(1.0, 2000.0, 880.0, 0.15), 600.0, 9900.0, 0.054_16),
+        ] {
+            assert_relative_eq!(
+                penetration_time_s(&surface),
+                penetration_s,
+                max_relative = 5e-4
+            );
+            assert_relative_eq!(
+                conductance_kw_m2k(&surface, time_s),
+                conductance,
+                max_relative = 5e-4
+            );
+        }
+    }
+
+    #[test]
+    fn the_conductance_falls_by_half_at_the_penetration_time() {
+        // √(kρc/t_p) = 2k/d, so the printed law jumps by two.
+        let board = lining(0.17, 790.0, 900.0, 0.0159);
+        let at_s = penetration_time_s(&board);
+
+        let before = conductance_kw_m2k(&board, at_s * (1.0 - 1e-9));
+        let after = conductance_kw_m2k(&board, at_s);
+
+        assert_relative_eq!(before / after, 2.0, max_relative = 1e-6);
+    }
+
+    #[test]
+    fn the_conductance_never_rises_with_time() {
+        let board = lining(0.17, 790.0, 900.0, 0.0159);
+        let mut last = f64::INFINITY;
+        for step in 1..2000 {
+            let now = conductance_kw_m2k(&board, f64::from(step));
+            assert!(now > 0.0 && now <= last);
+            last = now;
+        }
+    }
+
+    #[test]
+    fn several_linings_are_weighted_by_area() {
+        let board = lining(0.17, 790.0, 900.0, 0.0159);
+        let concrete = Surface {
+            area_m2: 30.0,
+            ..lining(1.0, 2000.0, 880.0, 0.15)
+        };
+        let mean = mean_conductance_kw_m2k(&[board, concrete], 600.0);
+
+        // By hand: (10·0.010692 + 30·0.054160)/40 = 0.043293.
+        assert_relative_eq!(mean, 0.043_293, max_relative = 1e-4);
+        assert_eq!(mean_conductance_kw_m2k(&[], 600.0), 0.0);
+    }
+
+    #[test]
+    fn thin_and_metal_linings_are_told() {
+        assert!(conductance_limits(&[lining(0.17, 790.0, 900.0, 0.0159)]).is_empty());
+        assert!(!conductance_limits(&[lining(0.17, 790.0, 900.0, 0.003)]).is_empty());
+        assert!(!conductance_limits(&[lining(45.0, 7850.0, 460.0, 0.01)]).is_empty());
+        assert!(!conductance_limits(&[]).is_empty());
+    }
+}

@@ -124,7 +124,7 @@ pub const ALL: &[Method] = &[
             "opening height about 1 to 2 m",
             "no account of room size or lining",
         ],
-        validation: "Two thirds of 33 room fires lie between 450 and 1050 A_o sqrt(H_o).",
+        validation: "Two thirds of 33 room fires lie between 450 and 1050 A_o sqrt(H_o); 1.2 to 1.4 times the heat release measured at 600 C in seven chair and sofa burns of 2018; 1.7 times the 1000 kW mark of the lined test room.",
     },
     Method {
         key: "thomas_flashover",
@@ -138,7 +138,7 @@ pub const ALL: &[Method] = &[
             "floor up to about 16 m2",
             "ordinary lining; not for closed rooms",
         ],
-        validation: "Asks for 10 to 20 % less than was measured at 600 C in the chair and sofa burns of 2018.",
+        validation: "Within 10 % of the heat release measured at 600 C in seven chair and sofa burns of 2018; right about all eight of them; 1.2 times the 1000 kW mark of the lined test room.",
     },
     Method {
         key: "mccaffrey_flashover",
@@ -152,7 +152,7 @@ pub const ALL: &[Method] = &[
             "rooms 0.3 to 2.7 m high",
             "fire in the middle, slowly changing",
         ],
-        validation: "Rests on the rise of the hot layer, which lies within 14 % of 16 burner configurations of 2018; pooled over several series the factor is 1.44 +- 0.25.",
+        validation: "0.55 to 1.14 times the heat release measured at 600 C in seven chair and sofa burns of 2018, over the gypsum linings that may have been there; 0.7 to 1.06 times the 1000 kW mark of the lined test room.",
     },
     Method {
         key: "mccaffrey_hot_layer",
@@ -270,7 +270,7 @@ pub const ALL: &[Method] = &[
         unit: "kg/s",
         sources: &[&sources::MCCAFFREY_1979],
         range: &["burner of 0.3 m, 14 to 57 kW"],
-        validation: "Plume formulas differ among themselves by 20 to 30 %.",
+        validation: "Draws in up to half again as much air as the other plumes, the higher the more.",
     },
     Method {
         key: "nfpa92_plume",
@@ -453,7 +453,7 @@ pub const ALL: &[Method] = &[
             &sources::KARLSSON_QUINTIERE_2000,
         ],
         range: &["well mixed, up to about 500 m3", "leakage only, no opening"],
-        validation: "Follows Beyler's closed room for a steady fire and the oxygen budget without swelling; compared with shut chair and sofa burns of 2018.",
+        validation: "Computed over measured time 0.8 to 1.4 for six burner configurations of 2018 that went out by themselves, with one rule settled on them; 0.9 to 2.3 % by volume more oxygen left than was measured.",
     },
     Method {
         key: "leaky_room_pressure",
@@ -527,3 +527,49 @@ pub const ALL: &[Method] = &[
         validation: "A grading of the public supply for hours, not a rate of attack.",
     },
 ];
+
+#[cfg(test)]
+mod tests {
+    use super::*;
+
+    #[test]
+    fn keys_are_unique_snake_case_and_complete() {
+        for (i, method) in ALL.iter().enumerate() {
+            assert!(
+                ALL[..i].iter().all(|earlier| earlier.key != method.key),
+                "{}",
+                method.key
+            );
+            assert!(
+                method
+                    .key
+                    .chars()
+                    .all(|c| c.is_ascii_lowercase() || c.is_ascii_digit() || c == '_'),
+                "{}",
+                method.key
+            );
+            assert!(
+                !method.sources.is_empty()
+                    && !method.range.is_empty()
+                    && !method.validation.is_empty()
+            );
+            assert!(method.equation.is_ascii(), "{}", method.key);
+        }
+    }
+
+    #[test]
+    fn every_source_of_a_method_stands_in_the_list() {
+        for method in ALL {
+            for source in method.sources {
+                assert!(sources::find(source.key).is_some(), "{}", source.key);
+            }
+        }
+    }
+
+    #[test]
+    fn a_method_that_rests_on_a_recalled_value_is_unverified() {
+        assert!(!find("babrauskas_flashover").unwrap().unverified());
+        assert!(find("kawagoe_ventilation_limit").unwrap().unverified());
+        assert!(find("excess_fuel_gas").unwrap().unverified());
+    }
+}

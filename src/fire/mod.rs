@@ -13,6 +13,7 @@ pub mod sources;
 pub mod growth;
 
 pub mod design_fire;
+pub mod fuel_load;
 
 pub mod ventilation;
 

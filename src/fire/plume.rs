@@ -214,7 +214,7 @@ pub struct McCaffreyPlume {
 /// | `z`    | `height_m`              | m    |
 /// | `T_0`  | `ambient_temperature_k` | K    |
 ///
-/// Range: 0.3 m square burner of 14 to 57 kW; used far beyond.
+/// Range: 0.3 m square burner of 14 to 57 kW; used far beyond, where it draws in up to half again as much air as the others.
 ///
 /// Source: [`MCCAFFREY_1979`](crate::fire::sources::MCCAFFREY_1979).
 ///
@@ -251,5 +251,151 @@ pub fn mccaffrey(
         rise_k: ambient_temperature_k * ratio * ratio * x.powf(2.0 * eta - 1.0),
         velocity_m_s: kappa * x.powf(eta) * heat_release_kw.powf(0.2),
         mass_flow_kg_s: heat_release_kw * a * x.powf(b),
+    }
+}
+
+#[cfg(test)]
+mod tests {
+    use super::*;
+    use approx::assert_relative_eq;
+    use std::f64::consts::PI;
+
+    fn fire(heat_release_kw: f64, diameter_m: f64) -> PlumeFire {
+        PlumeFire {
+            fire: RoundFire {
+                heat_release_kw,
+                diameter_m,
+            },
+            convective_share: 0.7,
+        }
+    }
+
+    #[test]
+    fn a_megawatt_plume_is_what_others_worked_out() {
+        // By hand: 1000 kW, 1 m wide, 6 m up.
+        let plume = fire(1000.0, 1.0);
+
+        assert_relative_eq!(heskestad_kg_s(plume, 6.0), 12.823, max_relative = 5e-3);
+        assert_relative_eq!(nfpa92_kg_s(700.0, 6.0), 13.749, max_relative = 5e-3);
+        assert_relative_eq!(zukoski_kg_s(1000.0, 6.0), 14.066, max_relative = 5e-3);
+        assert_relative_eq!(thomas_large_fire_kg_s(PI, 6.0), 8.68, max_relative = 5e-3);
+        assert_relative_eq!(
+            heskestad_axis_rise_k(plume, 6.0).unwrap(),
+            108.2,
+            max_relative = 5e-3
+        );
+    }
+
+    #[test]
+    fn a_plume_in_its_flame_is_what_others_worked_out() {
+        // By hand: 250 kW, 0.6 m wide, 1.5 m up; the flame is 1.527 m.
+        let plume = fire(250.0, 0.6);
+
+        assert_relative_eq!(heskestad_kg_s(plume, 1.5), 0.963, max_relative = 5e-3);
+        assert_relative_eq!(nfpa92_kg_s(175.0, 1.5), 1.096, max_relative = 5e-3);
+        assert_relative_eq!(zukoski_kg_s(250.0, 1.5), 0.879, max_relative = 5e-3);
+        assert_relative_eq!(
+            thomas_large_fire_kg_s(PI * 0.6, 1.5),
+            0.651,
+            max_relative = 5e-3
+        );
+        assert_eq!(heskestad_axis_rise_k(plume, 1.5), None);
+    }
+
+    #[test]
+    fn an_atrium_sheet_in_inches_and_pounds_comes_out() {
+        // One-page sheet after NFPA 92B: 4550 Btu/s convective, 53 ft: 291.73 lb/s. Its 0.022 and 0.0042 are rounded conversions of 0.071 and
+        // 0.0018, hence 2 %.
+        let convective_kw = 4550.0 * 1.055_056;
+        let expected_kg_s = 291.727 * 0.453_592_37;
+
+        assert_relative_eq!(
+            nfpa92_kg_s(convective_kw, 53.0 * 0.3048),
+            expected_kg_s,
+            max_relative = 0.02
+        );
+    }
+
+    #[test]
+    fn mccaffrey_s_three_regions_are_what_others_worked_out() {
+        // By hand: 100 kW at 0.4, 1 and 2 m over 293 K.
+        for (height_m, rise_k, velocity_m_s, mass_flow_kg_s) in [
+            (0.4, 852.5, 4.301, 0.231),
+            (1.0, 419.9, 4.773, 0.487),
+            (2.0, 151.4, 4.052, 1.406),
+        ] {
+            let got = mccaffrey(100.0, height_m, 293.0);
+
+            assert_relative_eq!(got.rise_k, rise_k, max_relative = 5e-3);
+            assert_relative_eq!(got.velocity_m_s, velocity_m_s, max_relative = 5e-3);
+            assert_relative_eq!(got.mass_flow_kg_s, mass_flow_kg_s, max_relative = 5e-3);
+        }
+    }
+
+    #[test]
+    fn mccaffrey_s_regions_nearly_meet() {
+        for x in [0.08, 0.2] {
+            let at_m = x * 100.0_f64.powf(0.4);
+            let below = mccaffrey(100.0, at_m * (1.0 - 1e-9), 293.0);
+            let above = mccaffrey(100.0, at_m * (1.0 + 1e-9), 293.0);
+
+            assert_relative_eq!(below.rise_k, above.rise_k, max_relative = 0.05);
+            assert_relative_eq!(
+                below.mass_flow_kg_s,
+                above.mass_flow_kg_s,
+                max_relative = 0.05
+            );
+        }
+    }
+
+    #[test]
+    fn rivals_agree_within_a_third_above_the_flame() {
+        // Published plume formulas differ by 20 to 30 %.
+        for height_m in [4.0, 6.0, 8.0, 12.0] {
+            let middle = heskestad_kg_s(fire(1000.0, 1.0), height_m);
+            for rival in [nfpa92_kg_s(700.0, height_m), zukoski_kg_s(1000.0, height_m)] {
+                assert!(
+                    (rival / middle - 1.0).abs() < 0.34,
+                    "{height_m}: {rival} {middle}"
+                );
+            }
+        }
+    }
+
+    #[test]
+    fn mccaffrey_draws_in_more_than_the_others_the_higher_the_more() {
+        // Its last region goes with z^1.895, theirs with z^(5/3).
+        let ratio = |height_m| {
+            mccaffrey(1000.0, height_m, 293.0).mass_flow_kg_s
+                / heskestad_kg_s(fire(1000.0, 1.0), height_m)
+        };
+
+        assert!(ratio(4.0) > 1.0 && ratio(6.0) > ratio(4.0) && ratio(12.0) > ratio(6.0));
+    }
+
+    #[test]
+    fn a_plume_never_loses_air_on_its_way_up_within_a_region() {
+        let plume = fire(500.0, 0.8);
+        let mut last = [0.0; 4];
+        for step in 1..400 {
+            let height_m = 0.05 * f64::from(step);
+            let now = [
+                heskestad_kg_s(plume, height_m),
+                zukoski_kg_s(500.0, height_m),
+                mccaffrey(500.0, height_m, 293.0).mass_flow_kg_s,
+                nfpa92_kg_s(350.0, height_m),
+            ];
+            for (new, old) in now.iter().zip(last) {
+                assert!(new.is_finite() && *new > 0.98 * old, "{height_m}: {now:?}");
+            }
+            last = now;
+        }
+    }
+
+    #[test]
+    fn the_large_fire_tells_its_limits() {
+        assert!(thomas_large_fire_limits(4.0, 6.0).is_empty());
+        assert!(!thomas_large_fire_limits(4.0, 10.1).is_empty());
+        assert!(!thomas_large_fire_limits(20.0, 6.0).is_empty());
     }
 }

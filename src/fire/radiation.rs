@@ -147,3 +147,101 @@ pub fn overhead_view_factor(length_m: f64, width_m: f64, distance_m: f64) -> f64
     };
     2.0 / std::f64::consts::PI * (half(x, y) + half(y, x))
 }
+
+#[cfg(test)]
+mod tests {
+    use super::*;
+    use approx::assert_relative_eq;
+
+    #[test]
+    fn the_flux_falls_with_the_square_of_the_distance() {
+        // Course notes (Utah State University): 100 units at 1 ft are 25 at 2 ft, 6.25 at 4 ft, a hundredth at 10 ft.
+        let near = point_source_kw_m2(1000.0, 0.35, 1.0);
+        for (times, share) in [(2.0, 0.25), (4.0, 0.0625), (10.0, 0.01)] {
+            assert_relative_eq!(
+                point_source_kw_m2(1000.0, 0.35, times) / near,
+                share,
+                max_relative = 1e-12
+            );
+        }
+    }
+
+    #[test]
+    fn flux_and_heat_release_are_each_other_s_inverse() {
+        let heat_kw = point_source_heat_release_kw(20.0, 0.35, 1.7);
+
+        assert_relative_eq!(
+            point_source_kw_m2(heat_kw, 0.35, 1.7),
+            20.0,
+            max_relative = 1e-12
+        );
+    }
+
+    fn layer(temperature_k: f64) -> HotLayer {
+        HotLayer {
+            temperature_k,
+            emissivity: 0.7,
+            view_factor: 1.0,
+            surface_temperature_k: 523.0,
+        }
+    }
+
+    #[test]
+    fn a_grey_surface_gives_the_printed_flux() {
+        // Korean qualification question of 2020: ε 0.7, 400 and 250 °C, 5172.66 W/m², with σ 5.67e-8 and 273 K.
+        assert_relative_eq!(
+            layer_flux_kw_m2(layer(673.0)),
+            5.172_66,
+            max_relative = 2e-4
+        );
+    }
+
+    #[test]
+    fn the_temperature_for_a_flux_gives_that_flux() {
+        for flux_kw_m2 in [0.0, 2.5, 10.0, 20.0, 60.0] {
+            let temperature_k = layer_temperature_for_flux_k(layer(0.0), flux_kw_m2);
+            assert!((layer_flux_kw_m2(layer(temperature_k)) - flux_kw_m2).abs() < 1e-9);
+        }
+    }
+
+    #[test]
+    fn six_hundred_degrees_and_twenty_kilowatts_are_one_criterion_in_an_ordinary_room() {
+        // Both are published as the onset of flashover, so grey smoke (0.7 to 0.9) seen from the floor's middle of a 3.6 × 2.4 m room under
+        // a layer 1.2 m up should give 20 kW/m² within the published 15 to 33.
+        let view_factor = overhead_view_factor(3.6, 2.4, 1.2);
+        for emissivity in [0.7, 0.9] {
+            let flux = layer_flux_kw_m2(HotLayer {
+                temperature_k: 873.15,
+                emissivity,
+                view_factor,
+                surface_temperature_k: 293.15,
+            });
+            assert!((13.0..33.0).contains(&flux), "{flux}");
+        }
+    }
+
+    #[test]
+    fn an_overhead_sheet_fills_more_of_the_sky_the_wider_and_the_nearer() {
+        assert!(overhead_view_factor(1e6, 1e6, 1.0) > 0.999_99);
+        assert_eq!(overhead_view_factor(2.0, 2.0, 0.0), 1.0);
+        let mut last = 1.0;
+        for step in 1..100 {
+            let factor = overhead_view_factor(4.0, 3.0, 0.1 * f64::from(step));
+            assert!(factor > 0.0 && factor < last);
+            last = factor;
+        }
+        // Far away the sheet is a patch: A/(π h²) = 12/(π·10 000).
+        assert_relative_eq!(
+            overhead_view_factor(4.0, 3.0, 100.0),
+            12.0 / (std::f64::consts::PI * 1e4),
+            max_relative = 1e-3
+        );
+    }
+
+    #[test]
+    fn near_the_flame_is_told() {
+        assert!(
+            point_source_limits(1.5, 1.0).is_empty() && !point_source_limits(1.2, 1.0).is_empty()
+        );
+    }
+}

@@ -172,3 +172,135 @@ pub fn flashover_screen(input: &ScreenInput<'_>) -> Result<Screen, NotConverged>
         )?,
     })
 }
+
+#[cfg(test)]
+mod tests {
+    use super::*;
+    use crate::fire::ventilation::WallOpening;
+    use approx::assert_relative_eq;
+    use proptest::prelude::*;
+
+    const BOARD: Surface = Surface {
+        area_m2: 60.713,
+        conductivity_w_mk: 0.17,
+        density_kg_m3: 790.0,
+        specific_heat_j_kgk: 900.0,
+        thickness_m: 0.0159,
+    };
+
+    fn input(surfaces: &[Surface], opening: WallOpening, peak_kw: f64) -> ScreenInput<'_> {
+        ScreenInput {
+            enclosure: Enclosure::of_box(3.66, 3.66, 2.44, opening),
+            surfaces,
+            fire: DesignFire {
+                growth_kw_s2: 0.0469,
+                peak_kw,
+                energy_kj: 4e6,
+                decay_from_share: 0.7,
+            },
+            position_factor: 1.0,
+            ambient_temperature_k: 293.15,
+        }
+    }
+
+    const DOOR: WallOpening = WallOpening {
+        area_m2: 1.8,
+        height_m: 2.0,
+    };
+
+    #[test]
+    fn one_room_is_screened_as_worked_by_hand() {
+        // 750·2.54558 = 1909.2 kW, after √(1909.2/0.0469) = 201.8 s; 7.8·60.713 + 378·2.54558 = 1435.8 kW, 175.0 s; 1500·2.54558 = 3818.4
+        // kW of air; 610·√(0.010692·60.713·2.54558) = 784.1 kW with the board warmed through.
+        let screen = flashover_screen(&input(&[BOARD], DOOR, 3000.0)).unwrap();
+
+        assert_relative_eq!(screen.babrauskas.required_kw, 1909.2, max_relative = 1e-4);
+        assert_relative_eq!(
+            screen.babrauskas.time_s.unwrap(),
+            201.8,
+            max_relative = 1e-3
+        );
+        assert_relative_eq!(screen.thomas.required_kw, 1435.8, max_relative = 1e-4);
+        assert_relative_eq!(screen.thomas.time_s.unwrap(), 175.0, max_relative = 1e-3);
+        assert_relative_eq!(screen.mccaffrey.required_kw, 784.1, max_relative = 1e-4);
+        assert_relative_eq!(screen.ventilation_limit_kw, 3818.4, max_relative = 1e-4);
+        assert_eq!(
+            (screen.available_kw, screen.limited_by),
+            (3000.0, LimitedBy::Fuel)
+        );
+
+        // At that time Q² = 610² √(kρc/t) A √H A_T: 0.0469² t^4.5 = 372 100·√0.12087·154.55 gives t = 163.3 s.
+        assert_relative_eq!(screen.mccaffrey.time_s.unwrap(), 163.3, max_relative = 1e-3);
+    }
+
+    #[test]
+    fn air_cuts_the_fire_and_says_so() {
+        let slit = WallOpening {
+            area_m2: 0.4,
+            height_m: 2.0,
+        };
+        let screen = flashover_screen(&input(&[BOARD], slit, 3000.0)).unwrap();
+
+        // By hand: 1500·0.4·√2 = 848.5 kW.
+        assert_relative_eq!(screen.available_kw, 848.5, max_relative = 1e-4);
+        assert_eq!(screen.limited_by, LimitedBy::Ventilation);
+        assert_eq!(screen.fuel_limit_kw, 3000.0);
+    }
+
+    #[test]
+    fn a_room_without_an_opening_never_flashes_over_by_these_and_says_why() {
+        let screen = flashover_screen(&input(&[BOARD], WallOpening::default(), 3000.0)).unwrap();
+
+        assert_eq!(screen.available_kw, 0.0);
+        for (_, requirement) in screen.requirements() {
+            assert!(requirement.time_s.is_none() && !requirement.exceeded.is_empty());
+        }
+        assert!(screen.time_to_600_c_s.is_none() && screen.hot_layer_rise_k.is_finite());
+    }
+
+    #[test]
+    fn the_span_leaves_out_what_is_out_of_range_unless_all_is() {
+        let ordinary = flashover_screen(&input(&[BOARD], DOOR, 3000.0)).unwrap();
+        let (low, high) = ordinary.required_span_kw();
+        assert!(low == ordinary.mccaffrey.required_kw && high == ordinary.babrauskas.required_kw);
+
+        let mut hall = input(&[BOARD], DOOR, 3000.0);
+        hall.enclosure.bounding_area_m2 = 120.0;
+        let hall = flashover_screen(&hall).unwrap();
+        assert!(!hall.thomas.exceeded.is_empty());
+        assert!(
+            hall.required_span_kw().1
+                == hall.babrauskas.required_kw.max(hall.mccaffrey.required_kw)
+        );
+    }
+
+    #[test]
+    fn methods_of_the_screen_stand_in_the_registry() {
+        let screen = flashover_screen(&input(&[BOARD], DOOR, 3000.0)).unwrap();
+        for (key, _) in screen.requirements() {
+            assert!(crate::fire::methods::find(key).is_some(), "{key}");
+        }
+    }
+
+    proptest! {
+        #[test]
+        fn a_time_stands_exactly_where_the_heat_suffices(
+            growth in 0.001..0.3_f64, peak in 50.0..8000.0_f64, fuel in 1e4..1e7_f64, width in 0.02..4.0_f64,
+        ) {
+            let opening = WallOpening { area_m2: 2.0 * width, height_m: 2.0 };
+            let mut input = input(&[BOARD], opening, peak);
+            input.fire = DesignFire { growth_kw_s2: growth, peak_kw: peak, energy_kj: fuel, decay_from_share: 0.7 };
+            let screen = flashover_screen(&input).unwrap();
+
+            for requirement in [screen.babrauskas, screen.thomas] {
+                prop_assert_eq!(requirement.time_s.is_some(), screen.available_kw >= requirement.required_kw);
+            }
+            // McCaffrey may still be met in the decay, where the lining is warmed through.
+            if screen.available_kw >= screen.mccaffrey.required_kw {
+                prop_assert!(screen.mccaffrey.time_s.is_some());
+            }
+            prop_assert!(screen.available_kw <= screen.ventilation_limit_kw.min(screen.fuel_limit_kw) * (1.0 + 1e-9));
+            prop_assert!(screen.hot_layer_rise_k.is_finite());
+        }
+    }
+}

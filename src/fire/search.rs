@@ -40,3 +40,33 @@ pub(super) fn first_time_s(
         })
     }
 }
+
+#[cfg(test)]
+mod tests {
+    use super::*;
+
+    #[test]
+    fn the_moment_is_found_to_a_hundredth_of_a_second() {
+        for moment_s in [0.3, 17.0, 5000.0, 7.2e6] {
+            let found_s = first_time_s("test", 0.0, 1e7, |time_s| time_s >= moment_s).unwrap();
+
+            assert!(
+                (0.0..=0.01).contains(&(found_s - moment_s)),
+                "{moment_s} {found_s}"
+            );
+        }
+    }
+
+    #[test]
+    fn an_end_that_is_not_finite_is_told_and_not_looped_over() {
+        let answer = first_time_s("test", 0.0, f64::INFINITY, |_| true);
+
+        assert_eq!(
+            answer,
+            Err(NotConverged {
+                what: "test",
+                after: 0
+            })
+        );
+    }
+}

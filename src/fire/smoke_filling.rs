@@ -218,3 +218,175 @@ pub fn nfpa92_t_squared_limits(room: FillingRoom, layer_height_m: f64) -> Exceed
             "layer lower than a fifth of the height",
         )
 }
+
+#[cfg(test)]
+mod tests {
+    use super::*;
+    use approx::assert_relative_eq;
+
+    const HALL: FillingRoom = FillingRoom {
+        floor_area_m2: 100.0,
+        height_m: 6.0,
+    };
+    const BIG: FillingRoom = FillingRoom {
+        floor_area_m2: 400.0,
+        height_m: 10.0,
+    };
+
+    /// Full at once and for long.
+    fn steady(heat_release_kw: f64) -> DesignFire {
+        DesignFire {
+            growth_kw_s2: 1e12,
+            peak_kw: heat_release_kw,
+            energy_kj: 1e9,
+            decay_from_share: 0.7,
+        }
+    }
+
+    #[test]
+    fn two_steady_halls_fill_as_others_worked_out() {
+        // By hand with k_v = 0.064: 41.7 s to 3 m, 94.2 s to 5 m.
+        for (room, heat_kw, height_m, expected_s) in
+            [(HALL, 1000.0, 3.0, 41.7), (BIG, 2000.0, 5.0, 94.2)]
+        {
+            let time_s = zukoski_time_to_height_s(room, &steady(heat_kw), height_m)
+                .unwrap()
+                .unwrap();
+            assert_relative_eq!(time_s, expected_s, max_relative = 5e-3);
+        }
+        // By hand: 26.8 s and 60.4 s for the first smoke.
+        assert_relative_eq!(
+            nfpa92_steady_height_m(HALL, 1000.0, 26.8),
+            3.0,
+            max_relative = 5e-3
+        );
+        assert_relative_eq!(
+            nfpa92_steady_height_m(BIG, 2000.0, 60.4),
+            5.0,
+            max_relative = 5e-3
+        );
+    }
+
+    #[test]
+    fn the_layer_meets_the_closed_form_with_the_other_constant() {
+        // Zukoski (1978) without dimensions, k = 0.21, leak at the ceiling: 50 m², 4 m, 300 kW after 60 s: 1.5807 m. 0.21 stands for
+        // k_v = 0.0635, hence 1 %.
+        let room = FillingRoom {
+            floor_area_m2: 50.0,
+            height_m: 4.0,
+        };
+
+        assert_relative_eq!(
+            zukoski_height_m(room, 300.0_f64.cbrt() * 60.0),
+            1.5807,
+            max_relative = 0.01
+        );
+        assert_relative_eq!(
+            zukoski_height_m(HALL, 10.0 * 40.0),
+            3.0819,
+            max_relative = 0.01
+        );
+    }
+
+    #[test]
+    fn the_integral_of_the_cube_root_is_that_of_the_curve() {
+        let fire = DesignFire {
+            growth_kw_s2: 0.05,
+            peak_kw: 800.0,
+            energy_kj: 250_000.0,
+            decay_from_share: 0.6,
+        };
+        let end_s = 1.1 * fire.duration_s();
+        let step_s = end_s / 40_000.0;
+        let mut sum = 0.0;
+        for i in 0..40_000 {
+            sum += fire.heat_release_kw((f64::from(i) + 0.5) * step_s).cbrt() * step_s;
+            if i % 4000 == 3999 {
+                let time_s = f64::from(i + 1) * step_s;
+                assert_relative_eq!(
+                    cube_root_integral_kw13_s(&fire, time_s),
+                    sum,
+                    max_relative = 1e-3
+                );
+            }
+        }
+    }
+
+    #[test]
+    fn time_and_height_are_each_other_s_inverse_for_a_growing_fire() {
+        let fire = DesignFire {
+            growth_kw_s2: 0.0117,
+            peak_kw: 600.0,
+            energy_kj: 300_000.0,
+            decay_from_share: 0.7,
+        };
+        for height_m in [5.5, 4.0, 3.0, 2.0, 1.0] {
+            let time_s = zukoski_time_to_height_s(HALL, &fire, height_m)
+                .unwrap()
+                .unwrap();
+            let back_m = zukoski_height_m(HALL, cube_root_integral_kw13_s(&fire, time_s));
+            assert!((back_m - height_m).abs() < 0.005, "{height_m}: {back_m}");
+        }
+        assert_eq!(zukoski_time_to_height_s(HALL, &fire, 6.0), Ok(Some(0.0)));
+        assert_eq!(zukoski_time_to_height_s(HALL, &fire, 0.0), Ok(None));
+        let spark = DesignFire {
+            energy_kj: 10.0,
+            ..fire
+        };
+        assert_eq!(zukoski_time_to_height_s(BIG, &spark, 2.0), Ok(None));
+    }
+
+    #[test]
+    fn first_smoke_is_sooner_than_the_mean_layer_by_the_published_margin() {
+        // 26.8 of 41.7 s and 60.4 of 94.2 s: 0.64 both times; the source says about 35 % sooner.
+        for (room, heat_kw) in [(HALL, 1000.0_f64), (BIG, 2000.0)] {
+            let half_m = 0.5 * room.height_m;
+            let mean_s = zukoski_time_to_height_s(room, &steady(heat_kw), half_m)
+                .unwrap()
+                .unwrap();
+            let first_s = (1..4000)
+                .map(|i| 0.05 * f64::from(i))
+                .find(|&at_s| nfpa92_steady_height_m(room, heat_kw, at_s) <= half_m);
+            assert_relative_eq!(first_s.unwrap() / mean_s, 0.65, max_relative = 0.05);
+        }
+    }
+
+    #[test]
+    fn layers_only_come_down() {
+        let mut last = [HALL.height_m; 3];
+        for step in 1..600 {
+            let time_s = f64::from(step);
+            let now = [
+                zukoski_height_m(HALL, 10.0 * time_s),
+                nfpa92_steady_height_m(HALL, 1000.0, time_s),
+                nfpa92_t_squared_height_m(HALL, 150.0, time_s),
+            ];
+            assert!(
+                now.iter()
+                    .zip(last)
+                    .all(|(new, old)| new.is_finite() && *new <= old && *new >= 0.0)
+            );
+            last = now;
+        }
+        assert_eq!(nfpa92_steady_height_m(HALL, 0.0, 10.0), HALL.height_m);
+        assert_eq!(nfpa92_t_squared_height_m(HALL, 150.0, 0.0), HALL.height_m);
+    }
+
+    #[test]
+    fn limits_are_told() {
+        let shaft = FillingRoom {
+            floor_area_m2: 4.0,
+            height_m: 12.0,
+        };
+
+        assert!(zukoski_limits(HALL).is_empty() && !zukoski_limits(shaft).is_empty());
+        assert!(
+            nfpa92_steady_limits(HALL, 3.0).is_empty()
+                && !nfpa92_steady_limits(HALL, 1.0).is_empty()
+        );
+        assert!(
+            nfpa92_t_squared_limits(HALL, 3.0).is_empty()
+                && !nfpa92_t_squared_limits(shaft, 6.0).is_empty()
+        );
+    }
+}

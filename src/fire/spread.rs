@@ -74,3 +74,48 @@ pub fn ignition_s(fire: &DesignFire, item: Neighbour) -> Option<f64> {
         item.distance_m,
     ))
 }
+
+#[cfg(test)]
+mod tests {
+    use super::*;
+
+    const FIRE: DesignFire = DesignFire {
+        growth_kw_s2: 0.0469,
+        peak_kw: 1500.0,
+        energy_kj: 6e5,
+        decay_from_share: 0.7,
+    };
+
+    fn at(distance_m: f64, ignitability: Ignitability) -> Neighbour {
+        Neighbour {
+            distance_m,
+            radiative_fraction: 0.35,
+            ignitability,
+        }
+    }
+
+    #[test]
+    fn the_further_and_the_harder_the_later() {
+        let mut last_s = 0.0;
+        for ignitability in [
+            Ignitability::Easy,
+            Ignitability::Normal,
+            Ignitability::Difficult,
+        ] {
+            let time_s = ignition_s(&FIRE, at(0.9, ignitability)).unwrap();
+            assert!(time_s > last_s);
+            last_s = time_s;
+        }
+        assert!(
+            ignition_s(&FIRE, at(1.2, Ignitability::Normal))
+                > ignition_s(&FIRE, at(0.8, Ignitability::Normal))
+        );
+    }
+
+    #[test]
+    fn both_sides_of_the_distance_that_the_peak_reaches() {
+        // By hand: r = √(0.35·1500/(4π·20)) = 1.4453 m.
+        assert!(ignition_s(&FIRE, at(1.445, Ignitability::Normal)).is_some());
+        assert!(ignition_s(&FIRE, at(1.446, Ignitability::Normal)).is_none());
+    }
+}

@@ -59,3 +59,73 @@ pub fn evans_limits(spray: Spray) -> Exceeded {
             "larger when the sprinkler opens than the fires of the tests",
         )
 }
+
+#[cfg(test)]
+mod tests {
+    use super::*;
+    use approx::assert_relative_eq;
+
+    const SPRAY: Spray = Spray {
+        heat_release_kw: 1000.0,
+        since_activation_s: 300.0,
+        density_mm_s: 0.07,
+    };
+
+    #[test]
+    fn the_decay_is_the_one_worked_by_hand() {
+        // τ = 3 · 0.07^(-1.85): ln 0.07 = -2.65926, ·1.85 = -4.91963, e^4.91963 = 136.95, τ = 410.85 s; e^(-300/410.85) = 0.48180.
+        assert_relative_eq!(evans_kw(SPRAY), 481.8, max_relative = 1e-3);
+    }
+
+    #[test]
+    fn more_water_and_more_time_leave_less_heat() {
+        for step in 1..60 {
+            let earlier = Spray {
+                since_activation_s: 10.0 * f64::from(step),
+                ..SPRAY
+            };
+            let later = Spray {
+                since_activation_s: earlier.since_activation_s + 10.0,
+                ..SPRAY
+            };
+            let wetter = Spray {
+                density_mm_s: 0.1,
+                ..earlier
+            };
+            assert!(evans_kw(later) < evans_kw(earlier) && evans_kw(wetter) < evans_kw(earlier));
+            assert!(evans_kw(later) > 0.0);
+        }
+        assert_eq!(
+            evans_kw(Spray {
+                density_mm_s: 0.0,
+                ..SPRAY
+            }),
+            1000.0
+        );
+        assert_eq!(
+            evans_kw(Spray {
+                since_activation_s: -5.0,
+                ..SPRAY
+            }),
+            1000.0
+        );
+    }
+
+    #[test]
+    fn both_sides_of_the_least_water_are_told() {
+        assert!(
+            evans_limits(Spray {
+                density_mm_s: 0.06,
+                ..SPRAY
+            })
+            .is_empty()
+        );
+        assert!(
+            !evans_limits(Spray {
+                density_mm_s: 0.059,
+                ..SPRAY
+            })
+            .is_empty()
+        );
+    }
+}

@@ -178,3 +178,123 @@ pub fn rockett_inflow_kg_s(opening: WallOpening, gas: WellMixed) -> f64 {
         * ambient_density_kg_m3
         * (2.0 * GRAVITY_M_S2 * (1.0 - s) / denominator).sqrt()
 }
+
+#[cfg(test)]
+mod tests {
+    use super::*;
+    use approx::relative_eq;
+
+    #[test]
+    fn the_orifice_form_gives_what_others_worked_out() {
+        for (width_m, height_m, gas_temperature_k, expected_kg_s, origin) in [
+            (
+                0.9,
+                2.0,
+                873.0,
+                1.3566,
+                "by hand with ρ = 353/T: well-mixed door",
+            ),
+            (
+                2.0,
+                1.5,
+                1273.0,
+                1.8805,
+                "by hand with ρ = 353/T: well-mixed window",
+            ),
+        ] {
+            let opening = WallOpening {
+                area_m2: width_m * height_m,
+                height_m,
+            };
+            let gas = WellMixed {
+                gas_temperature_k,
+                ambient_temperature_k: 293.0,
+                discharge_coefficient: 0.7,
+            };
+            let got_kg_s = rockett_inflow_kg_s(opening, gas);
+
+            assert!(
+                relative_eq!(got_kg_s, expected_kg_s, max_relative = 0.002),
+                "{origin}: {got_kg_s}"
+            );
+        }
+    }
+
+    #[test]
+    fn kawagoe_and_the_orifice_agree_within_the_published_span_in_hot_rooms() {
+        // Published coefficients 0.40 to 0.61 about 0.5.
+        let door = WallOpening {
+            area_m2: 1.8,
+            height_m: 2.0,
+        };
+        for gas_temperature_k in [600.0, 800.0, 1000.0, 1200.0, 1500.0] {
+            let gas = WellMixed {
+                gas_temperature_k,
+                ambient_temperature_k: 293.0,
+                discharge_coefficient: 0.7,
+            };
+            let coefficient = rockett_inflow_kg_s(door, gas) / door.factor_m5_2();
+
+            assert!(
+                (0.40..=0.61).contains(&coefficient),
+                "{gas_temperature_k}: {coefficient}"
+            );
+        }
+    }
+
+    #[test]
+    fn a_cold_room_draws_nothing_and_a_warm_one_something() {
+        let door = WallOpening {
+            area_m2: 1.8,
+            height_m: 2.0,
+        };
+        let gas = |gas_temperature_k| WellMixed {
+            gas_temperature_k,
+            ambient_temperature_k: 293.0,
+            discharge_coefficient: 0.7,
+        };
+
+        assert_eq!(rockett_inflow_kg_s(door, gas(293.0)), 0.0);
+        assert!(rockett_inflow_kg_s(door, gas(294.0)) > 0.0);
+    }
+
+    #[test]
+    fn equal_openings_combine_to_one_with_their_height() {
+        let window = WallOpening {
+            area_m2: 1.2,
+            height_m: 1.1,
+        };
+        let three = combine([window; 3]);
+
+        assert!(relative_eq!(three.area_m2, 3.6, max_relative = 1e-12));
+        assert!(relative_eq!(three.height_m, 1.1, max_relative = 1e-12));
+        assert!(relative_eq!(
+            three.factor_m5_2(),
+            3.0 * window.factor_m5_2(),
+            max_relative = 1e-12
+        ));
+    }
+
+    #[test]
+    fn no_opening_admits_nothing_and_says_so() {
+        let none = combine([]);
+
+        assert_eq!(kawagoe_limit_kw(none), 0.0);
+        assert!(!kawagoe_limits(none).is_empty());
+    }
+
+    #[test]
+    fn more_opening_never_admits_less() {
+        let mut last_kw = 0.0;
+        for step in 1..200 {
+            let height_m = 0.02 * f64::from(step);
+            let limit_kw = kawagoe_limit_kw(WallOpening {
+                area_m2: 0.9 * height_m,
+                height_m,
+            });
+
+            assert!(limit_kw.is_finite() && limit_kw > last_kw);
+            last_kw = limit_kw;
+        }
+    }
+}
