@@ -30,7 +30,10 @@ fn concrete(area_m2: f64) -> Surface {
 }
 
 fn one_room(criterion: &mut Criterion) {
-    let door = WallOpening { area_m2: 1.8, height_m: 2.0 };
+    let door = WallOpening {
+        area_m2: 1.8,
+        height_m: 2.0,
+    };
     let surfaces = [board(33.9), board(13.4), concrete(13.4)];
     let input = ScreenInput {
         enclosure: Enclosure::of_box(3.66, 3.66, 2.44, door),

@@ -227,7 +227,8 @@ mod tests {
 
     #[test]
     fn little_fuel_decays_before_the_peak() {
-        // 10 000 kJ: 7000 kJ are burnt after (3·7000/0.0469)^(1/3) = 76.51 s, at 0.0469·76.51² = 274.5 kW; decay 2·3000/274.5 = 21.86 s.
+        // 10 000 kJ: 7000 kJ are burnt after (3·7000/0.0469)^(1/3) = 76.51 s, at 0.0469·76.51² =
+        // 274.5 kW; decay 2·3000/274.5 = 21.86 s.
         let small = DesignFire {
             energy_kj: 10_000.0,
             ..FIRE
@@ -316,7 +317,8 @@ mod tests {
             let slope_kw = (fire.energy_released_kj(time_s + step_s) - fire.energy_released_kj(time_s)) / step_s;
             let (a, b) = (fire.heat_release_kw(time_s), fire.heat_release_kw(time_s + step_s));
 
-            // The law may change within the step: the mean slope lies between the ends, or between them and the peak.
+            // The law may change within the step: the mean slope lies between the ends, or between
+            // them and the peak.
             let slack = 1e-6 * fire.reached_kw() + 1e-12 * fire.energy_kj / step_s;
             prop_assert!(slope_kw >= a.min(b) - slack);
             prop_assert!(slope_kw <= fire.reached_kw() + slack);

@@ -181,8 +181,8 @@ pub fn activation_by_fire_s(
     })
 }
 
-/// Time at which the ceiling jet at a smoke detector has risen by so much, in s on the clock of the fire's curve; none where
-/// it never does.
+/// Time at which the ceiling jet at a smoke detector has risen by so much, in s on the clock of the
+/// fire's curve; none where it never does.
 ///
 /// ```text
 /// alarm when ΔT(Q(t)) ≥ 13 K        (4 K for modern detectors)
@@ -225,7 +225,8 @@ pub fn smoke_alarm_s(fire: &DesignFire, place: CeilingPlace, rise_k: f64) -> Opt
 ///
 /// Range: t² growth, wide flat ceiling, `r/H` up to 4.
 ///
-/// Source: [`HESKESTAD_DELICHATSIOS_1977`](crate::fire::sources::HESKESTAD_DELICHATSIOS_1977), in the form of NFPA 72 Annex B.
+/// Source: [`HESKESTAD_DELICHATSIOS_1977`](crate::fire::sources::HESKESTAD_DELICHATSIOS_1977), in
+/// the form of NFPA 72 Annex B.
 ///
 /// ```
 /// use sootline::fire::ceiling_jet::CeilingPlace;

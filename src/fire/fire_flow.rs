@@ -6,7 +6,8 @@ const LITRES_PER_GALLON: f64 = 3.785_411_784;
 const CUBIC_METRES_PER_CUBIC_FOOT: f64 = 0.028_316_846_592;
 const SQUARE_METRES_PER_SQUARE_FOOT: f64 = 0.092_903_04;
 
-/// Rate that fills the largest single space with steam in about half a minute, in L/min, by Royer and Nelson (Iowa).
+/// Rate that fills the largest single space with steam in about half a minute, in L/min, by Royer
+/// and Nelson (Iowa).
 ///
 /// ```text
 /// Q[gpm] = V[ft³] / 100          Q[L/min] = 1.3368 V[m³]
@@ -105,7 +106,8 @@ pub struct IsoBuilding {
     pub effective_area_m2: f64,
     /// Class of construction.
     pub construction: IsoConstruction,
-    /// Occupancy factor `O`: 0.75 noncombustible, 0.85 limited, 1.0 combustible, 1.15 free-burning, 1.25 rapid-burning.
+    /// Occupancy factor `O`: 0.75 noncombustible, 0.85 limited, 1.0 combustible, 1.15 free-burning,
+    /// 1.25 rapid-burning.
     pub occupancy_factor: f64,
     /// Exposure and communication `X + P`: zero for a building that stands alone.
     pub exposure: f64,
@@ -125,9 +127,9 @@ pub struct IsoBuilding {
 /// | `O`     | `occupancy_factor`  | -    |
 /// | `X + P` | `exposure`          | -    |
 ///
-/// What it means: what the public supply should give for a building so that a rating bureau is content; it holds
-/// for hours, with exposures, and is no rate of attack. Range: buildings without sprinklers; dwellings have a table of
-/// their own.
+/// What it means: what the public supply should give for a building so that a rating bureau is
+/// content; it holds for hours, with exposures, and is no rate of attack. Range: buildings without
+/// sprinklers; dwellings have a table of their own.
 ///
 /// Source: [`ISO_NFF`](crate::fire::sources::ISO_NFF).
 ///
@@ -192,8 +194,8 @@ mod tests {
 
     #[test]
     fn iowa_gives_the_printed_rates() {
-        // Carolina Fire Rescue EMS Journal: 50 × 75 × 12 ft, 450 gpm. Fire Fighting in Canada (Sells, 2010): 4/3 L/min per m³, that is 4
-        // L/min per m² under 3 m; exactly 1.3368.
+        // Carolina Fire Rescue EMS Journal: 50 × 75 × 12 ft, 450 gpm. Fire Fighting in Canada
+        // (Sells, 2010): 4/3 L/min per m³, that is 4 L/min per m² under 3 m; exactly 1.3368.
         let cubic_feet = 50.0 * 75.0 * 12.0;
         assert_relative_eq!(
             royer_nelson_l_min(cubic_feet * CUBIC_METRES_PER_CUBIC_FOOT),
@@ -229,7 +231,8 @@ mod tests {
 
     #[test]
     fn the_guide_gives_the_table_that_is_built_on_it() {
-        // IFC Table B105.1(2), from memory: type VB (frame, F 1.5) of 372 m² (4000 ft²): 1750 gpm; by hand 18·1.5·√4000 = 1707.6.
+        // IFC Table B105.1(2), from memory: type VB (frame, F 1.5) of 372 m² (4000 ft²): 1750 gpm;
+        // by hand 18·1.5·√4000 = 1707.6.
         let frame = iso_needed_fire_flow_l_min(building(
             4000.0 * SQUARE_METRES_PER_SQUARE_FOOT,
             IsoConstruction::Frame,

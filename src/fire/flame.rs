@@ -113,8 +113,8 @@ mod tests {
 
     #[test]
     fn heights_meet_the_published_table_within_the_span_of_the_prints() {
-        // Public measured-data archive, Heskestad_Correlation_2: L/D = 3.7 Q*^0.4 - 1.02. The 0.235 print lies up to 7 % above in the
-        // term with Q*, so the tolerance is on L/D + 1.02.
+        // Public measured-data archive, Heskestad_Correlation_2: L/D = 3.7 Q*^0.4 - 1.02. The 0.235
+        // print lies up to 7 % above in the term with Q*, so the tolerance is on L/D + 1.02.
         for (q_star, length_over_diameter) in [
             (0.5, 1.8),
             (1.0, 2.7),

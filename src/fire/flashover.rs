@@ -264,8 +264,9 @@ mod tests {
 
     #[test]
     fn the_three_agree_within_the_published_scatter_in_ordinary_rooms() {
-        // Two thirds of the data between 450 and 1050 about Babrauskas' 750: a factor of 0.6 to 1.4. The board room after its
-        // lining has warmed through is left out: there the correlations part by design.
+        // Two thirds of the data between 450 and 1050 about Babrauskas' 750: a factor of 0.6 to
+        // 1.4. The board room after its lining has warmed through is left out: there the
+        // correlations part by design.
         for (room, conductance, _, origin) in [rooms()[0], rooms()[1], rooms()[3]] {
             let middle_kw = babrauskas_kw(room);
             for kw in [

@@ -22,7 +22,8 @@ pub struct Fuel {
 ///
 /// Range: all of it burns; moisture and protection are not taken off.
 ///
-/// Source: elementary; worked cases in [`EN_1991_1_2`](crate::fire::sources::EN_1991_1_2) Annex E and in national rules.
+/// Source: elementary; worked cases in [`EN_1991_1_2`](crate::fire::sources::EN_1991_1_2) Annex E
+/// and in national rules.
 ///
 /// ```
 /// use sootline::fire::fuel_load::{Fuel, heat_content_mj};

@@ -2,7 +2,8 @@
 
 use super::Exceeded;
 
-/// Heat release at which a flame is *established*: about 0.3 m high, the zero of the fire clock. Common practice.
+/// Heat release at which a flame is *established*: about 0.3 m high, the zero of the fire clock.
+/// Common practice.
 pub const ESTABLISHED_BURNING_KW: f64 = 20.0;
 
 /// Heat release that the growth classes reach at their growth time.
@@ -155,7 +156,8 @@ mod tests {
 
     #[test]
     fn the_classes_have_the_published_coefficients() {
-        // NFPA 204 classes with 1055 kW: published 0.00293, 0.0117, 0.0469, 0.1876; more digits by hand: 1055/t².
+        // NFPA 204 classes with 1055 kW: published 0.00293, 0.0117, 0.0469, 0.1876; more digits by
+        // hand: 1055/t².
         for (class, expected) in GrowthClass::ALL
             .into_iter()
             .zip([0.002_931, 0.011_722, 0.046_889, 0.187_556])

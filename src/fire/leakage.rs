@@ -17,8 +17,8 @@ pub const CRACK_DISCHARGE_COEFFICIENT: f64 = 0.65;
 /// | `A`    | `area_m2`       | m²    |
 /// | `r`    | `leakage_ratio` | m²/m² |
 ///
-/// Range: ratios of the source run from 0.00007 (tight) to 0.0013 (very loose) for outer walls: the spread of one class to the
-/// next is a factor of two to three, and it decides.
+/// Range: ratios of the source run from 0.00007 (tight) to 0.0013 (very loose) for outer walls: the
+/// spread of one class to the next is a factor of two to three, and it decides.
 ///
 /// Source: [`KLOTE_MILKE`](crate::fire::sources::KLOTE_MILKE).
 ///
@@ -142,15 +142,16 @@ pub struct LeakyRoom {
 /// | `ρ_g`  | from `gas_temperature_k`              | kg/m³|
 /// | `ρ_a`  | from `ambient_temperature_k`          | kg/m³|
 ///
-/// `C_d` is [`CRACK_DISCHARGE_COEFFICIENT`]. The most that cracks let in: half of them at the floor and half at the ceiling is
-/// the best place for a draught. No wind.
+/// `C_d` is [`CRACK_DISCHARGE_COEFFICIENT`]. The most that cracks let in: half of them at the floor
+/// and half at the ceiling is the best place for a draught. No wind.
 ///
 /// Source: [`KARLSSON_QUINTIERE_2000`](crate::fire::sources::KARLSSON_QUINTIERE_2000).
 ///
 /// ```
 /// use sootline::fire::leakage::{LeakyRoom, buoyant_exchange_kg_s};
 ///
-/// // By hand: ρ 1.20478 and 0.8825, z_n = 3/2.36519 = 1.26840 m; 0.65·0.01·√(2·1.20478·0.32228·9.80665·1.2684) = 0.020202 kg/s.
+/// // By hand: ρ 1.20478 and 0.8825, z_n = 3/2.36519 = 1.26840 m;
+/// // 0.65·0.01·√(2·1.20478·0.32228·9.80665·1.2684) = 0.020202 kg/s.
 /// let room = LeakyRoom { leakage_area_m2: 0.02, height_m: 3.0, gas_temperature_k: 400.0, ambient_temperature_k: 293.0 };
 /// assert!((buoyant_exchange_kg_s(room) - 0.020202).abs() < 1e-5);
 /// ```
@@ -195,7 +196,8 @@ mod tests {
 
     #[test]
     fn the_pressure_is_that_of_the_closed_form() {
-        // Derived: 100 kW, 0.01 m², C_d 0.6: 1329.5 Pa. Karlsson and Quintiere, worked: 500 kW, 0.02 m², C_d 1: 3.0 kPa.
+        // Derived: 100 kW, 0.01 m², C_d 0.6: 1329.5 Pa. Karlsson and Quintiere, worked: 500 kW,
+        // 0.02 m², C_d 1: 3.0 kPa.
         assert_relative_eq!(
             quasi_steady_pressure_pa(vent(100.0, 0.01, 0.6)),
             1329.51,

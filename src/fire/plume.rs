@@ -30,8 +30,8 @@ impl PlumeFire {
 /// |--------|-----------------------------------------------------------------|------|
 /// | `Q_c`  | `convective_share` × `heat_release_kw`                          | kW   |
 /// | `z`    | `height_m`                                                      | m    |
-/// | `L`    | [`heskestad_height_m`](super::flame::heskestad_height_m)        | m    |
-/// | `z_0`  | [`heskestad_virtual_origin_m`](super::flame::heskestad_virtual_origin_m) | m |
+/// | `L`    | [`heskestad_height_m`]        | m    |
+/// | `z_0`  | [`heskestad_virtual_origin_m`] | m |
 ///
 /// The two laws do not meet exactly at the flame tip. Another print has 0.026.
 /// Range: fire on the floor in still air, away from walls, `Q*` as for the flame.
@@ -159,7 +159,8 @@ pub fn nfpa92_kg_s(convective_kw: f64, height_m: f64) -> f64 {
 /// | `P`    | `perimeter_m` | m    |
 /// | `z`    | `height_m`    | m    |
 ///
-/// Range: see [`thomas_large_fire_limits`]. Other coefficients, for small rooms near the opening: 0.210 and 0.337.
+/// Range: see [`thomas_large_fire_limits`]. Other coefficients, for small rooms near the opening:
+/// 0.210 and 0.337.
 ///
 /// Source: [`THOMAS_HINKLEY_1963`](crate::fire::sources::THOMAS_HINKLEY_1963).
 ///
@@ -214,7 +215,8 @@ pub struct McCaffreyPlume {
 /// | `z`    | `height_m`              | m    |
 /// | `T_0`  | `ambient_temperature_k` | K    |
 ///
-/// Range: 0.3 m square burner of 14 to 57 kW; used far beyond, where it draws in up to half again as much air as the others.
+/// Range: 0.3 m square burner of 14 to 57 kW; used far beyond, where it draws in up to half again
+/// as much air as the others.
 ///
 /// Source: [`MCCAFFREY_1979`](crate::fire::sources::MCCAFFREY_1979).
 ///
@@ -304,8 +306,8 @@ mod tests {
 
     #[test]
     fn an_atrium_sheet_in_inches_and_pounds_comes_out() {
-        // One-page sheet after NFPA 92B: 4550 Btu/s convective, 53 ft: 291.73 lb/s. Its 0.022 and 0.0042 are rounded conversions of 0.071 and
-        // 0.0018, hence 2 %.
+        // One-page sheet after NFPA 92B: 4550 Btu/s convective, 53 ft: 291.73 lb/s. Its 0.022 and
+        // 0.0042 are rounded conversions of 0.071 and 0.0018, hence 2 %.
         let convective_kw = 4550.0 * 1.055_056;
         let expected_kg_s = 291.727 * 0.453_592_37;
 

@@ -102,7 +102,8 @@ pub fn layer_flux_kw_m2(layer: HotLayer) -> f64 {
 /// ```
 /// use sootline::fire::radiation::{HotLayer, layer_temperature_for_flux_k};
 ///
-/// // By hand: black layer filling the sky: (20/5.6704e-11 + 293.15⁴)^(1/4) = (3.527e11 + 7.385e9)^(1/4) = 774.6 K (501 °C).
+/// // By hand: black layer filling the sky: (20/5.6704e-11 + 293.15⁴)^(1/4) = (3.527e11 +
+/// // 7.385e9)^(1/4) = 774.6 K (501 °C).
 /// let layer = HotLayer { temperature_k: 0.0, emissivity: 1.0, view_factor: 1.0, surface_temperature_k: 293.15 };
 /// assert!((layer_temperature_for_flux_k(layer, 20.0) - 774.6).abs() < 0.2);
 /// ```
@@ -126,7 +127,8 @@ pub fn layer_temperature_for_flux_k(layer: HotLayer, flux_kw_m2: f64) -> f64 {
 /// | `a`,`b` | `length_m`, `width_m`   | m    |
 /// | `h`     | `distance_m`            | m    |
 ///
-/// Source: [`CONFIGURATION_FACTORS`](crate::fire::sources::CONFIGURATION_FACTORS): four times the factor of a quarter.
+/// Source: [`CONFIGURATION_FACTORS`](crate::fire::sources::CONFIGURATION_FACTORS): four times the
+/// factor of a quarter.
 ///
 /// ```
 /// use sootline::fire::radiation::overhead_view_factor;
@@ -155,7 +157,8 @@ mod tests {
 
     #[test]
     fn the_flux_falls_with_the_square_of_the_distance() {
-        // Course notes (Utah State University): 100 units at 1 ft are 25 at 2 ft, 6.25 at 4 ft, a hundredth at 10 ft.
+        // Course notes (Utah State University): 100 units at 1 ft are 25 at 2 ft, 6.25 at 4 ft, a
+        // hundredth at 10 ft.
         let near = point_source_kw_m2(1000.0, 0.35, 1.0);
         for (times, share) in [(2.0, 0.25), (4.0, 0.0625), (10.0, 0.01)] {
             assert_relative_eq!(
@@ -206,8 +209,9 @@ mod tests {
 
     #[test]
     fn six_hundred_degrees_and_twenty_kilowatts_are_one_criterion_in_an_ordinary_room() {
-        // Both are published as the onset of flashover, so grey smoke (0.7 to 0.9) seen from the floor's middle of a 3.6 × 2.4 m room under
-        // a layer 1.2 m up should give 20 kW/m² within the published 15 to 33.
+        // Both are published as the onset of flashover, so grey smoke (0.7 to 0.9) seen from the
+        // floor's middle of a 3.6 × 2.4 m room under a layer 1.2 m up should give 20 kW/m² within
+        // the published 15 to 33.
         let view_factor = overhead_view_factor(3.6, 2.4, 1.2);
         for emissivity in [0.7, 0.9] {
             let flux = layer_flux_kw_m2(HotLayer {

@@ -49,7 +49,8 @@ pub struct Screen {
     pub babrauskas: Requirement,
     /// By [`flashover::thomas_kw`].
     pub thomas: Requirement,
-    /// By [`flashover::mccaffrey_kw`], with the conductance at the end of the steady burning, when it asks for least.
+    /// By [`flashover::mccaffrey_kw`], with the conductance at the end of the steady burning, when
+    /// it asks for least.
     pub mccaffrey: Requirement,
     /// Heat release that the air through the opening allows, kW.
     pub ventilation_limit_kw: f64,
@@ -210,8 +211,9 @@ mod tests {
 
     #[test]
     fn one_room_is_screened_as_worked_by_hand() {
-        // 750·2.54558 = 1909.2 kW, after √(1909.2/0.0469) = 201.8 s; 7.8·60.713 + 378·2.54558 = 1435.8 kW, 175.0 s; 1500·2.54558 = 3818.4
-        // kW of air; 610·√(0.010692·60.713·2.54558) = 784.1 kW with the board warmed through.
+        // 750·2.54558 = 1909.2 kW, after √(1909.2/0.0469) = 201.8 s; 7.8·60.713 + 378·2.54558 =
+        // 1435.8 kW, 175.0 s; 1500·2.54558 = 3818.4 kW of air; 610·√(0.010692·60.713·2.54558) =
+        // 784.1 kW with the board warmed through.
         let screen = flashover_screen(&input(&[BOARD], DOOR, 3000.0)).unwrap();
 
         assert_relative_eq!(screen.babrauskas.required_kw, 1909.2, max_relative = 1e-4);

@@ -33,12 +33,14 @@ const ENTRAINED_VOLUME: f64 = 0.064;
 ///
 /// Range: see [`zukoski_limits`].
 ///
-/// Sources: [`ZUKOSKI_1978`](crate::fire::sources::ZUKOSKI_1978), [`MOWRER_1999`](crate::fire::sources::MOWRER_1999).
+/// Sources: [`ZUKOSKI_1978`](crate::fire::sources::ZUKOSKI_1978),
+/// [`MOWRER_1999`](crate::fire::sources::MOWRER_1999).
 ///
 /// ```
 /// use sootline::fire::smoke_filling::{FillingRoom, zukoski_height_m};
 ///
-/// // By hand: 100 m², 6 m, 1000 kW, 41.7 s: 1 + 2·0.064·3.3019·417/300 = 1.58748; ^(-1.5) = 0.49996; · 6 = 3.0 m.
+/// // By hand: 100 m², 6 m, 1000 kW, 41.7 s: 1 + 2·0.064·3.3019·417/300 = 1.58748; ^(-1.5) =
+/// // 0.49996; · 6 = 3.0 m.
 /// let hall = FillingRoom { floor_area_m2: 100.0, height_m: 6.0 };
 /// assert!((zukoski_height_m(hall, 10.0 * 41.7) - 3.0).abs() < 0.01);
 /// ```
@@ -112,8 +114,8 @@ pub fn zukoski_time_to_height_s(
     .map(Some)
 }
 
-/// What a room exceeds of the range of [`zukoski_height_m`]: a plume that reaches the ceiling and a floor not so wide that
-/// the smoke cools on its way.
+/// What a room exceeds of the range of [`zukoski_height_m`]: a plume that reaches the ceiling and a
+/// floor not so wide that the smoke cools on its way.
 #[must_use]
 pub fn zukoski_limits(room: FillingRoom) -> Exceeded {
     let shape = room.floor_area_m2 / (room.height_m * room.height_m);
@@ -175,7 +177,8 @@ pub fn nfpa92_steady_height_m(room: FillingRoom, heat_release_kw: f64, time_s: f
 /// ```
 /// use sootline::fire::smoke_filling::{FillingRoom, nfpa92_t_squared_height_m};
 ///
-/// // By hand: 120·150^(-0.4)·6^(-0.8)·2.7778^(-0.6) = 120·0.13476·0.23852·0.54177 = 2.0897; 0.91·2.0897^(-1.45) = 0.3125; · 6 = 1.875 m.
+/// // By hand: 120·150^(-0.4)·6^(-0.8)·2.7778^(-0.6) = 120·0.13476·0.23852·0.54177 = 2.0897;
+/// // 0.91·2.0897^(-1.45) = 0.3125; · 6 = 1.875 m.
 /// let hall = FillingRoom { floor_area_m2: 100.0, height_m: 6.0 };
 /// assert!((nfpa92_t_squared_height_m(hall, 150.0, 120.0) - 1.875).abs() < 0.01);
 /// ```
@@ -269,8 +272,8 @@ mod tests {
 
     #[test]
     fn the_layer_meets_the_closed_form_with_the_other_constant() {
-        // Zukoski (1978) without dimensions, k = 0.21, leak at the ceiling: 50 m², 4 m, 300 kW after 60 s: 1.5807 m. 0.21 stands for
-        // k_v = 0.0635, hence 1 %.
+        // Zukoski (1978) without dimensions, k = 0.21, leak at the ceiling: 50 m², 4 m, 300 kW
+        // after 60 s: 1.5807 m. 0.21 stands for k_v = 0.0635, hence 1 %.
         let room = FillingRoom {
             floor_area_m2: 50.0,
             height_m: 4.0,

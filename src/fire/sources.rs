@@ -1,7 +1,8 @@
 //! Every publication that a figure rests on: cited in the documentation and printed in reports.
 //!
-//! [`Provenance`] says whether the text, or the equation quoted in another text, lay before us, or whether the value is
-//! recalled. A report marks a figure that rests on a recalled value as unverified.
+//! [`Provenance`] says whether the text, or the equation quoted in another text, lay before us, or
+//! whether the value is recalled. A report marks a figure that rests on a recalled value as
+//! unverified.
 
 /// How a value came to us.
 #[derive(Clone, Copy, Debug, PartialEq, Eq, Hash)]

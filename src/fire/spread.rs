@@ -39,7 +39,8 @@ pub struct Neighbour {
     pub ignitability: Ignitability,
 }
 
-/// Time at which an item near a growing fire takes fire, in s on the clock of the fire's curve; none where it never does.
+/// Time at which an item near a growing fire takes fire, in s on the clock of the fire's curve;
+/// none where it never does.
 ///
 /// ```text
 /// Q_ign = 4 π r² q_ign / χ_r        t = first time with Q(t) ≥ Q_ign

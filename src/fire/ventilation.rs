@@ -98,7 +98,8 @@ pub fn kawagoe_inflow_kg_s(opening: WallOpening) -> f64 {
 /// Symbols and range as [`kawagoe_inflow_kg_s`]; 3.0 MJ per kg of air holds within 10 % for common
 /// fuels. More fuel than this burns outside the opening.
 ///
-/// Sources: [`KAWAGOE_1958`](crate::fire::sources::KAWAGOE_1958), [`HUGGETT_1980`](crate::fire::sources::HUGGETT_1980).
+/// Sources: [`KAWAGOE_1958`](crate::fire::sources::KAWAGOE_1958),
+/// [`HUGGETT_1980`](crate::fire::sources::HUGGETT_1980).
 ///
 /// ```
 /// use sootline::fire::ventilation::{WallOpening, kawagoe_limit_kw};

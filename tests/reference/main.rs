@@ -1,7 +1,8 @@
 //! Published experiments beside the screening physics: a first reality check.
 //!
-//! Tolerances are explained where they stand; those of the open burns and of the test room were chosen before the comparison. Misses are listed with their size in
-//! `SCREENING.md` beside this file, which a test keeps equal to what the code computes.
+//! Tolerances are explained where they stand; those of the open burns and of the test room were
+//! chosen before the comparison. Misses are listed with their size in `SCREENING.md` beside this
+//! file, which a test keeps equal to what the code computes.
 
 mod furniture;
 mod shut_room;

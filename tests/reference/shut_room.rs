@@ -1,7 +1,8 @@
 //! Burner fires in a shut room that went out by themselves: when, and at how much oxygen.
 //!
-//! That the flame counts as out at the limit itself, where half of it burns, was settled with these burns in view (fading on
-//! below it kept a fire alive on leakage that had gone out in the test). So this shows consistency, not foresight.
+//! That the flame counts as out at the limit itself, where half of it burns, was settled with these
+//! burns in view (fading on below it kept a fire alive on leakage that had gone out in the test).
+//! So this shows consistency, not foresight.
 
 use sootline::fire::DesignFire;
 use sootline::fire::linings::Surface;
@@ -22,7 +23,11 @@ struct Burn {
 fn burns() -> Vec<Burn> {
     rows(BURNS)
         .map(|row| {
-            let number = |column: usize| row[column].parse::<f64>().unwrap();
+            let number = |column: usize| {
+                row[column]
+                    .parse::<f64>()
+                    .expect("a number in every column")
+            };
             Burn {
                 name: row[0].to_owned(),
                 fuel_kw: number(2),

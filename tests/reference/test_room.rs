@@ -1,7 +1,7 @@
 //! The lined test room of ISO 9705, whose flashover mark is 1000 kW.
 //!
-//! Source: ISO 9705 (room 3.6 × 2.4 × 2.4 m, door 0.8 × 2.0 m) and EUREFIC (Wickström, ed., 1991): 1000 kW with the burner
-//! counts as flashover. From memory.
+//! Source: ISO 9705 (room 3.6 × 2.4 × 2.4 m, door 0.8 × 2.0 m) and EUREFIC (Wickström, ed., 1991):
+//! 1000 kW with the burner counts as flashover. From memory.
 
 use sootline::fire::flashover::{Enclosure, babrauskas_kw, mccaffrey_kw, thomas_kw};
 use sootline::fire::linings::{Surface, total_conductance_kw_k};
@@ -59,7 +59,8 @@ fn rows() -> [(&'static str, f64); 4] {
 
 #[test]
 fn the_1000_kw_mark_lies_within_the_scatter_of_all_but_babrauskas() {
-    // Worked beforehand: Babrauskas' 1697 kW leaves the band. It knows no room size, and this room is small for its door.
+    // Worked beforehand: Babrauskas' 1697 kW leaves the band. It knows no room size, and this room
+    // is small for its door.
     for (name, required_kw) in rows() {
         let inside = SCATTER.contains(&(required_kw / MARK_KW));
 

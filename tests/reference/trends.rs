@@ -55,7 +55,7 @@ fn screen(case: Case) -> Screen {
         position_factor: 1.0,
         ambient_temperature_k: 293.15,
     })
-    .unwrap()
+    .expect("finite numbers only")
 }
 
 fn times(screen: &Screen) -> [f64; 4] {

@@ -1,9 +1,9 @@
-//! Temperature of the hot layer under the ceiling.
+//! The layer of a room with a wall opening.
 
-use super::design_fire::{DesignFire, Phases};
-use super::linings::{Surface, penetration_time_s, total_conductance_kw_k};
-use super::ventilation::WallOpening;
-use super::{Exceeded, NotConverged, flashover, search};
+use crate::fire::design_fire::{DesignFire, Phases};
+use crate::fire::linings::{Surface, penetration_time_s, total_conductance_kw_k};
+use crate::fire::ventilation::WallOpening;
+use crate::fire::{Exceeded, NotConverged, flashover, search};
 
 /// A fire in a room with one wall opening, at one moment.
 #[derive(Clone, Copy, Debug, PartialEq)]
@@ -211,197 +211,6 @@ fn first_jump_in_decay_s(
         .min_by(f64::total_cmp)
 }
 
-/// A fire in a room that a fan feeds with air.
-#[derive(Clone, Copy, Debug, PartialEq)]
-pub struct Forced {
-    /// Heat release, kW.
-    pub heat_release_kw: f64,
-    /// Air through the fan, kg/s.
-    pub mass_flow_kg_s: f64,
-    /// Conductance times area, kW/K: `h_k A_T` of [`total_conductance_kw_k`] for
-    /// [`foote_pagni_alvares_rise_k`], of [`deal_beyler_conductance_kw_k`](super::linings::deal_beyler_conductance_kw_k)
-    /// for [`deal_beyler_rise_k`].
-    pub conductance_kw_k: f64,
-    /// Air that comes in, K.
-    pub ambient_temperature_k: f64,
-    /// Specific heat of the air, kJ/(kg K).
-    pub specific_heat_kj_kgk: f64,
-}
-
-/// Rise of the layer in a fan-driven room, in K, by Foote, Pagni and Alvares.
-///
-/// ```text
-/// ΔT/T_a = 0.63 ( Q / (m c_p T_a) )^0.72 ( h_k A_T / (m c_p) )^(-0.36)
-/// ```
-///
-/// | symbol    | field                   | unit      |
-/// |-----------|-------------------------|-----------|
-/// | `Q`       | `heat_release_kw`       | kW        |
-/// | `m`       | `mass_flow_kg_s`        | kg/s      |
-/// | `c_p`     | `specific_heat_kj_kgk`  | kJ/(kg K) |
-/// | `T_a`     | `ambient_temperature_k` | K         |
-/// | `h_k A_T` | `conductance_kw_k`      | kW/K      |
-///
-/// Range: see [`foote_pagni_alvares_limits`].
-///
-/// Source: [`FOOTE_1986`](crate::fire::sources::FOOTE_1986).
-///
-/// ```
-/// use sootline::fire::hot_layer::{Forced, foote_pagni_alvares_rise_k};
-///
-/// // By hand: 293 · 0.63 · (1000/(2.4·293))^0.72 · (0.076594·130/2.4)^(-0.36)
-/// //        = 293 · 0.63 · 1.2896 · 0.5987 = 142.5 K.
-/// let room = Forced { heat_release_kw: 1000.0, mass_flow_kg_s: 2.4, conductance_kw_k: 0.076594 * 130.0,
-///                     ambient_temperature_k: 293.0, specific_heat_kj_kgk: 1.0 };
-/// assert!((foote_pagni_alvares_rise_k(room) - 142.5).abs() < 0.3);
-/// ```
-#[must_use]
-pub fn foote_pagni_alvares_rise_k(room: Forced) -> f64 {
-    if room.heat_release_kw <= 0.0 {
-        return 0.0;
-    }
-    let flow_kw_k = room.mass_flow_kg_s * room.specific_heat_kj_kgk;
-    0.63 * room.ambient_temperature_k
-        * (room.heat_release_kw / (flow_kw_k * room.ambient_temperature_k)).powf(0.72)
-        * (room.conductance_kw_k / flow_kw_k).powf(-0.36)
-}
-
-/// What a room exceeds of the tests behind [`foote_pagni_alvares_rise_k`]: 150 to 490 kW,
-/// 0.11 to 0.325 kg/s, walls of 0.1 m refractory, layers of 100 to 300 °C.
-#[must_use]
-pub fn foote_pagni_alvares_limits(room: Forced, rise_k: f64) -> Exceeded {
-    Exceeded::none()
-        .when(
-            room.mass_flow_kg_s <= 0.0,
-            "no forced flow: the closed-room form counts instead",
-        )
-        .when(
-            !(150.0..=490.0).contains(&room.heat_release_kw),
-            "heat release outside the 150 to 490 kW of the tests",
-        )
-        .when(
-            !(0.11..=0.325).contains(&room.mass_flow_kg_s),
-            "air flow outside the 0.11 to 0.325 kg/s of the tests",
-        )
-        .when(
-            rise_k > 300.0,
-            "layer hotter than the 100 to 300 °C of the tests",
-        )
-}
-
-/// Rise of the layer in a fan-driven room, in K, by Deal and Beyler.
-///
-/// ```text
-/// ΔT = Q / (m c_p + h A_T)
-/// ```
-///
-/// Symbols as [`foote_pagni_alvares_rise_k`], but with the conductance of
-/// [`deal_beyler_conductance_kw_k`](super::linings::deal_beyler_conductance_kw_k).
-/// Range: up to about 2000 s.
-///
-/// Source: [`DEAL_BEYLER_1990`](crate::fire::sources::DEAL_BEYLER_1990).
-///
-/// ```
-/// use sootline::fire::hot_layer::{Forced, deal_beyler_rise_k};
-///
-/// // By hand: 1000 / (2.4·1.0 + 0.030638·130) = 1000 / 6.3829 = 156.7 K.
-/// let room = Forced { heat_release_kw: 1000.0, mass_flow_kg_s: 2.4, conductance_kw_k: 0.030638 * 130.0,
-///                     ambient_temperature_k: 293.0, specific_heat_kj_kgk: 1.0 };
-/// assert!((deal_beyler_rise_k(room) - 156.7).abs() < 0.1);
-/// ```
-#[must_use]
-pub fn deal_beyler_rise_k(room: Forced) -> f64 {
-    room.heat_release_kw.max(0.0)
-        / (room.mass_flow_kg_s * room.specific_heat_kj_kgk + room.conductance_kw_k)
-}
-
-/// What a time exceeds of the range of [`deal_beyler_rise_k`].
-#[must_use]
-pub fn deal_beyler_limits(time_s: f64) -> Exceeded {
-    Exceeded::none().when(
-        time_s > 2000.0,
-        "later than about 2000 s, the end of the fitted tests",
-    )
-}
-
-/// A steady fire in a shut room.
-#[derive(Clone, Copy, Debug, PartialEq)]
-pub struct Closed {
-    /// Heat release, kW.
-    pub heat_release_kw: f64,
-    /// Time since it began, s.
-    pub time_s: f64,
-    /// Thermal inertia of the linings, weighted by area, kW² s/(m⁴ K²).
-    pub inertia_kw2_s_m4k2: f64,
-    /// Walls, ceiling and floor, m².
-    pub bounding_area_m2: f64,
-    /// Air in the room, kg.
-    pub air_mass_kg: f64,
-    /// Specific heat of the air, kJ/(kg K).
-    pub specific_heat_kj_kgk: f64,
-}
-
-/// Rise of the gas in a shut room with a steady fire, in K, by Beyler.
-///
-/// ```text
-/// ΔT = 2 K2/K1² ( K1 √t - 1 + e^(-K1 √t) )
-/// K1 = 2 · 0.4 √(kρc) A_T / (m c_p)      K2 = Q / (m c_p)
-/// ```
-///
-/// | symbol | field                  | unit           |
-/// |--------|------------------------|----------------|
-/// | `Q`    | `heat_release_kw`      | kW             |
-/// | `t`    | `time_s`               | s              |
-/// | `kρc`  | `inertia_kw2_s_m4k2`   | kW² s/(m⁴ K²)  |
-/// | `A_T`  | `bounding_area_m2`     | m²             |
-/// | `m`    | `air_mass_kg`          | kg             |
-/// | `c_p`  | `specific_heat_kj_kgk` | kJ/(kg K)      |
-///
-/// Several prints leave `A_T` out of `K1`; then it has not the unit s^(-1/2), so it must stand there.
-/// Range: see [`beyler_closed_limits`].
-///
-/// Source: [`BEYLER_1991`](crate::fire::sources::BEYLER_1991).
-///
-/// ```
-/// use sootline::fire::hot_layer::{Closed, beyler_closed_rise_k};
-///
-/// // By hand: kρc = 0.00016·790·0.9 = 0.11376, K1 = 0.8·0.33728·94/72 = 0.35227, K2 = 1.38889,
-/// // K1√200 = 4.9819: 2·1.38889/0.124095 · (4.9819 - 1 + 0.00686) = 89.3 K.
-/// let room = Closed { heat_release_kw: 100.0, time_s: 200.0, inertia_kw2_s_m4k2: 0.11376, bounding_area_m2: 94.0,
-///                     air_mass_kg: 72.0, specific_heat_kj_kgk: 1.0 };
-/// assert!((beyler_closed_rise_k(room) - 89.3).abs() < 0.1);
-/// ```
-#[must_use]
-pub fn beyler_closed_rise_k(room: Closed) -> f64 {
-    let capacity_kj_k = room.air_mass_kg * room.specific_heat_kj_kgk;
-    let k1 = 2.0 * 0.4 * room.inertia_kw2_s_m4k2.sqrt() * room.bounding_area_m2 / capacity_kj_k;
-    let k2 = room.heat_release_kw.max(0.0) / capacity_kj_k;
-    let x = k1 * room.time_s.max(0.0).sqrt();
-    // x - 1 + e^(-x) loses all digits for a small x: e^(-x) - 1 is what `exp_m1` keeps.
-    if k1 > 0.0 {
-        2.0 * k2 / (k1 * k1) * (x + (-x).exp_m1())
-    } else {
-        k2 * room.time_s.max(0.0)
-    }
-}
-
-/// What a state exceeds of the range of [`beyler_closed_rise_k`]: shut but leaky enough not to build up
-/// pressure, and oxygen not yet short, which limits the heat to `air mass × 13.1 MJ/kg × 8 %`.
-#[must_use]
-pub fn beyler_closed_limits(room: Closed, rise_k: f64) -> Exceeded {
-    let released_kj = room.heat_release_kw * room.time_s;
-    Exceeded::none()
-        .when(
-            released_kj
-                > super::oxygen::usable_heat_kj(room.air_mass_kg, super::oxygen::LIMIT_AT_AMBIENT),
-            "more heat than the oxygen of the shut room yields",
-        )
-        .when(
-            rise_k > 150.0,
-            "rise above 150 K, where the lost gas mass begins to matter",
-        )
-}
-
 #[cfg(test)]
 mod tests {
     use super::*;
@@ -448,7 +257,8 @@ mod tests {
 
     #[test]
     fn the_two_prints_of_the_vented_rise_agree_within_two_percent() {
-        // 480 (Q/(√g c_p ρ T A√H))^(2/3) (h A/(√g c_p ρ A√H))^(-1/3) for 295 K, the other print of the same paper.
+        // 480 (Q/(√g c_p ρ T A√H))^(2/3) (h A/(√g c_p ρ A√H))^(-1/3) for 295 K, the other print of
+        // the same paper.
         let room = vented(300.0, 0.8, 2.0, 0.03 * 44.48);
         let group = 9.81_f64.sqrt() * 1.0 * 1.2 * room.opening.factor_m5_2();
         let other_k = 480.0
@@ -513,7 +323,8 @@ mod tests {
     #[test]
     fn the_time_of_a_steady_fire_is_the_one_worked_by_hand() {
         // 500 kW from the start: 300 K needs h A = (6.85/300)³ · 500²/2.5456 = 1.16914 kW/K, h = 0.0192568, so
-        // t = kρc/h² = 0.12087/0.000370826 = 325.9 s. But the board is warmed through after 264.3 s, when h falls below: 264.3 s.
+        // t = kρc/h² = 0.12087/0.000370826 = 325.9 s. But the board is warmed through after 264.3
+        // s, when h falls below: 264.3 s.
         let mut room = GrowingVented {
             fire: DesignFire {
                 growth_kw_s2: 1e6,
@@ -543,8 +354,9 @@ mod tests {
 
     #[test]
     fn heat_that_comes_through_the_lining_in_the_decay_is_not_missed() {
-        // Steady until 125 000 kJ / 500 kW = 250 s, then down over 2·65 840/500 = 263 s. The board is warmed through at 264.3 s with
-        // 473 kW left: the rise falls from 250 s on and then jumps by 2^(1/3), above all it was.
+        // Steady until 125 000 kJ / 500 kW = 250 s, then down over 2·65 840/500 = 263 s. The board
+        // is warmed through at 264.3 s with 473 kW left: the rise falls from 250 s on and then
+        // jumps by 2^(1/3), above all it was.
         let fire = DesignFire {
             growth_kw_s2: 1e6,
             peak_kw: 500.0,
@@ -625,107 +437,5 @@ mod tests {
                 }
             }
         }
-    }
-
-    fn forced(conductance_kw_k: f64) -> Forced {
-        Forced {
-            heat_release_kw: 1000.0,
-            mass_flow_kg_s: 2.4,
-            conductance_kw_k,
-            ambient_temperature_k: 293.0,
-            specific_heat_kj_kgk: 1.0,
-        }
-    }
-
-    #[test]
-    fn both_forced_forms_give_what_others_worked_out_and_agree() {
-        // By hand: 1000 kW, 2.4 kg/s, 130 m² of concrete after 300 s: 142.5 K and 156.7 K.
-        let foote_k = foote_pagni_alvares_rise_k(forced(0.076_59 * 130.0));
-        let deal_k = deal_beyler_rise_k(forced(0.030_64 * 130.0));
-
-        assert_relative_eq!(foote_k, 142.5, max_relative = 5e-3);
-        assert_relative_eq!(deal_k, 156.7, max_relative = 5e-3);
-        assert_relative_eq!(foote_k, deal_k, max_relative = 0.3);
-    }
-
-    #[test]
-    fn a_lumped_loss_gives_the_closed_form() {
-        // Derived: Q/(m c_p + hA) = 500/(0.6·1.005 + 0.02·40) = 356.38 K.
-        let room = Forced {
-            heat_release_kw: 500.0,
-            mass_flow_kg_s: 0.6,
-            conductance_kw_k: 0.8,
-            ambient_temperature_k: 293.0,
-            specific_heat_kj_kgk: 1.005,
-        };
-        assert_relative_eq!(deal_beyler_rise_k(room), 356.38, max_relative = 1e-4);
-    }
-
-    #[test]
-    fn more_air_cools_and_more_heat_warms_a_forced_room() {
-        for step in 1..100 {
-            let flow = 0.05 * f64::from(step);
-            let less = Forced {
-                mass_flow_kg_s: flow,
-                ..forced(4.0)
-            };
-            let more = Forced {
-                mass_flow_kg_s: flow + 0.05,
-                ..forced(4.0)
-            };
-            let hotter = Forced {
-                heat_release_kw: 1200.0,
-                ..less
-            };
-            for rise in [foote_pagni_alvares_rise_k, deal_beyler_rise_k] {
-                assert!(rise(more) < rise(less) && rise(hotter) > rise(less));
-            }
-        }
-        assert!(!foote_pagni_alvares_limits(forced(4.0), 142.0).is_empty());
-        assert!(deal_beyler_limits(2000.0).is_empty() && !deal_beyler_limits(2001.0).is_empty());
-    }
-
-    fn closed(time_s: f64, inertia_kw2_s_m4k2: f64) -> Closed {
-        Closed {
-            heat_release_kw: 100.0,
-            time_s,
-            inertia_kw2_s_m4k2,
-            bounding_area_m2: 94.0,
-            air_mass_kg: 72.0,
-            specific_heat_kj_kgk: 1.0,
-        }
-    }
-
-    #[test]
-    fn the_closed_rise_is_what_others_worked_out() {
-        // By hand, with A_T in K1: 89.3 K.
-        assert_relative_eq!(
-            beyler_closed_rise_k(closed(200.0, 0.113_76)),
-            89.3,
-            max_relative = 5e-3
-        );
-    }
-
-    #[test]
-    fn the_closed_rise_has_both_ends_right() {
-        // Early: all heat in the gas, Q t/(m c_p). Late: the loss decides, Q √t / (0.4 √(kρc) A_T).
-        let early = closed(0.01, 0.113_76);
-        assert_relative_eq!(
-            beyler_closed_rise_k(early),
-            100.0 * 0.01 / 72.0,
-            max_relative = 0.03
-        );
-        let late = closed(1e8, 0.113_76);
-        let steady_k = 100.0 * 1e4 / (0.4 * 0.113_76_f64.sqrt() * 94.0);
-        assert_relative_eq!(beyler_closed_rise_k(late), steady_k, max_relative = 0.01);
-        assert_relative_eq!(beyler_closed_rise_k(closed(50.0, 0.0)), 100.0 * 50.0 / 72.0);
-        assert_eq!(beyler_closed_rise_k(closed(0.0, 0.1)), 0.0);
-    }
-
-    #[test]
-    fn a_closed_room_short_of_oxygen_is_told() {
-        // 72 kg of air yield 72 · 0.0815 · 13 100 = 76 871 kJ, which 100 kW use in 769 s.
-        assert!(beyler_closed_limits(closed(760.0, 0.113_76), 100.0).is_empty());
-        assert!(!beyler_closed_limits(closed(780.0, 0.113_76), 100.0).is_empty());
     }
 }
