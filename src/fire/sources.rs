@@ -457,32 +457,18 @@ mod tests {
     #[test]
     fn keys_are_unique_and_nothing_is_left_out() {
         for (i, source) in ALL.iter().enumerate() {
-            assert!(
-                ALL[..i].iter().all(|earlier| earlier.key != source.key),
-                "{}",
-                source.key
-            );
+            assert!(ALL[..i].iter().all(|earlier| earlier.key != source.key), "{}", source.key);
             assert!(!source.citation.is_empty() && !source.locator.is_empty());
-            assert_eq!(
-                find(source.key).map(|found| found.citation),
-                Some(source.citation)
-            );
+            assert_eq!(find(source.key).map(|found| found.citation), Some(source.citation));
         }
         assert!(find("nobody").is_none());
     }
 
     #[test]
     fn what_says_that_a_value_is_recalled_is_not_called_seen() {
-        for source in ALL
-            .iter()
-            .filter(|source| source.locator.ends_with("from memory"))
-        {
+        for source in ALL.iter().filter(|source| source.locator.ends_with("from memory")) {
             let also_seen = source.locator.contains("seen");
-            assert!(
-                source.provenance == Provenance::Memory || also_seen,
-                "{}",
-                source.key
-            );
+            assert!(source.provenance == Provenance::Memory || also_seen, "{}", source.key);
         }
     }
 }
