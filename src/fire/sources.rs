@@ -126,7 +126,7 @@ pub const FSRI_2018: Source = Source {
 pub const FOOTE_1986: Source = Source {
     key: "foote_1986",
     citation: "Foote, K. L., Pagni, P. J., Alvares, N. J.: Temperature correlations for forced-ventilated compartment fires, Fire Safety Science 1 (1986) 139-148",
-    locator: "ΔT/T = 0.63 (…)^0.72 (…)^-0.36; pages uncertain",
+    locator: "ΔT/T = 0.63 (…)^0.72 (…)^-0.36; page numbers uncertain",
     provenance: Provenance::Memory,
 };
 
@@ -141,7 +141,7 @@ pub const DEAL_BEYLER_1990: Source = Source {
 /// Closed room.
 pub const BEYLER_1991: Source = Source {
     key: "beyler_1991",
-    citation: "Beyler, C. L.: Analysis of compartment fires with overhead forced ventilation, Fire Safety Science 3 (1991) 291-300, and Fire Safety Journal 16 (1991) 441, as the SFPE Handbook gives it",
+    citation: "Beyler, C. L., Fire Safety Journal 16 (1991) 441, as the SFPE Handbook gives it for closed compartments",
     locator: "closed compartment, steady fire; A_T put back into K1",
     provenance: Provenance::Memory,
 };
