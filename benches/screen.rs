@@ -30,20 +30,12 @@ fn concrete(area_m2: f64) -> Surface {
 }
 
 fn one_room(criterion: &mut Criterion) {
-    let door = WallOpening {
-        area_m2: 1.8,
-        height_m: 2.0,
-    };
+    let door = WallOpening { area_m2: 1.8, height_m: 2.0 };
     let surfaces = [board(33.9), board(13.4), concrete(13.4)];
     let input = ScreenInput {
         enclosure: Enclosure::of_box(3.66, 3.66, 2.44, door),
         surfaces: &surfaces,
-        fire: DesignFire {
-            growth_kw_s2: 0.0469,
-            peak_kw: 3000.0,
-            energy_kj: 8e6,
-            decay_from_share: 0.7,
-        },
+        fire: DesignFire { growth_kw_s2: 0.0469, peak_kw: 3000.0, energy_kj: 8e6, decay_from_share: 0.7 },
         position_factor: 1.0,
         ambient_temperature_k: 293.15,
     };

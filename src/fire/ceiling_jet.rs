@@ -98,7 +98,10 @@ pub(super) fn alpert_velocity_per_kw_1_3(place: CeilingPlace) -> f64 {
 #[must_use]
 pub fn alpert_limits(heat_release_kw: f64, place: CeilingPlace) -> Exceeded {
     Exceeded::none()
-        .when(place.height_m < 4.6, "ceiling lower than the 4.6 m of the tests; the gas is confined and detectors act sooner")
+        .when(
+            place.height_m < 4.6,
+            "ceiling lower than the 4.6 m of the tests; the gas is confined and detectors act sooner",
+        )
         .when(place.height_m > 15.5, "ceiling higher than the 15.5 m of the tests")
         .when(heat_release_kw < 670.0, "fire smaller than the 670 kW of the tests")
         .when(heat_release_kw > 98_000.0, "fire larger than the 98 MW of the tests")
@@ -120,20 +123,13 @@ mod tests {
             let place = CeilingPlace { height_m, radius_m };
 
             assert_relative_eq!(alpert_rise_k(heat_kw, place), rise_k, max_relative = 1e-3);
-            assert_relative_eq!(
-                alpert_velocity_m_s(heat_kw, place),
-                velocity_m_s,
-                max_relative = 1e-3
-            );
+            assert_relative_eq!(alpert_velocity_m_s(heat_kw, place), velocity_m_s, max_relative = 1e-3);
         }
     }
 
     #[test]
     fn the_laws_meet_where_they_change() {
-        let at = |radius_m| CeilingPlace {
-            height_m: 5.0,
-            radius_m,
-        };
+        let at = |radius_m| CeilingPlace { height_m: 5.0, radius_m };
 
         // 5.38/0.18^(2/3) = 16.87 beside 16.9; 0.195/0.15^(5/6) = 0.948 beside 0.96.
         assert_relative_eq!(
@@ -152,64 +148,25 @@ mod tests {
     fn the_jet_cools_outward_and_upward_and_warms_with_heat() {
         for step in 1..100 {
             let radius_m = 0.1 * f64::from(step);
-            let here = CeilingPlace {
-                height_m: 5.0,
-                radius_m,
-            };
-            let further = CeilingPlace {
-                radius_m: radius_m + 0.1,
-                ..here
-            };
-            let higher = CeilingPlace {
-                height_m: 6.0,
-                ..here
-            };
+            let here = CeilingPlace { height_m: 5.0, radius_m };
+            let further = CeilingPlace { radius_m: radius_m + 0.1, ..here };
+            let higher = CeilingPlace { height_m: 6.0, ..here };
 
             assert!(alpert_rise_k(1e3, further) <= alpert_rise_k(1e3, here));
             assert!(alpert_rise_k(1e3, higher) < alpert_rise_k(1e3, here));
             assert!(alpert_rise_k(2e3, here) > alpert_rise_k(1e3, here));
             assert!(alpert_velocity_m_s(1e3, further) <= alpert_velocity_m_s(1e3, here));
         }
-        assert_eq!(
-            alpert_rise_k(
-                0.0,
-                CeilingPlace {
-                    height_m: 3.0,
-                    radius_m: 1.0
-                }
-            ),
-            0.0
-        );
+        assert_eq!(alpert_rise_k(0.0, CeilingPlace { height_m: 3.0, radius_m: 1.0 }), 0.0);
     }
 
     #[test]
     fn both_sides_of_the_tested_range_are_told() {
-        let place = CeilingPlace {
-            height_m: 5.0,
-            radius_m: 2.0,
-        };
+        let place = CeilingPlace { height_m: 5.0, radius_m: 2.0 };
 
         assert!(alpert_limits(1000.0, place).is_empty());
         assert!(!alpert_limits(600.0, place).is_empty());
-        assert!(
-            !alpert_limits(
-                1000.0,
-                CeilingPlace {
-                    height_m: 2.4,
-                    ..place
-                }
-            )
-            .is_empty()
-        );
-        assert!(
-            !alpert_limits(
-                1000.0,
-                CeilingPlace {
-                    height_m: 16.0,
-                    ..place
-                }
-            )
-            .is_empty()
-        );
+        assert!(!alpert_limits(1000.0, CeilingPlace { height_m: 2.4, ..place }).is_empty());
+        assert!(!alpert_limits(1000.0, CeilingPlace { height_m: 16.0, ..place }).is_empty());
     }
 }

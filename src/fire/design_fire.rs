@@ -77,12 +77,7 @@ impl DesignFire {
         let share = self.decay_from_share.clamp(0.0, 1.0);
         let before_decay_kj = share * self.energy_kj;
         if !(self.growth_kw_s2 > 0.0 && self.peak_kw > 0.0 && self.energy_kj > 0.0) {
-            return Phases {
-                growth_end_s: 0.0,
-                decay_start_s: 0.0,
-                end_s: 0.0,
-                reached_kw: 0.0,
-            };
+            return Phases { growth_end_s: 0.0, decay_start_s: 0.0, end_s: 0.0, reached_kw: 0.0 };
         }
 
         let to_peak_s = (self.peak_kw / self.growth_kw_s2).sqrt();
@@ -94,17 +89,8 @@ impl DesignFire {
             let steady_s = (before_decay_kj - to_peak_kj) / self.peak_kw;
             (to_peak_s, to_peak_s + steady_s, self.peak_kw)
         };
-        let decay_s = if reached_kw > 0.0 {
-            2.0 * (1.0 - share) * self.energy_kj / reached_kw
-        } else {
-            0.0
-        };
-        Phases {
-            growth_end_s,
-            decay_start_s,
-            end_s: decay_start_s + decay_s,
-            reached_kw,
-        }
+        let decay_s = if reached_kw > 0.0 { 2.0 * (1.0 - share) * self.energy_kj / reached_kw } else { 0.0 };
+        Phases { growth_end_s, decay_start_s, end_s: decay_start_s + decay_s, reached_kw }
     }
 
     /// Heat release at a time, kW.
@@ -121,11 +107,7 @@ impl DesignFire {
             return t_squared_energy_kj(self.growth_kw_s2, time_s);
         }
         if time_s >= phases.end_s {
-            return if phases.end_s > 0.0 {
-                self.energy_kj
-            } else {
-                0.0
-            };
+            return if phases.end_s > 0.0 { self.energy_kj } else { 0.0 };
         }
         let grown_kj = t_squared_energy_kj(self.growth_kw_s2, phases.growth_end_s);
         if time_s <= phases.decay_start_s {
@@ -177,10 +159,7 @@ impl DesignFire {
     /// The same fuel where no more than a limit can burn: lower and longer.
     #[must_use]
     pub fn capped_kw(self, limit_kw: f64) -> Self {
-        Self {
-            peak_kw: self.peak_kw.min(limit_kw),
-            ..self
-        }
+        Self { peak_kw: self.peak_kw.min(limit_kw), ..self }
     }
 }
 
@@ -229,37 +208,21 @@ mod tests {
     fn little_fuel_decays_before_the_peak() {
         // 10 000 kJ: 7000 kJ are burnt after (3·7000/0.0469)^(1/3) = 76.51 s, at 0.0469·76.51² =
         // 274.5 kW; decay 2·3000/274.5 = 21.86 s.
-        let small = DesignFire {
-            energy_kj: 10_000.0,
-            ..FIRE
-        };
+        let small = DesignFire { energy_kj: 10_000.0, ..FIRE };
         let phases = small.phases();
 
         assert_relative_eq!(phases.reached_kw, 274.5, max_relative = 1e-3);
         assert_eq!(phases.growth_end_s, phases.decay_start_s);
-        assert_relative_eq!(
-            phases.end_s - phases.decay_start_s,
-            21.86,
-            max_relative = 1e-3
-        );
+        assert_relative_eq!(phases.end_s - phases.decay_start_s, 21.86, max_relative = 1e-3);
         assert_eq!(small.time_to_kw_s(300.0), None);
     }
 
     #[test]
     fn a_fire_of_nothing_is_nothing() {
         for nothing in [
-            DesignFire {
-                energy_kj: 0.0,
-                ..FIRE
-            },
-            DesignFire {
-                peak_kw: 0.0,
-                ..FIRE
-            },
-            DesignFire {
-                growth_kw_s2: 0.0,
-                ..FIRE
-            },
+            DesignFire { energy_kj: 0.0, ..FIRE },
+            DesignFire { peak_kw: 0.0, ..FIRE },
+            DesignFire { growth_kw_s2: 0.0, ..FIRE },
         ] {
             assert_eq!(nothing.reached_kw(), 0.0);
             assert_eq!(nothing.heat_release_kw(100.0), 0.0);
@@ -270,10 +233,7 @@ mod tests {
 
     #[test]
     fn all_fuel_before_the_decay_ends_at_a_blow() {
-        let burner = DesignFire {
-            decay_from_share: 1.0,
-            ..FIRE
-        };
+        let burner = DesignFire { decay_from_share: 1.0, ..FIRE };
 
         assert_eq!(burner.phases().decay_start_s, burner.phases().end_s);
         assert_eq!(burner.heat_release_kw(burner.duration_s() + 1e-6), 0.0);

@@ -165,20 +165,11 @@ pub fn activation_s(
 
 /// [`activation_s`] for a [`DesignFire`], on the clock of its curve.
 #[must_use]
-pub fn activation_by_fire_s(
-    element: &HeatElement,
-    watch: &Watch,
-    fire: &DesignFire,
-) -> Option<f64> {
+pub fn activation_by_fire_s(element: &HeatElement, watch: &Watch, fire: &DesignFire) -> Option<f64> {
     let phases = fire.phases();
     // After its end the fire heats nothing more.
-    let watch = Watch {
-        until_s: watch.until_s.min(phases.end_s),
-        ..*watch
-    };
-    activation_s(element, &watch, |time_s| {
-        phases.heat_release_kw(fire.growth_kw_s2, time_s)
-    })
+    let watch = Watch { until_s: watch.until_s.min(phases.end_s), ..*watch };
+    activation_s(element, &watch, |time_s| phases.heat_release_kw(fire.growth_kw_s2, time_s))
 }
 
 /// Time at which the ceiling jet at a smoke detector has risen by so much, in s on the clock of the
@@ -243,38 +234,23 @@ pub fn heskestad_delichatsios_front_s(growth_kw_s2: f64, place: CeilingPlace) ->
         return 0.0;
     }
     let a = GRAVITY_M_S2 / (AIR_SPECIFIC_HEAT_KJ_KGK * AMBIENT_K * air_density_kg_m3(AMBIENT_K));
-    0.861
-        * (1.0 + place.radius_m / place.height_m)
-        * (a * growth_kw_s2).powf(-0.2)
-        * place.height_m.powf(0.8)
+    0.861 * (1.0 + place.radius_m / place.height_m) * (a * growth_kw_s2).powf(-0.2) * place.height_m.powf(0.8)
 }
 
 /// What an element exceeds of the range of [`element_rise_k`].
 #[must_use]
 pub fn element_limits(element: &HeatElement) -> Exceeded {
     Exceeded::none()
-        .when(
-            element.rti_m05s05 < 20.0,
-            "quicker than tested links (RTI below 20)",
-        )
-        .when(
-            element.rti_m05s05 > 350.0,
-            "slower than tested links (RTI above 350)",
-        )
+        .when(element.rti_m05s05 < 20.0, "quicker than tested links (RTI below 20)")
+        .when(element.rti_m05s05 > 350.0, "slower than tested links (RTI above 350)")
 }
 
 /// What a place exceeds of the range of [`smoke_alarm_s`].
 #[must_use]
 pub fn smoke_alarm_limits(place: CeilingPlace) -> Exceeded {
     Exceeded::none()
-        .when(
-            place.radius_m > 4.0 * place.height_m,
-            "further from the fire than four ceiling heights",
-        )
-        .when(
-            place.height_m > 15.5,
-            "ceiling higher than the 15.5 m of the tests",
-        )
+        .when(place.radius_m > 4.0 * place.height_m, "further from the fire than four ceiling heights")
+        .when(place.height_m > 15.5, "ceiling higher than the 15.5 m of the tests")
 }
 
 #[cfg(test)]
@@ -283,19 +259,11 @@ mod tests {
     use approx::assert_relative_eq;
 
     fn link(rti_m05s05: f64) -> HeatElement {
-        HeatElement {
-            rti_m05s05,
-            c_factor_m05s05: 0.0,
-            activation_temperature_k: 293.15 + 48.0,
-        }
+        HeatElement { rti_m05s05, c_factor_m05s05: 0.0, activation_temperature_k: 293.15 + 48.0 }
     }
 
     fn watch(height_m: f64, radius_m: f64) -> Watch {
-        Watch {
-            place: CeilingPlace { height_m, radius_m },
-            ambient_temperature_k: 293.15,
-            until_s: 3600.0,
-        }
+        Watch { place: CeilingPlace { height_m, radius_m }, ambient_temperature_k: 293.15, until_s: 3600.0 }
     }
 
     #[test]
@@ -325,11 +293,7 @@ mod tests {
             rise_k = element_rise_k(
                 &link(50.0),
                 rise_k,
-                GasStep {
-                    gas_rise_k: 100.0,
-                    velocity_m_s: 2.0,
-                    step_s: 0.01,
-                },
+                GasStep { gas_rise_k: 100.0, velocity_m_s: 2.0, step_s: 0.01 },
             );
         }
 
@@ -347,15 +311,7 @@ mod tests {
             let step_s = 120.0 / f64::from(steps);
             (0..steps).fold(0.0, |rise_k, i| {
                 let gas_rise_k = 0.5 * (f64::from(i) + 0.5) * step_s;
-                element_rise_k(
-                    &link(50.0),
-                    rise_k,
-                    GasStep {
-                        gas_rise_k,
-                        velocity_m_s: 2.0,
-                        step_s,
-                    },
-                )
+                element_rise_k(&link(50.0), rise_k, GasStep { gas_rise_k, velocity_m_s: 2.0, step_s })
             })
         };
         let coarse = (computed(12) - exact_k).abs();
@@ -365,34 +321,21 @@ mod tests {
 
     #[test]
     fn heat_lost_to_the_fitting_delays_and_can_prevent() {
-        let held_back = HeatElement {
-            c_factor_m05s05: 1.0,
-            ..link(100.0)
-        };
+        let held_back = HeatElement { c_factor_m05s05: 1.0, ..link(100.0) };
         let free_s = activation_s(&link(100.0), &watch(4.0, 2.0), |_| 1500.0).unwrap();
         let held_s = activation_s(&held_back, &watch(4.0, 2.0), |_| 1500.0).unwrap();
         assert!(held_s > free_s);
 
         // ΔT √u/(√u + C) must reach 48 K: 58.41 · 1.4255/(1.4255 + 0.5) = 43.2 K never does.
-        let lossy = HeatElement {
-            c_factor_m05s05: 0.5,
-            ..link(100.0)
-        };
+        let lossy = HeatElement { c_factor_m05s05: 0.5, ..link(100.0) };
         assert_eq!(activation_s(&lossy, &watch(5.0, 2.5), |_| 1000.0), None);
     }
 
     #[test]
     fn a_growing_fire_sets_links_off_later_the_slower_and_the_further() {
-        let fast = DesignFire {
-            growth_kw_s2: 0.0469,
-            peak_kw: 5000.0,
-            energy_kj: 5e6,
-            decay_from_share: 0.7,
-        };
-        let medium = DesignFire {
-            growth_kw_s2: 0.0117,
-            ..fast
-        };
+        let fast =
+            DesignFire { growth_kw_s2: 0.0469, peak_kw: 5000.0, energy_kj: 5e6, decay_from_share: 0.7 };
+        let medium = DesignFire { growth_kw_s2: 0.0117, ..fast };
         let at_s = |rti: f64, radius_m: f64, fire: &DesignFire| {
             activation_by_fire_s(&link(rti), &watch(3.0, radius_m), fire).unwrap()
         };
@@ -405,12 +348,7 @@ mod tests {
     #[test]
     fn coarse_steps_hardly_move_the_answer() {
         // Against steps of a hundredth of a second, done here by hand with the same jet.
-        let fire = DesignFire {
-            growth_kw_s2: 0.003,
-            peak_kw: 5000.0,
-            energy_kj: 5e6,
-            decay_from_share: 0.7,
-        };
+        let fire = DesignFire { growth_kw_s2: 0.003, peak_kw: 5000.0, energy_kj: 5e6, decay_from_share: 0.7 };
         let watch = watch(3.0, 3.0);
         let (mut time_s, mut rise_k) = (0.0, 0.0);
         while rise_k < 48.0 {
@@ -420,10 +358,7 @@ mod tests {
                 rise_k,
                 GasStep {
                     gas_rise_k: crate::fire::ceiling_jet::alpert_rise_k(heat_kw, watch.place),
-                    velocity_m_s: crate::fire::ceiling_jet::alpert_velocity_m_s(
-                        heat_kw,
-                        watch.place,
-                    ),
+                    velocity_m_s: crate::fire::ceiling_jet::alpert_velocity_m_s(heat_kw, watch.place),
                     step_s: 0.01,
                 },
             );
@@ -436,10 +371,7 @@ mod tests {
 
     #[test]
     fn an_element_that_is_warm_enough_acts_at_once() {
-        let warm = HeatElement {
-            activation_temperature_k: 290.0,
-            ..link(50.0)
-        };
+        let warm = HeatElement { activation_temperature_k: 290.0, ..link(50.0) };
 
         assert_eq!(activation_s(&warm, &watch(3.0, 3.0), |_| 0.0), Some(0.0));
         assert_eq!(activation_s(&link(50.0), &watch(3.0, 3.0), |_| 0.0), None);
@@ -453,69 +385,30 @@ mod tests {
 
     #[test]
     fn a_modern_smoke_detector_is_sooner_and_a_far_one_waits_for_the_front() {
-        let fire = DesignFire {
-            growth_kw_s2: 0.0469,
-            peak_kw: 2000.0,
-            energy_kj: 1e6,
-            decay_from_share: 0.7,
-        };
-        let place = CeilingPlace {
-            height_m: 3.0,
-            radius_m: 4.0,
-        };
+        let fire =
+            DesignFire { growth_kw_s2: 0.0469, peak_kw: 2000.0, energy_kj: 1e6, decay_from_share: 0.7 };
+        let place = CeilingPlace { height_m: 3.0, radius_m: 4.0 };
         let old_s = smoke_alarm_s(&fire, place, SMOKE_DETECTOR_RISE_13_K).unwrap();
         let modern_s = smoke_alarm_s(&fire, place, SMOKE_DETECTOR_RISE_4_K).unwrap();
         assert!(modern_s < old_s);
 
-        let far = CeilingPlace {
-            height_m: 3.0,
-            radius_m: 12.0,
-        };
+        let far = CeilingPlace { height_m: 3.0, radius_m: 12.0 };
         let front_s = heskestad_delichatsios_front_s(fire.growth_kw_s2, far);
         assert!(smoke_alarm_s(&fire, far, 0.01).unwrap() >= front_s);
     }
 
     #[test]
     fn a_fire_too_small_sets_no_smoke_detector_off() {
-        let spark = DesignFire {
-            growth_kw_s2: 0.0117,
-            peak_kw: 5.0,
-            energy_kj: 1e4,
-            decay_from_share: 0.7,
-        };
+        let spark = DesignFire { growth_kw_s2: 0.0117, peak_kw: 5.0, energy_kj: 1e4, decay_from_share: 0.7 };
 
-        assert_eq!(
-            smoke_alarm_s(
-                &spark,
-                CeilingPlace {
-                    height_m: 8.0,
-                    radius_m: 6.0
-                },
-                13.0
-            ),
-            None
-        );
+        assert_eq!(smoke_alarm_s(&spark, CeilingPlace { height_m: 8.0, radius_m: 6.0 }, 13.0), None);
     }
 
     #[test]
     fn limits_are_told() {
         assert!(element_limits(&link(100.0)).is_empty());
-        assert!(
-            !element_limits(&link(10.0)).is_empty() && !element_limits(&link(400.0)).is_empty()
-        );
-        assert!(
-            smoke_alarm_limits(CeilingPlace {
-                height_m: 3.0,
-                radius_m: 6.0
-            })
-            .is_empty()
-        );
-        assert!(
-            !smoke_alarm_limits(CeilingPlace {
-                height_m: 3.0,
-                radius_m: 13.0
-            })
-            .is_empty()
-        );
+        assert!(!element_limits(&link(10.0)).is_empty() && !element_limits(&link(400.0)).is_empty());
+        assert!(smoke_alarm_limits(CeilingPlace { height_m: 3.0, radius_m: 6.0 }).is_empty());
+        assert!(!smoke_alarm_limits(CeilingPlace { height_m: 3.0, radius_m: 13.0 }).is_empty());
     }
 }

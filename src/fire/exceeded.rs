@@ -23,10 +23,7 @@ impl Exceeded {
     /// Nothing exceeded.
     #[must_use]
     pub const fn none() -> Self {
-        Self {
-            notes: [""; CAPACITY],
-            count: 0,
-        }
+        Self { notes: [""; CAPACITY], count: 0 }
     }
 
     /// Adds the explanation when the condition holds. A seventh is dropped: no method has that many.
@@ -69,10 +66,7 @@ mod tests {
 
     #[test]
     fn only_what_holds_is_kept_and_in_order() {
-        let exceeded = Exceeded::none()
-            .when(true, "a")
-            .when(false, "b")
-            .when(true, "c");
+        let exceeded = Exceeded::none().when(true, "a").when(false, "b").when(true, "c");
 
         assert_eq!(exceeded.iter().collect::<Vec<_>>(), ["a", "c"]);
         assert!(!exceeded.is_empty() && exceeded.len() == 2);

@@ -42,17 +42,9 @@ pub struct AftergasShare {
 
 impl AftergasShare {
     /// Linings that do not burn.
-    pub const NONCOMBUSTIBLE_LINING: Self = Self {
-        low: 0.1,
-        typical: 0.5,
-        high: 1.5,
-    };
+    pub const NONCOMBUSTIBLE_LINING: Self = Self { low: 0.1, typical: 0.5, high: 1.5 };
     /// Linings that gasify too.
-    pub const COMBUSTIBLE_LINING: Self = Self {
-        low: 0.2,
-        typical: 1.0,
-        high: 3.0,
-    };
+    pub const COMBUSTIBLE_LINING: Self = Self { low: 0.2, typical: 1.0, high: 3.0 };
 }
 
 /// What [`screen`] looks at.
@@ -167,11 +159,7 @@ pub fn screen(input: &ExcessInput<'_>) -> ExcessFuel {
     let state = burn.state;
     let left_kj = (input.fire.energy_kj - state.gasified_kj).max(0.0);
     let after = |share: f64| {
-        let after_kj = if burn.starved {
-            (share * state.gasified_kj).min(left_kj)
-        } else {
-            0.0
-        };
+        let after_kj = if burn.starved { (share * state.gasified_kj).min(left_kj) } else { 0.0 };
         state.unburned_kj_kg + after_kj / state.gas_mass_kg
     };
     let threshold_kj_kg = threshold_kj_kg(state.temperature_k);
@@ -183,11 +171,7 @@ pub fn screen(input: &ExcessInput<'_>) -> ExcessFuel {
         threshold_kj_kg,
         layer_temperature_k: state.temperature_k,
         burn,
-        outcome: if high_kj_kg < threshold_kj_kg {
-            Outcome::NotIndicated
-        } else {
-            Outcome::CannotBeExcluded
-        },
+        outcome: if high_kj_kg < threshold_kj_kg { Outcome::NotIndicated } else { Outcome::CannotBeExcluded },
     }
 }
 
@@ -216,12 +200,8 @@ mod tests {
         thickness_m: 0.0159,
     };
 
-    const FIRE: DesignFire = DesignFire {
-        growth_kw_s2: 0.0469,
-        peak_kw: 3000.0,
-        energy_kj: 2e6,
-        decay_from_share: 0.7,
-    };
+    const FIRE: DesignFire =
+        DesignFire { growth_kw_s2: 0.0469, peak_kw: 3000.0, energy_kj: 2e6, decay_from_share: 0.7 };
 
     fn shut(volume_m3: f64, leakage_area_m2: f64) -> ShutRoom<'static> {
         ShutRoom {
@@ -235,22 +215,13 @@ mod tests {
     }
 
     fn input(fire: DesignFire, room: ShutRoom<'static>) -> ExcessInput<'static> {
-        ExcessInput {
-            fire,
-            room,
-            aftergas: AftergasShare::NONCOMBUSTIBLE_LINING,
-            horizon_s: 7200.0,
-        }
+        ExcessInput { fire, room, aftergas: AftergasShare::NONCOMBUSTIBLE_LINING, horizon_s: 7200.0 }
     }
 
     #[test]
     fn little_fuel_in_a_big_leaky_room_is_not_indicated() {
-        let basket = DesignFire {
-            growth_kw_s2: 0.0117,
-            peak_kw: 300.0,
-            energy_kj: 30_000.0,
-            decay_from_share: 0.7,
-        };
+        let basket =
+            DesignFire { growth_kw_s2: 0.0117, peak_kw: 300.0, energy_kj: 30_000.0, decay_from_share: 0.7 };
         let answer = screen(&input(basket, shut(400.0, 0.2)));
 
         assert_eq!(answer.outcome, Outcome::NotIndicated);
@@ -260,13 +231,7 @@ mod tests {
     #[test]
     fn a_small_shut_room_full_of_fuel_cannot_be_excluded() {
         for growth_kw_s2 in [0.0117, 0.0469, 0.1876] {
-            let answer = screen(&input(
-                DesignFire {
-                    growth_kw_s2,
-                    ..FIRE
-                },
-                shut(30.0, 0.005),
-            ));
+            let answer = screen(&input(DesignFire { growth_kw_s2, ..FIRE }, shut(30.0, 0.005)));
 
             assert_eq!(answer.outcome, Outcome::CannotBeExcluded, "{growth_kw_s2}");
             assert!(answer.burn.starved);
@@ -277,10 +242,7 @@ mod tests {
     fn fuel_that_hardly_outlasts_the_oxygen_is_not_indicated() {
         // What is left when the flame dies is all that can turn to gas: 30 m³ of air burn about 35
         // MJ, so 45 MJ leave less than 0.7 MJ per kg.
-        let fire = DesignFire {
-            energy_kj: 45_000.0,
-            ..FIRE
-        };
+        let fire = DesignFire { energy_kj: 45_000.0, ..FIRE };
         let answer = screen(&input(fire, shut(30.0, 0.005)));
 
         assert!(answer.burn.starved);
@@ -288,8 +250,7 @@ mod tests {
         assert!(
             answer.high_kj_kg
                 <= answer.burn.state.unburned_kj_kg
-                    + (fire.energy_kj - answer.burn.state.gasified_kj)
-                        / answer.burn.state.gas_mass_kg
+                    + (fire.energy_kj - answer.burn.state.gasified_kj) / answer.burn.state.gas_mass_kg
                     + 1e-9
         );
     }
@@ -331,17 +292,9 @@ mod tests {
     fn corners_stand_in_order_and_the_high_one_decides() {
         let answer = screen(&input(FIRE, shut(30.0, 0.005)));
 
-        assert!(
-            answer.low_kj_kg <= answer.typical_kj_kg && answer.typical_kj_kg <= answer.high_kj_kg
-        );
-        assert_eq!(
-            answer.outcome == Outcome::CannotBeExcluded,
-            answer.high_kj_kg >= answer.threshold_kj_kg
-        );
-        assert_relative_eq!(
-            answer.threshold_kj_kg,
-            threshold_kj_kg(answer.layer_temperature_k)
-        );
+        assert!(answer.low_kj_kg <= answer.typical_kj_kg && answer.typical_kj_kg <= answer.high_kj_kg);
+        assert_eq!(answer.outcome == Outcome::CannotBeExcluded, answer.high_kj_kg >= answer.threshold_kj_kg);
+        assert_relative_eq!(answer.threshold_kj_kg, threshold_kj_kg(answer.layer_temperature_k));
     }
 
     #[test]

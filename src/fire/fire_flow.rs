@@ -59,9 +59,7 @@ pub fn royer_nelson_l_min(volume_m3: f64) -> f64 {
 /// ```
 #[must_use]
 pub fn nfa_l_min(floor_area_m2: f64, involved_share: f64) -> f64 {
-    LITRES_PER_GALLON / SQUARE_METRES_PER_SQUARE_FOOT / 3.0
-        * floor_area_m2.max(0.0)
-        * involved_share
+    LITRES_PER_GALLON / SQUARE_METRES_PER_SQUARE_FOOT / 3.0 * floor_area_m2.max(0.0) * involved_share
 }
 
 /// What a share exceeds of the range of [`nfa_l_min`]: up to about half involved.
@@ -176,11 +174,7 @@ pub fn compare(needed_l_min: f64, available_l_min: f64) -> Supply {
     Supply {
         needed_l_min,
         available_l_min,
-        ratio: if needed_l_min > 0.0 {
-            available_l_min / needed_l_min
-        } else {
-            f64::INFINITY
-        },
+        ratio: if needed_l_min > 0.0 { available_l_min / needed_l_min } else { f64::INFINITY },
         shortfall_l_min: (needed_l_min - available_l_min).max(0.0),
     }
 }
@@ -221,12 +215,7 @@ mod tests {
     }
 
     fn building(effective_area_m2: f64, construction: IsoConstruction) -> IsoBuilding {
-        IsoBuilding {
-            effective_area_m2,
-            construction,
-            occupancy_factor: 1.0,
-            exposure: 0.0,
-        }
+        IsoBuilding { effective_area_m2, construction, occupancy_factor: 1.0, exposure: 0.0 }
     }
 
     #[test]
@@ -251,8 +240,7 @@ mod tests {
 
         // By hand: 18·√(2100 m²) = 2706.2 gpm, rounded to 2500; 18·√(2200 m²) = 2769.9 to 3000.
         for (area_m2, gpm) in [(2100.0, 2500.0), (2200.0, 3000.0)] {
-            let got =
-                iso_needed_fire_flow_l_min(building(area_m2, IsoConstruction::JoistedMasonry));
+            let got = iso_needed_fire_flow_l_min(building(area_m2, IsoConstruction::JoistedMasonry));
             assert_relative_eq!(got, gpm * GPM, max_relative = 1e-9);
         }
     }
@@ -267,11 +255,7 @@ mod tests {
                 nfa_l_min(area_m2, 0.5),
                 iso_needed_fire_flow_l_min(building(area_m2, IsoConstruction::Frame)),
             ];
-            assert!(
-                now.iter()
-                    .zip(last)
-                    .all(|(new, old)| new.is_finite() && *new >= old)
-            );
+            assert!(now.iter().zip(last).all(|(new, old)| new.is_finite() && *new >= old));
             last = now;
         }
         assert!(nfa_limits(0.5).is_empty() && !nfa_limits(0.51).is_empty());

@@ -61,10 +61,7 @@ pub fn dimensionless_heat_release(fire: RoundFire) -> f64 {
 pub fn heskestad_height_limits(fire: RoundFire) -> Exceeded {
     let q_star = dimensionless_heat_release(fire);
     Exceeded::none()
-        .when(
-            q_star < 0.1,
-            "too wide for its heat: the flame breaks up into many (Q* below 0.1)",
-        )
+        .when(q_star < 0.1, "too wide for its heat: the flame breaks up into many (Q* below 0.1)")
         .when(q_star > 1e4, "a jet rather than a fire (Q* above 10 000)")
 }
 
@@ -101,14 +98,8 @@ mod tests {
 
     /// A fire of 1 m with a dimensionless heat release.
     fn of_q_star(q_star: f64) -> RoundFire {
-        let one = dimensionless_heat_release(RoundFire {
-            heat_release_kw: 1.0,
-            diameter_m: 1.0,
-        });
-        RoundFire {
-            heat_release_kw: q_star / one,
-            diameter_m: 1.0,
-        }
+        let one = dimensionless_heat_release(RoundFire { heat_release_kw: 1.0, diameter_m: 1.0 });
+        RoundFire { heat_release_kw: q_star / one, diameter_m: 1.0 }
     }
 
     #[test]
@@ -127,20 +118,14 @@ mod tests {
             (1000.0, 57.9),
         ] {
             let got = heskestad_height_m(of_q_star(q_star)) + 1.02;
-            assert!(
-                relative_eq!(got, length_over_diameter + 1.02, max_relative = 0.07),
-                "{q_star}: {got}"
-            );
+            assert!(relative_eq!(got, length_over_diameter + 1.02, max_relative = 0.07), "{q_star}: {got}");
         }
     }
 
     #[test]
     fn a_petrol_tray_has_the_flame_that_was_printed() {
         // Training slides after Quintiere: 2.43 m at 2400 kW/m²: 4.64 m², 11 136 kW, 7.29 m.
-        let tray = RoundFire {
-            heat_release_kw: 2400.0 * 4.64,
-            diameter_m: 2.43,
-        };
+        let tray = RoundFire { heat_release_kw: 2400.0 * 4.64, diameter_m: 2.43 };
 
         assert_relative_eq!(heskestad_height_m(tray), 7.29, max_relative = 1e-3);
         assert_relative_eq!(equivalent_diameter_m(4.6377), 2.43, max_relative = 1e-4);
@@ -150,10 +135,7 @@ mod tests {
     fn the_virtual_origin_takes_the_total_heat() {
         // GB/T 31593.7-2015 (after ISO 16736:2006), B.8: 0.921 m; the convective heat would give 0.554 m.
         let area_m2 = std::f64::consts::PI * 1.8 * 1.8 / 4.0;
-        let pool = RoundFire {
-            heat_release_kw: 2500.0 * area_m2,
-            diameter_m: 1.8,
-        };
+        let pool = RoundFire { heat_release_kw: 2500.0 * area_m2, diameter_m: 1.8 };
 
         assert_relative_eq!(heskestad_virtual_origin_m(pool), 0.921, max_relative = 3e-3);
     }
@@ -162,10 +144,7 @@ mod tests {
     fn the_height_is_never_negative_and_grows_with_heat() {
         let mut last_m = 0.0;
         for step in 0..2000 {
-            let fire = RoundFire {
-                heat_release_kw: 5.0 * f64::from(step),
-                diameter_m: 1.5,
-            };
+            let fire = RoundFire { heat_release_kw: 5.0 * f64::from(step), diameter_m: 1.5 };
             let height_m = heskestad_height_m(fire);
             assert!(height_m.is_finite() && height_m >= last_m);
             last_m = height_m;

@@ -48,10 +48,7 @@ impl Enclosure {
     /// The opening of the room.
     #[must_use]
     pub fn opening(&self) -> WallOpening {
-        WallOpening {
-            area_m2: self.opening_area_m2,
-            height_m: self.opening_height_m,
-        }
+        WallOpening { area_m2: self.opening_area_m2, height_m: self.opening_height_m }
     }
 }
 
@@ -91,17 +88,13 @@ pub fn babrauskas_kw(room: Enclosure) -> f64 {
 #[must_use]
 pub fn babrauskas_limits(room: Enclosure) -> Exceeded {
     no_opening(room)
-        .when(
-            room.opening_height_m > 2.7,
-            "opening higher than those of the test rooms (about 1 to 2 m)",
-        )
+        .when(room.opening_height_m > 2.7, "opening higher than those of the test rooms (about 1 to 2 m)")
         .when(
             room.opening_height_m > 0.0 && room.opening_height_m < 0.3,
             "opening lower than those of the test rooms (about 1 to 2 m)",
         )
         .when(
-            room.opening().factor_m5_2() > 0.0
-                && room.bounding_area_m2 / room.opening().factor_m5_2() > 60.0,
+            room.opening().factor_m5_2() > 0.0 && room.bounding_area_m2 / room.opening().factor_m5_2() > 60.0,
             "surface large beside the opening: the losses that the rule leaves out decide",
         )
 }
@@ -137,8 +130,7 @@ pub fn thomas_kw(room: Enclosure) -> f64 {
     const SURFACE_LOSS_KW_PER_M2: f64 = 7.8;
     const OPENING_LOSS_KW_PER_M5_2: f64 = 378.0;
 
-    SURFACE_LOSS_KW_PER_M2 * room.bounding_area_m2
-        + OPENING_LOSS_KW_PER_M5_2 * room.opening().factor_m5_2()
+    SURFACE_LOSS_KW_PER_M2 * room.bounding_area_m2 + OPENING_LOSS_KW_PER_M5_2 * room.opening().factor_m5_2()
 }
 
 /// What a room exceeds of the range of [`thomas_kw`].
@@ -190,14 +182,8 @@ pub(super) const MCCAFFREY_FLASHOVER: f64 = 610.0;
 #[must_use]
 pub fn mccaffrey_limits(room: Enclosure) -> Exceeded {
     no_opening(room)
-        .when(
-            room.opening_height_m > 2.7,
-            "opening higher than the rooms of the fit (0.3 to 2.7 m)",
-        )
-        .when(
-            room.bounding_area_m2 > 250.0,
-            "surface far larger than in the rooms of the fit",
-        )
+        .when(room.opening_height_m > 2.7, "opening higher than the rooms of the fit (0.3 to 2.7 m)")
+        .when(room.bounding_area_m2 > 250.0, "surface far larger than in the rooms of the fit")
 }
 
 fn no_opening(room: Enclosure) -> Exceeded {
@@ -213,10 +199,7 @@ mod tests {
     use approx::relative_eq;
 
     fn rooms() -> [(Enclosure, f64, [f64; 3], &'static str); 4] {
-        let door = |width_m: f64, height_m: f64| WallOpening {
-            area_m2: width_m * height_m,
-            height_m,
-        };
+        let door = |width_m: f64, height_m: f64| WallOpening { area_m2: width_m * height_m, height_m };
         [
             (
                 Enclosure::of_box(3.0, 3.0, 2.4, door(0.6, 1.8)),
@@ -254,10 +237,7 @@ mod tests {
                 mccaffrey_kw(room, conductance * room.bounding_area_m2),
             ];
             for (got_kw, expected_kw) in got.into_iter().zip(expected) {
-                assert!(
-                    relative_eq!(got_kw, expected_kw, max_relative = 5e-3),
-                    "{origin}: {got_kw}"
-                );
+                assert!(relative_eq!(got_kw, expected_kw, max_relative = 5e-3), "{origin}: {got_kw}");
             }
         }
     }
@@ -269,10 +249,7 @@ mod tests {
         // correlations part by design.
         for (room, conductance, _, origin) in [rooms()[0], rooms()[1], rooms()[3]] {
             let middle_kw = babrauskas_kw(room);
-            for kw in [
-                thomas_kw(room),
-                mccaffrey_kw(room, conductance * room.bounding_area_m2),
-            ] {
+            for kw in [thomas_kw(room), mccaffrey_kw(room, conductance * room.bounding_area_m2)] {
                 assert!((0.6..=1.4).contains(&(kw / middle_kw)), "{origin}: {kw}");
             }
         }
@@ -288,17 +265,9 @@ mod tests {
                 opening_area_m2: 0.9 * height_m,
                 opening_height_m: height_m,
             };
-            let now = [
-                babrauskas_kw(room),
-                thomas_kw(room),
-                mccaffrey_kw(room, 1.2),
-            ];
+            let now = [babrauskas_kw(room), thomas_kw(room), mccaffrey_kw(room, 1.2)];
 
-            assert!(
-                now.iter()
-                    .zip(last)
-                    .all(|(new, old)| new.is_finite() && *new > old)
-            );
+            assert!(now.iter().zip(last).all(|(new, old)| new.is_finite() && *new > old));
             last = now;
         }
     }
@@ -308,42 +277,20 @@ mod tests {
         let room = rooms()[1].0;
         let all_air_kw = crate::fire::ventilation::kawagoe_limit_kw(room.opening());
 
-        assert!(relative_eq!(
-            babrauskas_kw(room) / all_air_kw,
-            0.5,
-            max_relative = 1e-12
-        ));
+        assert!(relative_eq!(babrauskas_kw(room) / all_air_kw, 0.5, max_relative = 1e-12));
     }
 
     #[test]
     fn limits_are_told_on_their_far_side_only() {
         let room = rooms()[1].0;
-        let shut = Enclosure {
-            opening_area_m2: 0.0,
-            opening_height_m: 0.0,
-            ..room
-        };
-        let hall = Enclosure {
-            bounding_area_m2: 400.0,
-            ..room
-        };
-        let tall = Enclosure {
-            opening_height_m: 3.5,
-            ..room
-        };
+        let shut = Enclosure { opening_area_m2: 0.0, opening_height_m: 0.0, ..room };
+        let hall = Enclosure { bounding_area_m2: 400.0, ..room };
+        let tall = Enclosure { opening_height_m: 3.5, ..room };
 
-        for limits in [
-            babrauskas_limits(room),
-            thomas_limits(room),
-            mccaffrey_limits(room),
-        ] {
+        for limits in [babrauskas_limits(room), thomas_limits(room), mccaffrey_limits(room)] {
             assert!(limits.is_empty());
         }
-        for limits in [
-            babrauskas_limits(shut),
-            thomas_limits(shut),
-            mccaffrey_limits(shut),
-        ] {
+        for limits in [babrauskas_limits(shut), thomas_limits(shut), mccaffrey_limits(shut)] {
             assert!(!limits.is_empty());
         }
         assert!(!babrauskas_limits(hall).is_empty() && !thomas_limits(hall).is_empty());

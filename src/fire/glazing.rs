@@ -57,11 +57,7 @@ pub struct Fallout {
 pub fn fallout(glazing: Glazing) -> Option<Fallout> {
     let celsius = |low: f64, typical: f64, high: f64| {
         const ICE: f64 = super::constants::ICE_POINT_K;
-        Some(Fallout {
-            low_k: low + ICE,
-            typical_k: typical + ICE,
-            high_k: high + ICE,
-        })
+        Some(Fallout { low_k: low + ICE, typical_k: typical + ICE, high_k: high + ICE })
     };
     match glazing {
         Glazing::Float3Mm => celsius(290.0, 340.0, 390.0),
@@ -75,9 +71,7 @@ pub fn fallout(glazing: Glazing) -> Option<Fallout> {
 #[must_use]
 pub fn fallout_source(glazing: Glazing) -> &'static Source {
     match glazing {
-        Glazing::Float3Mm | Glazing::Float4To6Mm | Glazing::DoubleGlazed => {
-            &sources::BABRAUSKAS_GLASS_1997
-        }
+        Glazing::Float3Mm | Glazing::Float4To6Mm | Glazing::DoubleGlazed => &sources::BABRAUSKAS_GLASS_1997,
         Glazing::Tempered => &sources::WANG_2014,
         Glazing::Wired | Glazing::FireRated => &sources::EN_1634,
     }
@@ -89,31 +83,21 @@ mod tests {
 
     #[test]
     fn criteria_stand_in_order_and_better_panes_stay_longer() {
-        let panes = [
-            Glazing::Float3Mm,
-            Glazing::Float4To6Mm,
-            Glazing::DoubleGlazed,
-        ]
-        .map(|g| fallout(g).unwrap());
+        let panes =
+            [Glazing::Float3Mm, Glazing::Float4To6Mm, Glazing::DoubleGlazed].map(|g| fallout(g).unwrap());
 
         for pane in panes {
             assert!(pane.low_k < pane.typical_k && pane.typical_k < pane.high_k);
         }
-        assert!(
-            panes
-                .windows(2)
-                .all(|two| two[0].typical_k < two[1].typical_k)
-        );
+        assert!(panes.windows(2).all(|two| two[0].typical_k < two[1].typical_k));
     }
 
     #[test]
     fn typical_temperatures_are_the_published_ones() {
         // Babrauskas, Glass breakage in fires, from memory: 340, 450 and 600 °C.
-        for (glazing, celsius) in [
-            (Glazing::Float3Mm, 340.0),
-            (Glazing::Float4To6Mm, 450.0),
-            (Glazing::DoubleGlazed, 600.0),
-        ] {
+        for (glazing, celsius) in
+            [(Glazing::Float3Mm, 340.0), (Glazing::Float4To6Mm, 450.0), (Glazing::DoubleGlazed, 600.0)]
+        {
             assert!((fallout(glazing).unwrap().typical_k - 273.15 - celsius).abs() < 1e-9);
         }
     }

@@ -139,14 +139,8 @@ pub fn t_squared_time_to_kw_s(growth_kw_s2: f64, heat_release_kw: f64) -> Option
 #[must_use]
 pub fn t_squared_limits(growth_kw_s2: f64) -> Exceeded {
     Exceeded::none()
-        .when(
-            growth_kw_s2 < 0.0027,
-            "growth slower than the slowest class (1055 kW in 600 s)",
-        )
-        .when(
-            growth_kw_s2 > 0.19,
-            "growth faster than the fastest class (1055 kW in 75 s)",
-        )
+        .when(growth_kw_s2 < 0.0027, "growth slower than the slowest class (1055 kW in 600 s)")
+        .when(growth_kw_s2 > 0.19, "growth faster than the fastest class (1055 kW in 75 s)")
 }
 
 #[cfg(test)]
@@ -158,9 +152,8 @@ mod tests {
     fn the_classes_have_the_published_coefficients() {
         // NFPA 204 classes with 1055 kW: published 0.00293, 0.0117, 0.0469, 0.1876; more digits by
         // hand: 1055/t².
-        for (class, expected) in GrowthClass::ALL
-            .into_iter()
-            .zip([0.002_931, 0.011_722, 0.046_889, 0.187_556])
+        for (class, expected) in
+            GrowthClass::ALL.into_iter().zip([0.002_931, 0.011_722, 0.046_889, 0.187_556])
         {
             assert_relative_eq!(class.coefficient_kw_s2(), expected, max_relative = 2e-4);
         }
@@ -172,11 +165,7 @@ mod tests {
         let en = REFERENCE_EN_1991_KW / 150.0_f64.powi(2);
 
         assert_relative_eq!(en, 0.044_44, max_relative = 2e-4);
-        assert_relative_eq!(
-            GrowthClass::Fast.coefficient_kw_s2() / en,
-            1.055,
-            max_relative = 1e-9
-        );
+        assert_relative_eq!(GrowthClass::Fast.coefficient_kw_s2() / en, 1.055, max_relative = 1e-9);
     }
 
     #[test]
@@ -203,11 +192,7 @@ mod tests {
 
     #[test]
     fn the_four_classes_lie_in_range_and_their_neighbours_do_not() {
-        assert!(
-            GrowthClass::ALL
-                .iter()
-                .all(|class| t_squared_limits(class.coefficient_kw_s2()).is_empty())
-        );
+        assert!(GrowthClass::ALL.iter().all(|class| t_squared_limits(class.coefficient_kw_s2()).is_empty()));
         assert!(!t_squared_limits(0.002).is_empty());
         assert!(!t_squared_limits(0.25).is_empty());
     }

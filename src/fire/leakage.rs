@@ -57,9 +57,7 @@ pub fn surface_area_m2(area_m2: f64, leakage_ratio: f64) -> f64 {
 #[must_use]
 pub fn expansion_m3_s(net_heat_release_kw: f64, ambient_temperature_k: f64) -> f64 {
     net_heat_release_kw.max(0.0)
-        / (air_density_kg_m3(ambient_temperature_k)
-            * AIR_SPECIFIC_HEAT_KJ_KGK
-            * ambient_temperature_k)
+        / (air_density_kg_m3(ambient_temperature_k) * AIR_SPECIFIC_HEAT_KJ_KGK * ambient_temperature_k)
 }
 
 /// Overpressure of a leaky shut room with a steady fire, in Pa.
@@ -88,8 +86,7 @@ pub fn expansion_m3_s(net_heat_release_kw: f64, ambient_temperature_k: f64) -> f
 /// ```
 #[must_use]
 pub fn quasi_steady_pressure_pa(vent: PressureInput) -> f64 {
-    let mass_flow_kg_s =
-        vent.net_heat_release_kw / (AIR_SPECIFIC_HEAT_KJ_KGK * vent.ambient_temperature_k);
+    let mass_flow_kg_s = vent.net_heat_release_kw / (AIR_SPECIFIC_HEAT_KJ_KGK * vent.ambient_temperature_k);
     let flux = mass_flow_kg_s / (vent.discharge_coefficient * vent.leakage_area_m2);
     flux * flux / (2.0 * air_density_kg_m3(vent.ambient_temperature_k))
 }
@@ -181,11 +178,7 @@ mod tests {
         assert_eq!(expansion_m3_s(-10.0, 293.0), 0.0);
     }
 
-    fn vent(
-        net_heat_release_kw: f64,
-        leakage_area_m2: f64,
-        discharge_coefficient: f64,
-    ) -> PressureInput {
+    fn vent(net_heat_release_kw: f64, leakage_area_m2: f64, discharge_coefficient: f64) -> PressureInput {
         PressureInput {
             net_heat_release_kw,
             leakage_area_m2,
@@ -198,16 +191,8 @@ mod tests {
     fn the_pressure_is_that_of_the_closed_form() {
         // Derived: 100 kW, 0.01 m², C_d 0.6: 1329.5 Pa. Karlsson and Quintiere, worked: 500 kW,
         // 0.02 m², C_d 1: 3.0 kPa.
-        assert_relative_eq!(
-            quasi_steady_pressure_pa(vent(100.0, 0.01, 0.6)),
-            1329.51,
-            max_relative = 1e-3
-        );
-        assert_relative_eq!(
-            quasi_steady_pressure_pa(vent(500.0, 0.02, 1.0)),
-            3000.0,
-            max_relative = 0.01
-        );
+        assert_relative_eq!(quasi_steady_pressure_pa(vent(100.0, 0.01, 0.6)), 1329.51, max_relative = 1e-3);
+        assert_relative_eq!(quasi_steady_pressure_pa(vent(500.0, 0.02, 1.0)), 3000.0, max_relative = 0.01);
     }
 
     #[test]
@@ -236,11 +221,7 @@ mod tests {
             ambient_temperature_k: 293.0,
         };
 
-        assert_relative_eq!(
-            buoyant_exchange_kg_s(room),
-            1.8651 * 0.65 / 0.6,
-            max_relative = 1e-3
-        );
+        assert_relative_eq!(buoyant_exchange_kg_s(room), 1.8651 * 0.65 / 0.6, max_relative = 1e-3);
     }
 
     #[test]

@@ -58,9 +58,7 @@ impl Surface {
 #[must_use]
 pub fn penetration_time_s(surface: &Surface) -> f64 {
     let half_m = 0.5 * surface.thickness_m;
-    surface.density_kg_m3 * surface.specific_heat_j_kgk / surface.conductivity_w_mk
-        * half_m
-        * half_m
+    surface.density_kg_m3 * surface.specific_heat_j_kgk / surface.conductivity_w_mk * half_m * half_m
 }
 
 /// Effective conductance of a lining a time after the fire began, in kW/(m² K).
@@ -99,21 +97,14 @@ pub fn conductance_kw_m2k(surface: &Surface, time_s: f64) -> f64 {
 /// which is this sum.
 #[must_use]
 pub fn total_conductance_kw_k(surfaces: &[Surface], time_s: f64) -> f64 {
-    surfaces
-        .iter()
-        .map(|s| conductance_kw_m2k(s, time_s) * s.area_m2)
-        .sum()
+    surfaces.iter().map(|s| conductance_kw_m2k(s, time_s) * s.area_m2).sum()
 }
 
 /// Conductance weighted by area, in kW/(m² K); zero without surfaces.
 #[must_use]
 pub fn mean_conductance_kw_m2k(surfaces: &[Surface], time_s: f64) -> f64 {
     let area_m2 = total_area_m2(surfaces);
-    if area_m2 > 0.0 {
-        total_conductance_kw_k(surfaces, time_s) / area_m2
-    } else {
-        0.0
-    }
+    if area_m2 > 0.0 { total_conductance_kw_k(surfaces, time_s) / area_m2 } else { 0.0 }
 }
 
 /// Area of all surfaces, m².
@@ -176,13 +167,7 @@ mod tests {
         specific_heat_j_kgk: f64,
         thickness_m: f64,
     ) -> Surface {
-        Surface {
-            area_m2: 10.0,
-            conductivity_w_mk,
-            density_kg_m3,
-            specific_heat_j_kgk,
-            thickness_m,
-        }
+        Surface { area_m2: 10.0, conductivity_w_mk, density_kg_m3, specific_heat_j_kgk, thickness_m }
     }
 
     #[test]
@@ -193,16 +178,8 @@ mod tests {
             (lining(0.17, 790.0, 900.0, 0.0159), 600.0, 264.3, 0.010_69),
             (lining(1.0, 2000.0, 880.0, 0.15), 600.0, 9900.0, 0.054_16),
         ] {
-            assert_relative_eq!(
-                penetration_time_s(&surface),
-                penetration_s,
-                max_relative = 5e-4
-            );
-            assert_relative_eq!(
-                conductance_kw_m2k(&surface, time_s),
-                conductance,
-                max_relative = 5e-4
-            );
+            assert_relative_eq!(penetration_time_s(&surface), penetration_s, max_relative = 5e-4);
+            assert_relative_eq!(conductance_kw_m2k(&surface, time_s), conductance, max_relative = 5e-4);
         }
     }
 
@@ -232,10 +209,7 @@ mod tests {
     #[test]
     fn several_linings_are_weighted_by_area() {
         let board = lining(0.17, 790.0, 900.0, 0.0159);
-        let concrete = Surface {
-            area_m2: 30.0,
-            ..lining(1.0, 2000.0, 880.0, 0.15)
-        };
+        let concrete = Surface { area_m2: 30.0, ..lining(1.0, 2000.0, 880.0, 0.15) };
         let mean = mean_conductance_kw_m2k(&[board, concrete], 600.0);
 
         // By hand: (10·0.010692 + 30·0.054160)/40 = 0.043293.

@@ -179,14 +179,8 @@ pub fn thomas_large_fire_kg_s(perimeter_m: f64, height_m: f64) -> f64 {
 #[must_use]
 pub fn thomas_large_fire_limits(perimeter_m: f64, height_m: f64) -> Exceeded {
     Exceeded::none()
-        .when(
-            height_m > 2.5 * perimeter_m,
-            "higher above the fire than 2.5 perimeters",
-        )
-        .when(
-            !(0.9..=14.0).contains(&perimeter_m),
-            "perimeter outside 0.9 to 14 m",
-        )
+        .when(height_m > 2.5 * perimeter_m, "higher above the fire than 2.5 perimeters")
+        .when(!(0.9..=14.0).contains(&perimeter_m), "perimeter outside 0.9 to 14 m")
 }
 
 /// State on the axis of a plume, by McCaffrey.
@@ -228,17 +222,9 @@ pub struct McCaffreyPlume {
 /// assert!((plume.rise_k - 420.0).abs() < 1.0 && (plume.velocity_m_s - 4.77).abs() < 0.01);
 /// ```
 #[must_use]
-pub fn mccaffrey(
-    heat_release_kw: f64,
-    height_m: f64,
-    ambient_temperature_k: f64,
-) -> McCaffreyPlume {
+pub fn mccaffrey(heat_release_kw: f64, height_m: f64, ambient_temperature_k: f64) -> McCaffreyPlume {
     if heat_release_kw <= 0.0 || height_m <= 0.0 {
-        return McCaffreyPlume {
-            rise_k: 0.0,
-            velocity_m_s: 0.0,
-            mass_flow_kg_s: 0.0,
-        };
+        return McCaffreyPlume { rise_k: 0.0, velocity_m_s: 0.0, mass_flow_kg_s: 0.0 };
     }
     let x = height_m / heat_release_kw.powf(0.4);
     let (kappa, eta, a, b) = if x < 0.08 {
@@ -263,13 +249,7 @@ mod tests {
     use std::f64::consts::PI;
 
     fn fire(heat_release_kw: f64, diameter_m: f64) -> PlumeFire {
-        PlumeFire {
-            fire: RoundFire {
-                heat_release_kw,
-                diameter_m,
-            },
-            convective_share: 0.7,
-        }
+        PlumeFire { fire: RoundFire { heat_release_kw, diameter_m }, convective_share: 0.7 }
     }
 
     #[test]
@@ -281,11 +261,7 @@ mod tests {
         assert_relative_eq!(nfpa92_kg_s(700.0, 6.0), 13.749, max_relative = 5e-3);
         assert_relative_eq!(zukoski_kg_s(1000.0, 6.0), 14.066, max_relative = 5e-3);
         assert_relative_eq!(thomas_large_fire_kg_s(PI, 6.0), 8.68, max_relative = 5e-3);
-        assert_relative_eq!(
-            heskestad_axis_rise_k(plume, 6.0).unwrap(),
-            108.2,
-            max_relative = 5e-3
-        );
+        assert_relative_eq!(heskestad_axis_rise_k(plume, 6.0).unwrap(), 108.2, max_relative = 5e-3);
     }
 
     #[test]
@@ -296,11 +272,7 @@ mod tests {
         assert_relative_eq!(heskestad_kg_s(plume, 1.5), 0.963, max_relative = 5e-3);
         assert_relative_eq!(nfpa92_kg_s(175.0, 1.5), 1.096, max_relative = 5e-3);
         assert_relative_eq!(zukoski_kg_s(250.0, 1.5), 0.879, max_relative = 5e-3);
-        assert_relative_eq!(
-            thomas_large_fire_kg_s(PI * 0.6, 1.5),
-            0.651,
-            max_relative = 5e-3
-        );
+        assert_relative_eq!(thomas_large_fire_kg_s(PI * 0.6, 1.5), 0.651, max_relative = 5e-3);
         assert_eq!(heskestad_axis_rise_k(plume, 1.5), None);
     }
 
@@ -311,21 +283,15 @@ mod tests {
         let convective_kw = 4550.0 * 1.055_056;
         let expected_kg_s = 291.727 * 0.453_592_37;
 
-        assert_relative_eq!(
-            nfpa92_kg_s(convective_kw, 53.0 * 0.3048),
-            expected_kg_s,
-            max_relative = 0.02
-        );
+        assert_relative_eq!(nfpa92_kg_s(convective_kw, 53.0 * 0.3048), expected_kg_s, max_relative = 0.02);
     }
 
     #[test]
     fn mccaffrey_s_three_regions_are_what_others_worked_out() {
         // By hand: 100 kW at 0.4, 1 and 2 m over 293 K.
-        for (height_m, rise_k, velocity_m_s, mass_flow_kg_s) in [
-            (0.4, 852.5, 4.301, 0.231),
-            (1.0, 419.9, 4.773, 0.487),
-            (2.0, 151.4, 4.052, 1.406),
-        ] {
+        for (height_m, rise_k, velocity_m_s, mass_flow_kg_s) in
+            [(0.4, 852.5, 4.301, 0.231), (1.0, 419.9, 4.773, 0.487), (2.0, 151.4, 4.052, 1.406)]
+        {
             let got = mccaffrey(100.0, height_m, 293.0);
 
             assert_relative_eq!(got.rise_k, rise_k, max_relative = 5e-3);
@@ -342,11 +308,7 @@ mod tests {
             let above = mccaffrey(100.0, at_m * (1.0 + 1e-9), 293.0);
 
             assert_relative_eq!(below.rise_k, above.rise_k, max_relative = 0.05);
-            assert_relative_eq!(
-                below.mass_flow_kg_s,
-                above.mass_flow_kg_s,
-                max_relative = 0.05
-            );
+            assert_relative_eq!(below.mass_flow_kg_s, above.mass_flow_kg_s, max_relative = 0.05);
         }
     }
 
@@ -356,10 +318,7 @@ mod tests {
         for height_m in [4.0, 6.0, 8.0, 12.0] {
             let middle = heskestad_kg_s(fire(1000.0, 1.0), height_m);
             for rival in [nfpa92_kg_s(700.0, height_m), zukoski_kg_s(1000.0, height_m)] {
-                assert!(
-                    (rival / middle - 1.0).abs() < 0.34,
-                    "{height_m}: {rival} {middle}"
-                );
+                assert!((rival / middle - 1.0).abs() < 0.34, "{height_m}: {rival} {middle}");
             }
         }
     }
@@ -368,8 +327,7 @@ mod tests {
     fn mccaffrey_draws_in_more_than_the_others_the_higher_the_more() {
         // Its last region goes with z^1.895, theirs with z^(5/3).
         let ratio = |height_m| {
-            mccaffrey(1000.0, height_m, 293.0).mass_flow_kg_s
-                / heskestad_kg_s(fire(1000.0, 1.0), height_m)
+            mccaffrey(1000.0, height_m, 293.0).mass_flow_kg_s / heskestad_kg_s(fire(1000.0, 1.0), height_m)
         };
 
         assert!(ratio(4.0) > 1.0 && ratio(6.0) > ratio(4.0) && ratio(12.0) > ratio(6.0));

@@ -27,17 +27,12 @@ use super::constants::STEFAN_BOLTZMANN_KW_M2K4;
 /// ```
 #[must_use]
 pub fn point_source_kw_m2(heat_release_kw: f64, radiative_fraction: f64, distance_m: f64) -> f64 {
-    radiative_fraction * heat_release_kw.max(0.0)
-        / (4.0 * std::f64::consts::PI * distance_m * distance_m)
+    radiative_fraction * heat_release_kw.max(0.0) / (4.0 * std::f64::consts::PI * distance_m * distance_m)
 }
 
 /// Heat release that gives a flux at a distance, in kW: [`point_source_kw_m2`] turned round.
 #[must_use]
-pub fn point_source_heat_release_kw(
-    flux_kw_m2: f64,
-    radiative_fraction: f64,
-    distance_m: f64,
-) -> f64 {
+pub fn point_source_heat_release_kw(flux_kw_m2: f64, radiative_fraction: f64, distance_m: f64) -> f64 {
     4.0 * std::f64::consts::PI * distance_m * distance_m * flux_kw_m2 / radiative_fraction
 }
 
@@ -110,9 +105,7 @@ pub fn layer_flux_kw_m2(layer: HotLayer) -> f64 {
 #[must_use]
 pub fn layer_temperature_for_flux_k(layer: HotLayer, flux_kw_m2: f64) -> f64 {
     let seen = layer.view_factor * layer.emissivity * STEFAN_BOLTZMANN_KW_M2K4;
-    (flux_kw_m2 / seen + layer.surface_temperature_k.powi(4))
-        .sqrt()
-        .sqrt()
+    (flux_kw_m2 / seen + layer.surface_temperature_k.powi(4)).sqrt().sqrt()
 }
 
 /// Share of the sky that a rectangle overhead fills, seen from the point below its middle.
@@ -161,11 +154,7 @@ mod tests {
         // hundredth at 10 ft.
         let near = point_source_kw_m2(1000.0, 0.35, 1.0);
         for (times, share) in [(2.0, 0.25), (4.0, 0.0625), (10.0, 0.01)] {
-            assert_relative_eq!(
-                point_source_kw_m2(1000.0, 0.35, times) / near,
-                share,
-                max_relative = 1e-12
-            );
+            assert_relative_eq!(point_source_kw_m2(1000.0, 0.35, times) / near, share, max_relative = 1e-12);
         }
     }
 
@@ -173,30 +162,17 @@ mod tests {
     fn flux_and_heat_release_are_each_other_s_inverse() {
         let heat_kw = point_source_heat_release_kw(20.0, 0.35, 1.7);
 
-        assert_relative_eq!(
-            point_source_kw_m2(heat_kw, 0.35, 1.7),
-            20.0,
-            max_relative = 1e-12
-        );
+        assert_relative_eq!(point_source_kw_m2(heat_kw, 0.35, 1.7), 20.0, max_relative = 1e-12);
     }
 
     fn layer(temperature_k: f64) -> HotLayer {
-        HotLayer {
-            temperature_k,
-            emissivity: 0.7,
-            view_factor: 1.0,
-            surface_temperature_k: 523.0,
-        }
+        HotLayer { temperature_k, emissivity: 0.7, view_factor: 1.0, surface_temperature_k: 523.0 }
     }
 
     #[test]
     fn a_grey_surface_gives_the_printed_flux() {
         // Korean qualification question of 2020: ε 0.7, 400 and 250 °C, 5172.66 W/m², with σ 5.67e-8 and 273 K.
-        assert_relative_eq!(
-            layer_flux_kw_m2(layer(673.0)),
-            5.172_66,
-            max_relative = 2e-4
-        );
+        assert_relative_eq!(layer_flux_kw_m2(layer(673.0)), 5.172_66, max_relative = 2e-4);
     }
 
     #[test]
@@ -244,8 +220,6 @@ mod tests {
 
     #[test]
     fn near_the_flame_is_told() {
-        assert!(
-            point_source_limits(1.5, 1.0).is_empty() && !point_source_limits(1.2, 1.0).is_empty()
-        );
+        assert!(point_source_limits(1.5, 1.0).is_empty() && !point_source_limits(1.2, 1.0).is_empty());
     }
 }

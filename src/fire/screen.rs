@@ -86,10 +86,7 @@ impl Screen {
     /// Lowest and highest heat release asked for by the correlations in range, kW; by all three where none is.
     #[must_use]
     pub fn required_span_kw(&self) -> (f64, f64) {
-        let any_in_range = self
-            .requirements()
-            .iter()
-            .any(|(_, r)| r.exceeded.is_empty());
+        let any_in_range = self.requirements().iter().any(|(_, r)| r.exceeded.is_empty());
         self.requirements()
             .iter()
             .filter(|(_, r)| !any_in_range || r.exceeded.is_empty())
@@ -116,27 +113,16 @@ pub fn flashover_screen(input: &ScreenInput<'_>) -> Result<Screen, NotConverged>
     let fire = input.fire.capped_kw(ventilation_limit_kw);
     let phases = fire.phases();
     let available_kw = phases.reached_kw;
-    let limited_by = if ventilation_limit_kw < fuel_limit_kw {
-        LimitedBy::Ventilation
-    } else {
-        LimitedBy::Fuel
-    };
+    let limited_by =
+        if ventilation_limit_kw < fuel_limit_kw { LimitedBy::Ventilation } else { LimitedBy::Fuel };
 
     let conductance_kw_k = total_conductance_kw_k(input.surfaces, phases.decay_start_s);
-    let growing = GrowingVented {
-        fire,
-        opening,
-        surfaces: input.surfaces,
-        position_factor: input.position_factor,
-    };
+    let growing =
+        GrowingVented { fire, opening, surfaces: input.surfaces, position_factor: input.position_factor };
 
     let babrauskas_kw = flashover::babrauskas_kw(room);
     let thomas_kw = flashover::thomas_kw(room);
-    let vented = Vented {
-        heat_release_kw: available_kw,
-        opening,
-        conductance_kw_k,
-    };
+    let vented = Vented { heat_release_kw: available_kw, opening, conductance_kw_k };
     let hot_layer_rise_k = input.position_factor * hot_layer::mccaffrey_rise_k(vented);
     let open = ventilation_limit_kw > 0.0;
     Ok(Screen {
@@ -151,11 +137,7 @@ pub fn flashover_screen(input: &ScreenInput<'_>) -> Result<Screen, NotConverged>
             exceeded: flashover::thomas_limits(room),
         },
         mccaffrey: Requirement {
-            required_kw: if open {
-                flashover::mccaffrey_kw(room, conductance_kw_k)
-            } else {
-                0.0
-            },
+            required_kw: if open { flashover::mccaffrey_kw(room, conductance_kw_k) } else { 0.0 },
             time_s: hot_layer::mccaffrey_time_to_flashover_s(&growing)?,
             exceeded: flashover::mccaffrey_limits(room),
         },
@@ -193,21 +175,13 @@ mod tests {
         ScreenInput {
             enclosure: Enclosure::of_box(3.66, 3.66, 2.44, opening),
             surfaces,
-            fire: DesignFire {
-                growth_kw_s2: 0.0469,
-                peak_kw,
-                energy_kj: 4e6,
-                decay_from_share: 0.7,
-            },
+            fire: DesignFire { growth_kw_s2: 0.0469, peak_kw, energy_kj: 4e6, decay_from_share: 0.7 },
             position_factor: 1.0,
             ambient_temperature_k: 293.15,
         }
     }
 
-    const DOOR: WallOpening = WallOpening {
-        area_m2: 1.8,
-        height_m: 2.0,
-    };
+    const DOOR: WallOpening = WallOpening { area_m2: 1.8, height_m: 2.0 };
 
     #[test]
     fn one_room_is_screened_as_worked_by_hand() {
@@ -217,19 +191,12 @@ mod tests {
         let screen = flashover_screen(&input(&[BOARD], DOOR, 3000.0)).unwrap();
 
         assert_relative_eq!(screen.babrauskas.required_kw, 1909.2, max_relative = 1e-4);
-        assert_relative_eq!(
-            screen.babrauskas.time_s.unwrap(),
-            201.8,
-            max_relative = 1e-3
-        );
+        assert_relative_eq!(screen.babrauskas.time_s.unwrap(), 201.8, max_relative = 1e-3);
         assert_relative_eq!(screen.thomas.required_kw, 1435.8, max_relative = 1e-4);
         assert_relative_eq!(screen.thomas.time_s.unwrap(), 175.0, max_relative = 1e-3);
         assert_relative_eq!(screen.mccaffrey.required_kw, 784.1, max_relative = 1e-4);
         assert_relative_eq!(screen.ventilation_limit_kw, 3818.4, max_relative = 1e-4);
-        assert_eq!(
-            (screen.available_kw, screen.limited_by),
-            (3000.0, LimitedBy::Fuel)
-        );
+        assert_eq!((screen.available_kw, screen.limited_by), (3000.0, LimitedBy::Fuel));
 
         // At that time Q² = 610² √(kρc/t) A √H A_T: 0.0469² t^4.5 = 372 100·√0.12087·154.55 gives t = 163.3 s.
         assert_relative_eq!(screen.mccaffrey.time_s.unwrap(), 163.3, max_relative = 1e-3);
@@ -237,10 +204,7 @@ mod tests {
 
     #[test]
     fn air_cuts_the_fire_and_says_so() {
-        let slit = WallOpening {
-            area_m2: 0.4,
-            height_m: 2.0,
-        };
+        let slit = WallOpening { area_m2: 0.4, height_m: 2.0 };
         let screen = flashover_screen(&input(&[BOARD], slit, 3000.0)).unwrap();
 
         // By hand: 1500·0.4·√2 = 848.5 kW.
@@ -270,10 +234,7 @@ mod tests {
         hall.enclosure.bounding_area_m2 = 120.0;
         let hall = flashover_screen(&hall).unwrap();
         assert!(!hall.thomas.exceeded.is_empty());
-        assert!(
-            hall.required_span_kw().1
-                == hall.babrauskas.required_kw.max(hall.mccaffrey.required_kw)
-        );
+        assert!(hall.required_span_kw().1 == hall.babrauskas.required_kw.max(hall.mccaffrey.required_kw));
     }
 
     #[test]

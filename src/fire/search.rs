@@ -31,14 +31,7 @@ pub(super) fn first_time_s(
         }
     }
     // An interval so long that its ends are further apart than the tolerance in the last bit.
-    if to_s - from_s <= 1e-9 * to_s {
-        Ok(to_s)
-    } else {
-        Err(NotConverged {
-            what,
-            after: MAX_STEPS,
-        })
-    }
+    if to_s - from_s <= 1e-9 * to_s { Ok(to_s) } else { Err(NotConverged { what, after: MAX_STEPS }) }
 }
 
 #[cfg(test)]
@@ -50,10 +43,7 @@ mod tests {
         for moment_s in [0.3, 17.0, 5000.0, 7.2e6] {
             let found_s = first_time_s("test", 0.0, 1e7, |time_s| time_s >= moment_s).unwrap();
 
-            assert!(
-                (0.0..=0.01).contains(&(found_s - moment_s)),
-                "{moment_s} {found_s}"
-            );
+            assert!((0.0..=0.01).contains(&(found_s - moment_s)), "{moment_s} {found_s}");
         }
     }
 
@@ -61,12 +51,6 @@ mod tests {
     fn an_end_that_is_not_finite_is_told_and_not_looped_over() {
         let answer = first_time_s("test", 0.0, f64::INFINITY, |_| true);
 
-        assert_eq!(
-            answer,
-            Err(NotConverged {
-                what: "test",
-                after: 0
-            })
-        );
+        assert_eq!(answer, Err(NotConverged { what: "test", after: 0 }));
     }
 }

@@ -46,9 +46,8 @@ const ENTRAINED_VOLUME: f64 = 0.064;
 /// ```
 #[must_use]
 pub fn zukoski_height_m(room: FillingRoom, cube_root_integral_kw13_s: f64) -> f64 {
-    let filled =
-        2.0 * ENTRAINED_VOLUME * room.height_m.powf(2.0 / 3.0) * cube_root_integral_kw13_s.max(0.0)
-            / (3.0 * room.floor_area_m2);
+    let filled = 2.0 * ENTRAINED_VOLUME * room.height_m.powf(2.0 / 3.0) * cube_root_integral_kw13_s.max(0.0)
+        / (3.0 * room.floor_area_m2);
     room.height_m * (1.0 + filled).powf(-1.5)
 }
 
@@ -105,12 +104,9 @@ pub fn zukoski_time_to_height_s(
     if growing <= phases.growth_end_s {
         return Ok(Some(growing));
     }
-    super::search::first_time_s(
-        "time for the layer to come down",
-        0.0,
-        phases.end_s,
-        |time_s| cube_root_integral_kw13_s(fire, time_s) >= needed,
-    )
+    super::search::first_time_s("time for the layer to come down", 0.0, phases.end_s, |time_s| {
+        cube_root_integral_kw13_s(fire, time_s) >= needed
+    })
     .map(Some)
 }
 
@@ -120,14 +116,8 @@ pub fn zukoski_time_to_height_s(
 pub fn zukoski_limits(room: FillingRoom) -> Exceeded {
     let shape = room.floor_area_m2 / (room.height_m * room.height_m);
     Exceeded::none()
-        .when(
-            shape < 0.4,
-            "a shaft: the plume meets the walls before the ceiling",
-        )
-        .when(
-            shape > 100.0,
-            "so wide that the smoke cools and mixes before it has spread",
-        )
+        .when(shape < 0.4, "a shaft: the plume meets the walls before the ceiling")
+        .when(shape > 100.0, "so wide that the smoke cools and mixes before it has spread")
 }
 
 /// First smoke above the floor under a steady fire, in m, by NFPA 92. Not below zero nor above the ceiling.
@@ -197,14 +187,8 @@ pub fn nfpa92_t_squared_height_m(room: FillingRoom, growth_time_s: f64, time_s: 
 pub fn nfpa92_steady_limits(room: FillingRoom, layer_height_m: f64) -> Exceeded {
     let shape = room.floor_area_m2 / (room.height_m * room.height_m);
     Exceeded::none()
-        .when(
-            !(0.9..=14.0).contains(&shape),
-            "floor area over height squared outside 0.9 to 14",
-        )
-        .when(
-            layer_height_m < 0.2 * room.height_m,
-            "layer lower than a fifth of the height",
-        )
+        .when(!(0.9..=14.0).contains(&shape), "floor area over height squared outside 0.9 to 14")
+        .when(layer_height_m < 0.2 * room.height_m, "layer lower than a fifth of the height")
 }
 
 /// What a state exceeds of the range of [`nfpa92_t_squared_height_m`]: `A/H²` 1 to 23, `z/H` at least 0.2.
@@ -212,14 +196,8 @@ pub fn nfpa92_steady_limits(room: FillingRoom, layer_height_m: f64) -> Exceeded 
 pub fn nfpa92_t_squared_limits(room: FillingRoom, layer_height_m: f64) -> Exceeded {
     let shape = room.floor_area_m2 / (room.height_m * room.height_m);
     Exceeded::none()
-        .when(
-            !(1.0..=23.0).contains(&shape),
-            "floor area over height squared outside 1 to 23",
-        )
-        .when(
-            layer_height_m < 0.2 * room.height_m,
-            "layer lower than a fifth of the height",
-        )
+        .when(!(1.0..=23.0).contains(&shape), "floor area over height squared outside 1 to 23")
+        .when(layer_height_m < 0.2 * room.height_m, "layer lower than a fifth of the height")
 }
 
 #[cfg(test)]
@@ -227,78 +205,40 @@ mod tests {
     use super::*;
     use approx::assert_relative_eq;
 
-    const HALL: FillingRoom = FillingRoom {
-        floor_area_m2: 100.0,
-        height_m: 6.0,
-    };
-    const BIG: FillingRoom = FillingRoom {
-        floor_area_m2: 400.0,
-        height_m: 10.0,
-    };
+    const HALL: FillingRoom = FillingRoom { floor_area_m2: 100.0, height_m: 6.0 };
+    const BIG: FillingRoom = FillingRoom { floor_area_m2: 400.0, height_m: 10.0 };
 
     /// Full at once and for long.
     fn steady(heat_release_kw: f64) -> DesignFire {
-        DesignFire {
-            growth_kw_s2: 1e12,
-            peak_kw: heat_release_kw,
-            energy_kj: 1e9,
-            decay_from_share: 0.7,
-        }
+        DesignFire { growth_kw_s2: 1e12, peak_kw: heat_release_kw, energy_kj: 1e9, decay_from_share: 0.7 }
     }
 
     #[test]
     fn two_steady_halls_fill_as_others_worked_out() {
         // By hand with k_v = 0.064: 41.7 s to 3 m, 94.2 s to 5 m.
-        for (room, heat_kw, height_m, expected_s) in
-            [(HALL, 1000.0, 3.0, 41.7), (BIG, 2000.0, 5.0, 94.2)]
-        {
-            let time_s = zukoski_time_to_height_s(room, &steady(heat_kw), height_m)
-                .unwrap()
-                .unwrap();
+        for (room, heat_kw, height_m, expected_s) in [(HALL, 1000.0, 3.0, 41.7), (BIG, 2000.0, 5.0, 94.2)] {
+            let time_s = zukoski_time_to_height_s(room, &steady(heat_kw), height_m).unwrap().unwrap();
             assert_relative_eq!(time_s, expected_s, max_relative = 5e-3);
         }
         // By hand: 26.8 s and 60.4 s for the first smoke.
-        assert_relative_eq!(
-            nfpa92_steady_height_m(HALL, 1000.0, 26.8),
-            3.0,
-            max_relative = 5e-3
-        );
-        assert_relative_eq!(
-            nfpa92_steady_height_m(BIG, 2000.0, 60.4),
-            5.0,
-            max_relative = 5e-3
-        );
+        assert_relative_eq!(nfpa92_steady_height_m(HALL, 1000.0, 26.8), 3.0, max_relative = 5e-3);
+        assert_relative_eq!(nfpa92_steady_height_m(BIG, 2000.0, 60.4), 5.0, max_relative = 5e-3);
     }
 
     #[test]
     fn the_layer_meets_the_closed_form_with_the_other_constant() {
         // Zukoski (1978) without dimensions, k = 0.21, leak at the ceiling: 50 m², 4 m, 300 kW
         // after 60 s: 1.5807 m. 0.21 stands for k_v = 0.0635, hence 1 %.
-        let room = FillingRoom {
-            floor_area_m2: 50.0,
-            height_m: 4.0,
-        };
+        let room = FillingRoom { floor_area_m2: 50.0, height_m: 4.0 };
 
-        assert_relative_eq!(
-            zukoski_height_m(room, 300.0_f64.cbrt() * 60.0),
-            1.5807,
-            max_relative = 0.01
-        );
-        assert_relative_eq!(
-            zukoski_height_m(HALL, 10.0 * 40.0),
-            3.0819,
-            max_relative = 0.01
-        );
+        assert_relative_eq!(zukoski_height_m(room, 300.0_f64.cbrt() * 60.0), 1.5807, max_relative = 0.01);
+        assert_relative_eq!(zukoski_height_m(HALL, 10.0 * 40.0), 3.0819, max_relative = 0.01);
     }
 
     #[test]
     fn the_integral_of_the_cube_root_is_that_of_the_curve() {
-        let fire = DesignFire {
-            growth_kw_s2: 0.05,
-            peak_kw: 800.0,
-            energy_kj: 250_000.0,
-            decay_from_share: 0.6,
-        };
+        let fire =
+            DesignFire { growth_kw_s2: 0.05, peak_kw: 800.0, energy_kj: 250_000.0, decay_from_share: 0.6 };
         let end_s = 1.1 * fire.duration_s();
         let step_s = end_s / 40_000.0;
         let mut sum = 0.0;
@@ -306,36 +246,23 @@ mod tests {
             sum += fire.heat_release_kw((f64::from(i) + 0.5) * step_s).cbrt() * step_s;
             if i % 4000 == 3999 {
                 let time_s = f64::from(i + 1) * step_s;
-                assert_relative_eq!(
-                    cube_root_integral_kw13_s(&fire, time_s),
-                    sum,
-                    max_relative = 1e-3
-                );
+                assert_relative_eq!(cube_root_integral_kw13_s(&fire, time_s), sum, max_relative = 1e-3);
             }
         }
     }
 
     #[test]
     fn time_and_height_are_each_other_s_inverse_for_a_growing_fire() {
-        let fire = DesignFire {
-            growth_kw_s2: 0.0117,
-            peak_kw: 600.0,
-            energy_kj: 300_000.0,
-            decay_from_share: 0.7,
-        };
+        let fire =
+            DesignFire { growth_kw_s2: 0.0117, peak_kw: 600.0, energy_kj: 300_000.0, decay_from_share: 0.7 };
         for height_m in [5.5, 4.0, 3.0, 2.0, 1.0] {
-            let time_s = zukoski_time_to_height_s(HALL, &fire, height_m)
-                .unwrap()
-                .unwrap();
+            let time_s = zukoski_time_to_height_s(HALL, &fire, height_m).unwrap().unwrap();
             let back_m = zukoski_height_m(HALL, cube_root_integral_kw13_s(&fire, time_s));
             assert!((back_m - height_m).abs() < 0.005, "{height_m}: {back_m}");
         }
         assert_eq!(zukoski_time_to_height_s(HALL, &fire, 6.0), Ok(Some(0.0)));
         assert_eq!(zukoski_time_to_height_s(HALL, &fire, 0.0), Ok(None));
-        let spark = DesignFire {
-            energy_kj: 10.0,
-            ..fire
-        };
+        let spark = DesignFire { energy_kj: 10.0, ..fire };
         assert_eq!(zukoski_time_to_height_s(BIG, &spark, 2.0), Ok(None));
     }
 
@@ -344,9 +271,7 @@ mod tests {
         // 26.8 of 41.7 s and 60.4 of 94.2 s: 0.64 both times; the source says about 35 % sooner.
         for (room, heat_kw) in [(HALL, 1000.0_f64), (BIG, 2000.0)] {
             let half_m = 0.5 * room.height_m;
-            let mean_s = zukoski_time_to_height_s(room, &steady(heat_kw), half_m)
-                .unwrap()
-                .unwrap();
+            let mean_s = zukoski_time_to_height_s(room, &steady(heat_kw), half_m).unwrap().unwrap();
             let first_s = (1..4000)
                 .map(|i| 0.05 * f64::from(i))
                 .find(|&at_s| nfpa92_steady_height_m(room, heat_kw, at_s) <= half_m);
@@ -364,11 +289,7 @@ mod tests {
                 nfpa92_steady_height_m(HALL, 1000.0, time_s),
                 nfpa92_t_squared_height_m(HALL, 150.0, time_s),
             ];
-            assert!(
-                now.iter()
-                    .zip(last)
-                    .all(|(new, old)| new.is_finite() && *new <= old && *new >= 0.0)
-            );
+            assert!(now.iter().zip(last).all(|(new, old)| new.is_finite() && *new <= old && *new >= 0.0));
             last = now;
         }
         assert_eq!(nfpa92_steady_height_m(HALL, 0.0, 10.0), HALL.height_m);
@@ -377,19 +298,12 @@ mod tests {
 
     #[test]
     fn limits_are_told() {
-        let shaft = FillingRoom {
-            floor_area_m2: 4.0,
-            height_m: 12.0,
-        };
+        let shaft = FillingRoom { floor_area_m2: 4.0, height_m: 12.0 };
 
         assert!(zukoski_limits(HALL).is_empty() && !zukoski_limits(shaft).is_empty());
+        assert!(nfpa92_steady_limits(HALL, 3.0).is_empty() && !nfpa92_steady_limits(HALL, 1.0).is_empty());
         assert!(
-            nfpa92_steady_limits(HALL, 3.0).is_empty()
-                && !nfpa92_steady_limits(HALL, 1.0).is_empty()
-        );
-        assert!(
-            nfpa92_t_squared_limits(HALL, 3.0).is_empty()
-                && !nfpa92_t_squared_limits(shaft, 6.0).is_empty()
+            nfpa92_t_squared_limits(HALL, 3.0).is_empty() && !nfpa92_t_squared_limits(shaft, 6.0).is_empty()
         );
     }
 }

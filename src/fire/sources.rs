@@ -126,7 +126,7 @@ pub const FSRI_2018: Source = Source {
 pub const FOOTE_1986: Source = Source {
     key: "foote_1986",
     citation: "Foote, K. L., Pagni, P. J., Alvares, N. J.: Temperature correlations for forced-ventilated compartment fires, Fire Safety Science 1 (1986) 139-148",
-    locator: "ΔT/T = 0.63 (…)^0.72 (…)^-0.36; pages uncertain",
+    locator: "ΔT/T = 0.63 (…)^0.72 (…)^-0.36; page numbers uncertain",
     provenance: Provenance::Memory,
 };
 
@@ -141,7 +141,7 @@ pub const DEAL_BEYLER_1990: Source = Source {
 /// Closed room.
 pub const BEYLER_1991: Source = Source {
     key: "beyler_1991",
-    citation: "Beyler, C. L.: Analysis of compartment fires with overhead forced ventilation, Fire Safety Science 3 (1991) 291-300, and Fire Safety Journal 16 (1991) 441, as the SFPE Handbook gives it",
+    citation: "Beyler, C. L., Fire Safety Journal 16 (1991) 441, as the SFPE Handbook gives it for closed compartments",
     locator: "closed compartment, steady fire; A_T put back into K1",
     provenance: Provenance::Memory,
 };
@@ -457,32 +457,18 @@ mod tests {
     #[test]
     fn keys_are_unique_and_nothing_is_left_out() {
         for (i, source) in ALL.iter().enumerate() {
-            assert!(
-                ALL[..i].iter().all(|earlier| earlier.key != source.key),
-                "{}",
-                source.key
-            );
+            assert!(ALL[..i].iter().all(|earlier| earlier.key != source.key), "{}", source.key);
             assert!(!source.citation.is_empty() && !source.locator.is_empty());
-            assert_eq!(
-                find(source.key).map(|found| found.citation),
-                Some(source.citation)
-            );
+            assert_eq!(find(source.key).map(|found| found.citation), Some(source.citation));
         }
         assert!(find("nobody").is_none());
     }
 
     #[test]
     fn what_says_that_a_value_is_recalled_is_not_called_seen() {
-        for source in ALL
-            .iter()
-            .filter(|source| source.locator.ends_with("from memory"))
-        {
+        for source in ALL.iter().filter(|source| source.locator.ends_with("from memory")) {
             let also_seen = source.locator.contains("seen");
-            assert!(
-                source.provenance == Provenance::Memory || also_seen,
-                "{}",
-                source.key
-            );
+            assert!(source.provenance == Provenance::Memory || also_seen, "{}", source.key);
         }
     }
 }

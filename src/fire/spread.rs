@@ -80,29 +80,17 @@ pub fn ignition_s(fire: &DesignFire, item: Neighbour) -> Option<f64> {
 mod tests {
     use super::*;
 
-    const FIRE: DesignFire = DesignFire {
-        growth_kw_s2: 0.0469,
-        peak_kw: 1500.0,
-        energy_kj: 6e5,
-        decay_from_share: 0.7,
-    };
+    const FIRE: DesignFire =
+        DesignFire { growth_kw_s2: 0.0469, peak_kw: 1500.0, energy_kj: 6e5, decay_from_share: 0.7 };
 
     fn at(distance_m: f64, ignitability: Ignitability) -> Neighbour {
-        Neighbour {
-            distance_m,
-            radiative_fraction: 0.35,
-            ignitability,
-        }
+        Neighbour { distance_m, radiative_fraction: 0.35, ignitability }
     }
 
     #[test]
     fn the_further_and_the_harder_the_later() {
         let mut last_s = 0.0;
-        for ignitability in [
-            Ignitability::Easy,
-            Ignitability::Normal,
-            Ignitability::Difficult,
-        ] {
+        for ignitability in [Ignitability::Easy, Ignitability::Normal, Ignitability::Difficult] {
             let time_s = ignition_s(&FIRE, at(0.9, ignitability)).unwrap();
             assert!(time_s > last_s);
             last_s = time_s;

@@ -50,14 +50,8 @@ pub fn evans_kw(spray: Spray) -> f64 {
 #[must_use]
 pub fn evans_limits(spray: Spray) -> Exceeded {
     Exceeded::none()
-        .when(
-            spray.density_mm_s < 0.06,
-            "less water than the 0.06 mm/s of the tests",
-        )
-        .when(
-            spray.heat_release_kw > 5000.0,
-            "larger when the sprinkler opens than the fires of the tests",
-        )
+        .when(spray.density_mm_s < 0.06, "less water than the 0.06 mm/s of the tests")
+        .when(spray.heat_release_kw > 5000.0, "larger when the sprinkler opens than the fires of the tests")
 }
 
 #[cfg(test)]
@@ -65,11 +59,7 @@ mod tests {
     use super::*;
     use approx::assert_relative_eq;
 
-    const SPRAY: Spray = Spray {
-        heat_release_kw: 1000.0,
-        since_activation_s: 300.0,
-        density_mm_s: 0.07,
-    };
+    const SPRAY: Spray = Spray { heat_release_kw: 1000.0, since_activation_s: 300.0, density_mm_s: 0.07 };
 
     #[test]
     fn the_decay_is_the_one_worked_by_hand() {
@@ -81,52 +71,19 @@ mod tests {
     #[test]
     fn more_water_and_more_time_leave_less_heat() {
         for step in 1..60 {
-            let earlier = Spray {
-                since_activation_s: 10.0 * f64::from(step),
-                ..SPRAY
-            };
-            let later = Spray {
-                since_activation_s: earlier.since_activation_s + 10.0,
-                ..SPRAY
-            };
-            let wetter = Spray {
-                density_mm_s: 0.1,
-                ..earlier
-            };
+            let earlier = Spray { since_activation_s: 10.0 * f64::from(step), ..SPRAY };
+            let later = Spray { since_activation_s: earlier.since_activation_s + 10.0, ..SPRAY };
+            let wetter = Spray { density_mm_s: 0.1, ..earlier };
             assert!(evans_kw(later) < evans_kw(earlier) && evans_kw(wetter) < evans_kw(earlier));
             assert!(evans_kw(later) > 0.0);
         }
-        assert_eq!(
-            evans_kw(Spray {
-                density_mm_s: 0.0,
-                ..SPRAY
-            }),
-            1000.0
-        );
-        assert_eq!(
-            evans_kw(Spray {
-                since_activation_s: -5.0,
-                ..SPRAY
-            }),
-            1000.0
-        );
+        assert_eq!(evans_kw(Spray { density_mm_s: 0.0, ..SPRAY }), 1000.0);
+        assert_eq!(evans_kw(Spray { since_activation_s: -5.0, ..SPRAY }), 1000.0);
     }
 
     #[test]
     fn both_sides_of_the_least_water_are_told() {
-        assert!(
-            evans_limits(Spray {
-                density_mm_s: 0.06,
-                ..SPRAY
-            })
-            .is_empty()
-        );
-        assert!(
-            !evans_limits(Spray {
-                density_mm_s: 0.059,
-                ..SPRAY
-            })
-            .is_empty()
-        );
+        assert!(evans_limits(Spray { density_mm_s: 0.06, ..SPRAY }).is_empty());
+        assert!(!evans_limits(Spray { density_mm_s: 0.059, ..SPRAY }).is_empty());
     }
 }

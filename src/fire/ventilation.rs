@@ -46,14 +46,11 @@ impl WallOpening {
 /// ```
 #[must_use]
 pub fn combine(openings: impl IntoIterator<Item = WallOpening>) -> WallOpening {
-    let (area_m2, moment_m3) = openings.into_iter().fold((0.0, 0.0), |(area, moment), o| {
-        (area + o.area_m2, moment + o.area_m2 * o.height_m)
-    });
+    let (area_m2, moment_m3) = openings
+        .into_iter()
+        .fold((0.0, 0.0), |(area, moment), o| (area + o.area_m2, moment + o.area_m2 * o.height_m));
     if area_m2 > 0.0 {
-        WallOpening {
-            area_m2,
-            height_m: moment_m3 / area_m2,
-        }
+        WallOpening { area_m2, height_m: moment_m3 / area_m2 }
     } else {
         WallOpening::default()
     }
@@ -121,10 +118,7 @@ pub fn kawagoe_limits(opening: WallOpening) -> Exceeded {
             opening.factor_m5_2() <= 0.0,
             "no wall opening: the limit is zero and the oxygen in the room counts instead",
         )
-        .when(
-            opening.height_m > 4.0,
-            "opening higher than about 4 m: the room is hardly well mixed",
-        )
+        .when(opening.height_m > 4.0, "opening higher than about 4 m: the room is hardly well mixed")
 }
 
 /// Gas and air on either side of an opening, for [`rockett_inflow_kg_s`].
@@ -188,67 +182,34 @@ mod tests {
     #[test]
     fn the_orifice_form_gives_what_others_worked_out() {
         for (width_m, height_m, gas_temperature_k, expected_kg_s, origin) in [
-            (
-                0.9,
-                2.0,
-                873.0,
-                1.3566,
-                "by hand with ρ = 353/T: well-mixed door",
-            ),
-            (
-                2.0,
-                1.5,
-                1273.0,
-                1.8805,
-                "by hand with ρ = 353/T: well-mixed window",
-            ),
+            (0.9, 2.0, 873.0, 1.3566, "by hand with ρ = 353/T: well-mixed door"),
+            (2.0, 1.5, 1273.0, 1.8805, "by hand with ρ = 353/T: well-mixed window"),
         ] {
-            let opening = WallOpening {
-                area_m2: width_m * height_m,
-                height_m,
-            };
-            let gas = WellMixed {
-                gas_temperature_k,
-                ambient_temperature_k: 293.0,
-                discharge_coefficient: 0.7,
-            };
+            let opening = WallOpening { area_m2: width_m * height_m, height_m };
+            let gas =
+                WellMixed { gas_temperature_k, ambient_temperature_k: 293.0, discharge_coefficient: 0.7 };
             let got_kg_s = rockett_inflow_kg_s(opening, gas);
 
-            assert!(
-                relative_eq!(got_kg_s, expected_kg_s, max_relative = 0.002),
-                "{origin}: {got_kg_s}"
-            );
+            assert!(relative_eq!(got_kg_s, expected_kg_s, max_relative = 0.002), "{origin}: {got_kg_s}");
         }
     }
 
     #[test]
     fn kawagoe_and_the_orifice_agree_within_the_published_span_in_hot_rooms() {
         // Published coefficients 0.40 to 0.61 about 0.5.
-        let door = WallOpening {
-            area_m2: 1.8,
-            height_m: 2.0,
-        };
+        let door = WallOpening { area_m2: 1.8, height_m: 2.0 };
         for gas_temperature_k in [600.0, 800.0, 1000.0, 1200.0, 1500.0] {
-            let gas = WellMixed {
-                gas_temperature_k,
-                ambient_temperature_k: 293.0,
-                discharge_coefficient: 0.7,
-            };
+            let gas =
+                WellMixed { gas_temperature_k, ambient_temperature_k: 293.0, discharge_coefficient: 0.7 };
             let coefficient = rockett_inflow_kg_s(door, gas) / door.factor_m5_2();
 
-            assert!(
-                (0.40..=0.61).contains(&coefficient),
-                "{gas_temperature_k}: {coefficient}"
-            );
+            assert!((0.40..=0.61).contains(&coefficient), "{gas_temperature_k}: {coefficient}");
         }
     }
 
     #[test]
     fn a_cold_room_draws_nothing_and_a_warm_one_something() {
-        let door = WallOpening {
-            area_m2: 1.8,
-            height_m: 2.0,
-        };
+        let door = WallOpening { area_m2: 1.8, height_m: 2.0 };
         let gas = |gas_temperature_k| WellMixed {
             gas_temperature_k,
             ambient_temperature_k: 293.0,
@@ -261,19 +222,12 @@ mod tests {
 
     #[test]
     fn equal_openings_combine_to_one_with_their_height() {
-        let window = WallOpening {
-            area_m2: 1.2,
-            height_m: 1.1,
-        };
+        let window = WallOpening { area_m2: 1.2, height_m: 1.1 };
         let three = combine([window; 3]);
 
         assert!(relative_eq!(three.area_m2, 3.6, max_relative = 1e-12));
         assert!(relative_eq!(three.height_m, 1.1, max_relative = 1e-12));
-        assert!(relative_eq!(
-            three.factor_m5_2(),
-            3.0 * window.factor_m5_2(),
-            max_relative = 1e-12
-        ));
+        assert!(relative_eq!(three.factor_m5_2(), 3.0 * window.factor_m5_2(), max_relative = 1e-12));
     }
 
     #[test]
@@ -289,10 +243,7 @@ mod tests {
         let mut last_kw = 0.0;
         for step in 1..200 {
             let height_m = 0.02 * f64::from(step);
-            let limit_kw = kawagoe_limit_kw(WallOpening {
-                area_m2: 0.9 * height_m,
-                height_m,
-            });
+            let limit_kw = kawagoe_limit_kw(WallOpening { area_m2: 0.9 * height_m, height_m });
 
             assert!(limit_kw.is_finite() && limit_kw > last_kw);
             last_kw = limit_kw;

@@ -33,15 +33,7 @@ fn burns() -> Vec<Burn> {
 }
 
 fn room() -> Enclosure {
-    Enclosure::of_box(
-        3.66,
-        3.66,
-        2.44,
-        WallOpening {
-            area_m2: 1.8,
-            height_m: 2.0,
-        },
-    )
+    Enclosure::of_box(3.66, 3.66, 2.44, WallOpening { area_m2: 1.8, height_m: 2.0 })
 }
 
 /// The board is not stated: both ends of gypsum products, thin and thick.
@@ -67,9 +59,7 @@ fn mccaffrey_span_kw(time_s: f64) -> (f64, f64) {
     linings()
         .iter()
         .map(|lining| mccaffrey_kw(room(), total_conductance_kw_k(&[*lining], time_s)))
-        .fold((f64::INFINITY, 0.0), |(low, high), kw| {
-            (low.min(kw), high.max(kw))
-        })
+        .fold((f64::INFINITY, 0.0), |(low, high), kw| (low.min(kw), high.max(kw)))
 }
 
 /// When the burn that never got there is judged: the mean time of those that did.
@@ -122,23 +112,11 @@ fn heat_release_at_600_c_is_met_within_the_published_scatter() {
         };
         let (low_kw, high_kw) = mccaffrey_span_kw(burn.reaches_600_c_s.unwrap());
 
-        assert!(
-            SCATTER.contains(&(babrauskas_kw(room()) / measured_kw)),
-            "{}",
-            burn.name
-        );
-        assert!(
-            SCATTER.contains(&(thomas_kw(room()) / measured_kw)),
-            "{}",
-            burn.name
-        );
+        assert!(SCATTER.contains(&(babrauskas_kw(room()) / measured_kw)), "{}", burn.name);
+        assert!(SCATTER.contains(&(thomas_kw(room()) / measured_kw)), "{}", burn.name);
         // The lining is unknown: what some gypsum board would give must meet the measurement within
         // the scatter.
-        assert!(
-            low_kw / measured_kw <= 1.4 && high_kw / measured_kw >= 0.6,
-            "{}",
-            burn.name
-        );
+        assert!(low_kw / measured_kw <= 1.4 && high_kw / measured_kw >= 0.6, "{}", burn.name);
     }
 }
 
@@ -150,11 +128,7 @@ fn a_wrong_yes_or_no_lies_within_the_scatter_of_the_correlation() {
 
         for (verdict, required_kw) in verdicts(&burn).into_iter().zip(required) {
             let right = verdict == if measured { Verdict::Yes } else { Verdict::No };
-            assert!(
-                right || SCATTER.contains(&(burn.peak_kw / required_kw)),
-                "{}",
-                burn.name
-            );
+            assert!(right || SCATTER.contains(&(burn.peak_kw / required_kw)), "{}", burn.name);
         }
     }
 }
@@ -166,28 +140,18 @@ fn each_correlation_is_right_about_most_burns() {
         let right = burns()
             .iter()
             .filter(|burn| {
-                let expected = if burn.at_600_c_kw.is_some() {
-                    Verdict::Yes
-                } else {
-                    Verdict::No
-                };
+                let expected = if burn.at_600_c_kw.is_some() { Verdict::Yes } else { Verdict::No };
                 verdicts(burn)[correlation] == expected
             })
             .count();
 
-        assert!(
-            right > burns().len() / 2,
-            "correlation {correlation}: {right}"
-        );
+        assert!(right > burns().len() / 2, "correlation {correlation}: {right}");
     }
 }
 
 #[test]
 fn one_burn_never_got_there_and_counts_as_a_no() {
-    let never: Vec<_> = burns()
-        .into_iter()
-        .filter(|burn| burn.at_600_c_kw.is_none())
-        .collect();
+    let never: Vec<_> = burns().into_iter().filter(|burn| burn.at_600_c_kw.is_none()).collect();
 
     assert_eq!(never.len(), 1);
     assert!(burns().len() == 8 && never[0].name == "RedAccent_Open_Corner_3");
@@ -213,10 +177,9 @@ pub fn table() -> String {
                 low / measured,
                 high / measured,
             ),
-            None => format!(
-                "| {} | never | {babrauskas:.0} | {thomas:.0} | {low:.0} to {high:.0} |\n",
-                burn.name
-            ),
+            None => {
+                format!("| {} | never | {babrauskas:.0} | {thomas:.0} | {low:.0} to {high:.0} |\n", burn.name)
+            }
         };
         text.push_str(&line);
     }
@@ -228,10 +191,7 @@ pub fn table() -> String {
         let measured = burn.at_600_c_kw.is_some();
         let [b, t, m] = verdicts(&burn).map(|verdict| verdict.beside(measured));
         let said = if measured { "yes" } else { "no" };
-        text.push_str(&format!(
-            "| {} | {:.0} | {said} | {b} | {t} | {m} |\n",
-            burn.name, burn.peak_kw
-        ));
+        text.push_str(&format!("| {} | {:.0} | {said} | {b} | {t} | {m} |\n", burn.name, burn.peak_kw));
     }
     text
 }

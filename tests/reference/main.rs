@@ -39,12 +39,6 @@ fn the_table_in_screening_md_is_what_the_code_computes() {
 
 /// Rows of a CSV file of this folder whose source stands in lines with `#`.
 fn rows(text: &'static str) -> impl Iterator<Item = csv::StringRecord> {
-    let mut reader = csv::ReaderBuilder::new()
-        .comment(Some(b'#'))
-        .from_reader(text.as_bytes());
-    reader
-        .records()
-        .map(Result::unwrap)
-        .collect::<Vec<_>>()
-        .into_iter()
+    let mut reader = csv::ReaderBuilder::new().comment(Some(b'#')).from_reader(text.as_bytes());
+    reader.records().map(Result::unwrap).collect::<Vec<_>>().into_iter()
 }

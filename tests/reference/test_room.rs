@@ -13,15 +13,7 @@ const MARK_KW: f64 = 1000.0;
 const SCATTER: std::ops::RangeInclusive<f64> = 0.6..=1.4;
 
 fn room() -> Enclosure {
-    Enclosure::of_box(
-        3.6,
-        2.4,
-        2.4,
-        WallOpening {
-            area_m2: 1.6,
-            height_m: 2.0,
-        },
-    )
+    Enclosure::of_box(3.6, 2.4, 2.4, WallOpening { area_m2: 1.6, height_m: 2.0 })
 }
 
 /// Gypsum plaster of 16 mm (Drysdale, from memory) after 600 s, when the burner is turned up.
@@ -47,8 +39,7 @@ fn board() -> Surface {
 }
 
 fn rows() -> [(&'static str, f64); 4] {
-    let mccaffrey =
-        |lining: Surface| mccaffrey_kw(room(), total_conductance_kw_k(&[lining], 600.0));
+    let mccaffrey = |lining: Surface| mccaffrey_kw(room(), total_conductance_kw_k(&[lining], 600.0));
     [
         ("Babrauskas", babrauskas_kw(room())),
         ("Thomas", thomas_kw(room())),
@@ -86,9 +77,7 @@ pub fn table() -> String {
     for (name, required_kw) in rows() {
         let ratio = required_kw / MARK_KW;
         let miss = if SCATTER.contains(&ratio) { "" } else { "miss" };
-        text.push_str(&format!(
-            "| {name} | {required_kw:.0} | {ratio:.2} | {miss} |\n"
-        ));
+        text.push_str(&format!("| {name} | {required_kw:.0} | {ratio:.2} | {miss} |\n"));
     }
     text
 }

@@ -57,11 +57,7 @@ pub fn beyler_closed_rise_k(room: Closed) -> f64 {
     let k2 = room.heat_release_kw.max(0.0) / capacity_kj_k;
     let x = k1 * room.time_s.max(0.0).sqrt();
     // x - 1 + e^(-x) loses all digits for a small x: e^(-x) - 1 is what `exp_m1` keeps.
-    if k1 > 0.0 {
-        2.0 * k2 / (k1 * k1) * (x + (-x).exp_m1())
-    } else {
-        k2 * room.time_s.max(0.0)
-    }
+    if k1 > 0.0 { 2.0 * k2 / (k1 * k1) * (x + (-x).exp_m1()) } else { k2 * room.time_s.max(0.0) }
 }
 
 /// What a state exceeds of the range of [`beyler_closed_rise_k`]: shut but leaky enough not to build up
@@ -74,10 +70,7 @@ pub fn beyler_closed_limits(room: Closed, rise_k: f64) -> Exceeded {
             released_kj > usable_heat_kj(room.air_mass_kg, LIMIT_AT_AMBIENT),
             "more heat than the oxygen of the shut room yields",
         )
-        .when(
-            rise_k > 150.0,
-            "rise above 150 K, where the lost gas mass begins to matter",
-        )
+        .when(rise_k > 150.0, "rise above 150 K, where the lost gas mass begins to matter")
 }
 
 #[cfg(test)]
@@ -99,22 +92,14 @@ mod tests {
     #[test]
     fn the_closed_rise_is_what_others_worked_out() {
         // By hand, with A_T in K1: 89.3 K.
-        assert_relative_eq!(
-            beyler_closed_rise_k(closed(200.0, 0.113_76)),
-            89.3,
-            max_relative = 5e-3
-        );
+        assert_relative_eq!(beyler_closed_rise_k(closed(200.0, 0.113_76)), 89.3, max_relative = 5e-3);
     }
 
     #[test]
     fn the_closed_rise_has_both_ends_right() {
         // Early: all heat in the gas, Q t/(m c_p). Late: the loss decides, Q √t / (0.4 √(kρc) A_T).
         let early = closed(0.01, 0.113_76);
-        assert_relative_eq!(
-            beyler_closed_rise_k(early),
-            100.0 * 0.01 / 72.0,
-            max_relative = 0.03
-        );
+        assert_relative_eq!(beyler_closed_rise_k(early), 100.0 * 0.01 / 72.0, max_relative = 0.03);
         let late = closed(1e8, 0.113_76);
         let steady_k = 100.0 * 1e4 / (0.4 * 0.113_76_f64.sqrt() * 94.0);
         assert_relative_eq!(beyler_closed_rise_k(late), steady_k, max_relative = 0.01);

@@ -64,10 +64,7 @@ pub fn foote_pagni_alvares_rise_k(room: Forced) -> f64 {
 #[must_use]
 pub fn foote_pagni_alvares_limits(room: Forced, rise_k: f64) -> Exceeded {
     Exceeded::none()
-        .when(
-            room.mass_flow_kg_s <= 0.0,
-            "no forced flow: the closed-room form counts instead",
-        )
+        .when(room.mass_flow_kg_s <= 0.0, "no forced flow: the closed-room form counts instead")
         .when(
             !(150.0..=490.0).contains(&room.heat_release_kw),
             "heat release outside the 150 to 490 kW of the tests",
@@ -76,10 +73,7 @@ pub fn foote_pagni_alvares_limits(room: Forced, rise_k: f64) -> Exceeded {
             !(0.11..=0.325).contains(&room.mass_flow_kg_s),
             "air flow outside the 0.11 to 0.325 kg/s of the tests",
         )
-        .when(
-            rise_k > 300.0,
-            "layer hotter than the 100 to 300 °C of the tests",
-        )
+        .when(rise_k > 300.0, "layer hotter than the 100 to 300 °C of the tests")
 }
 
 /// Rise of the layer in a fan-driven room, in K, by Deal and Beyler.
@@ -104,17 +98,13 @@ pub fn foote_pagni_alvares_limits(room: Forced, rise_k: f64) -> Exceeded {
 /// ```
 #[must_use]
 pub fn deal_beyler_rise_k(room: Forced) -> f64 {
-    room.heat_release_kw.max(0.0)
-        / (room.mass_flow_kg_s * room.specific_heat_kj_kgk + room.conductance_kw_k)
+    room.heat_release_kw.max(0.0) / (room.mass_flow_kg_s * room.specific_heat_kj_kgk + room.conductance_kw_k)
 }
 
 /// What a time exceeds of the range of [`deal_beyler_rise_k`].
 #[must_use]
 pub fn deal_beyler_limits(time_s: f64) -> Exceeded {
-    Exceeded::none().when(
-        time_s > 2000.0,
-        "later than about 2000 s, the end of the fitted tests",
-    )
+    Exceeded::none().when(time_s > 2000.0, "later than about 2000 s, the end of the fitted tests")
 }
 
 #[cfg(test)]
@@ -160,18 +150,9 @@ mod tests {
     fn more_air_cools_and_more_heat_warms_a_forced_room() {
         for step in 1..100 {
             let flow = 0.05 * f64::from(step);
-            let less = Forced {
-                mass_flow_kg_s: flow,
-                ..forced(4.0)
-            };
-            let more = Forced {
-                mass_flow_kg_s: flow + 0.05,
-                ..forced(4.0)
-            };
-            let hotter = Forced {
-                heat_release_kw: 1200.0,
-                ..less
-            };
+            let less = Forced { mass_flow_kg_s: flow, ..forced(4.0) };
+            let more = Forced { mass_flow_kg_s: flow + 0.05, ..forced(4.0) };
+            let hotter = Forced { heat_release_kw: 1200.0, ..less };
             for rise in [foote_pagni_alvares_rise_k, deal_beyler_rise_k] {
                 assert!(rise(more) < rise(less) && rise(hotter) > rise(less));
             }

@@ -61,16 +61,10 @@ const MCCAFFREY_RISE: f64 = 6.85;
 #[must_use]
 pub fn mccaffrey_limits(room: Vented, rise_k: f64) -> Exceeded {
     Exceeded::none()
-        .when(
-            room.opening.factor_m5_2() <= 0.0,
-            "no wall opening: the correlation does not hold",
-        )
+        .when(room.opening.factor_m5_2() <= 0.0, "no wall opening: the correlation does not hold")
         .when(rise_k > 600.0, "rise above 600 K, the highest of the fit")
         .when(rise_k < 20.0, "rise below 20 K, the lowest of the fit")
-        .when(
-            room.opening.height_m > 2.7,
-            "opening higher than the rooms of the fit (0.3 to 2.7 m)",
-        )
+        .when(room.opening.height_m > 2.7, "opening higher than the rooms of the fit (0.3 to 2.7 m)")
 }
 
 /// Where the fire stands in the room.
@@ -146,17 +140,10 @@ pub struct GrowingVented<'a> {
 /// # Errors
 ///
 /// [`NotConverged`] where a number handed in is not finite.
-pub fn mccaffrey_time_to_rise_s(
-    room: &GrowingVented<'_>,
-    rise_k: f64,
-) -> Result<Option<f64>, NotConverged> {
+pub fn mccaffrey_time_to_rise_s(room: &GrowingVented<'_>, rise_k: f64) -> Result<Option<f64>, NotConverged> {
     // ΔT ≥ rise  ⇔  Q² ≥ (rise / (6.85 f))³ · A√H · Σ h_k A: no power in the loop.
     let per_factor_k = rise_k / (MCCAFFREY_RISE * room.position_factor);
-    first_time_over_loss_s(
-        "time at which the hot layer has risen",
-        room,
-        per_factor_k.powi(3),
-    )
+    first_time_over_loss_s("time at which the hot layer has risen", room, per_factor_k.powi(3))
 }
 
 /// First time at which a growing fire has the heat release that
@@ -167,9 +154,7 @@ pub fn mccaffrey_time_to_rise_s(
 /// # Errors
 ///
 /// [`NotConverged`] where a number handed in is not finite.
-pub fn mccaffrey_time_to_flashover_s(
-    room: &GrowingVented<'_>,
-) -> Result<Option<f64>, NotConverged> {
+pub fn mccaffrey_time_to_flashover_s(room: &GrowingVented<'_>) -> Result<Option<f64>, NotConverged> {
     let coefficient = flashover::MCCAFFREY_FLASHOVER * flashover::MCCAFFREY_FLASHOVER;
     first_time_over_loss_s("time to flashover by McCaffrey", room, coefficient)
 }
@@ -189,8 +174,7 @@ fn first_time_over_loss_s(
     }
     let reached = |time_s: f64| {
         let heat_kw = phases.heat_release_kw(room.fire.growth_kw_s2, time_s);
-        heat_kw * heat_kw
-            >= coefficient * factor_m5_2 * total_conductance_kw_k(room.surfaces, time_s)
+        heat_kw * heat_kw >= coefficient * factor_m5_2 * total_conductance_kw_k(room.surfaces, time_s)
     };
     if reached(phases.decay_start_s) {
         return search::first_time_s(what, 0.0, phases.decay_start_s, reached).map(Some);
@@ -220,10 +204,7 @@ mod tests {
     fn vented(heat_release_kw: f64, width_m: f64, height_m: f64, conductance_kw_k: f64) -> Vented {
         Vented {
             heat_release_kw,
-            opening: WallOpening {
-                area_m2: width_m * height_m,
-                height_m,
-            },
+            opening: WallOpening { area_m2: width_m * height_m, height_m },
             conductance_kw_k,
         }
     }
@@ -231,27 +212,12 @@ mod tests {
     #[test]
     fn the_vented_rise_is_what_others_worked_out() {
         for (room, expected_k, origin) in [
-            (
-                vented(300.0, 0.8, 2.0, 0.03 * 44.48),
-                212.39,
-                "by hand: plaster room, 300 kW",
-            ),
-            (
-                vented(500.0, 0.9, 2.0, 0.010_692 * 60.713),
-                365.0,
-                "by hand: board room, 500 kW",
-            ),
-            (
-                vented(1000.0, 2.0, 1.2, 0.054_16 * 105.6),
-                277.53,
-                "by hand: concrete room, 1000 kW",
-            ),
+            (vented(300.0, 0.8, 2.0, 0.03 * 44.48), 212.39, "by hand: plaster room, 300 kW"),
+            (vented(500.0, 0.9, 2.0, 0.010_692 * 60.713), 365.0, "by hand: board room, 500 kW"),
+            (vented(1000.0, 2.0, 1.2, 0.054_16 * 105.6), 277.53, "by hand: concrete room, 1000 kW"),
         ] {
             let got_k = mccaffrey_rise_k(room);
-            assert!(
-                relative_eq!(got_k, expected_k, max_relative = 5e-3),
-                "{origin}: {got_k}"
-            );
+            assert!(relative_eq!(got_k, expected_k, max_relative = 5e-3), "{origin}: {got_k}");
         }
     }
 
@@ -271,12 +237,7 @@ mod tests {
     #[test]
     fn flashover_by_610_is_a_rise_of_about_500_k() {
         // (500/6.85)^1.5 = 623.6, printed 610: 1.5 % less rise.
-        let room = vented(
-            610.0 * (1.2 * 0.9 * 2.0_f64.powf(1.5)).sqrt(),
-            0.9,
-            2.0,
-            1.2,
-        );
+        let room = vented(610.0 * (1.2 * 0.9 * 2.0_f64.powf(1.5)).sqrt(), 0.9, 2.0, 1.2);
 
         assert_relative_eq!(mccaffrey_rise_k(room), 492.7, max_relative = 1e-3);
     }
@@ -296,12 +257,8 @@ mod tests {
     fn limits_of_the_vented_rise_lie_at_20_and_600_k() {
         let room = vented(300.0, 0.8, 2.0, 1.3);
 
-        assert!(
-            mccaffrey_limits(room, 20.0).is_empty() && mccaffrey_limits(room, 600.0).is_empty()
-        );
-        assert!(
-            !mccaffrey_limits(room, 19.9).is_empty() && !mccaffrey_limits(room, 600.1).is_empty()
-        );
+        assert!(mccaffrey_limits(room, 20.0).is_empty() && mccaffrey_limits(room, 600.0).is_empty());
+        assert!(!mccaffrey_limits(room, 19.9).is_empty() && !mccaffrey_limits(room, 600.1).is_empty());
     }
 
     #[test]
@@ -326,16 +283,8 @@ mod tests {
         // t = kρc/h² = 0.12087/0.000370826 = 325.9 s. But the board is warmed through after 264.3
         // s, when h falls below: 264.3 s.
         let mut room = GrowingVented {
-            fire: DesignFire {
-                growth_kw_s2: 1e6,
-                peak_kw: 500.0,
-                energy_kj: 1e6,
-                decay_from_share: 0.7,
-            },
-            opening: WallOpening {
-                area_m2: 1.8,
-                height_m: 2.0,
-            },
+            fire: DesignFire { growth_kw_s2: 1e6, peak_kw: 500.0, energy_kj: 1e6, decay_from_share: 0.7 },
+            opening: WallOpening { area_m2: 1.8, height_m: 2.0 },
             surfaces: &[BOARD],
             position_factor: 1.0,
         };
@@ -357,18 +306,11 @@ mod tests {
         // Steady until 125 000 kJ / 500 kW = 250 s, then down over 2·65 840/500 = 263 s. The board
         // is warmed through at 264.3 s with 473 kW left: the rise falls from 250 s on and then
         // jumps by 2^(1/3), above all it was.
-        let fire = DesignFire {
-            growth_kw_s2: 1e6,
-            peak_kw: 500.0,
-            energy_kj: 190_840.0,
-            decay_from_share: 0.655,
-        };
+        let fire =
+            DesignFire { growth_kw_s2: 1e6, peak_kw: 500.0, energy_kj: 190_840.0, decay_from_share: 0.655 };
         let room = GrowingVented {
             fire,
-            opening: WallOpening {
-                area_m2: 1.8,
-                height_m: 2.0,
-            },
+            opening: WallOpening { area_m2: 1.8, height_m: 2.0 },
             surfaces: &[BOARD],
             position_factor: 1.0,
         };
@@ -399,10 +341,7 @@ mod tests {
                 energy_kj: f64::INFINITY,
                 decay_from_share: 0.7,
             },
-            opening: WallOpening {
-                area_m2: 1.8,
-                height_m: 2.0,
-            },
+            opening: WallOpening { area_m2: 1.8, height_m: 2.0 },
             surfaces: &[BOARD],
             position_factor: 1.0,
         };

@@ -4,9 +4,7 @@ mod shut_room;
 
 pub use shut_room::{ShutBurn, ShutRoom, ShutState, burn_shut, burn_shut_limits};
 
-use super::constants::{
-    HEAT_PER_OXYGEN_KJ_KG, OXYGEN_IN_AIR_MASS_FRACTION, OXYGEN_IN_AIR_MOLE_FRACTION,
-};
+use super::constants::{HEAT_PER_OXYGEN_KJ_KG, OXYGEN_IN_AIR_MASS_FRACTION, OXYGEN_IN_AIR_MOLE_FRACTION};
 use super::design_fire::DesignFire;
 
 /// Mass fraction of oxygen at which a flame in cold surroundings goes out: about 13.5 % by volume.
@@ -24,20 +22,12 @@ pub struct LimitingOxygen {
 
 impl LimitingOxygen {
     /// 0.15 and 1700 K.
-    pub const TYPICAL: Self = Self {
-        at_ambient_mass_fraction: LIMIT_AT_AMBIENT,
-        flame_temperature_k: 1700.0,
-    };
+    pub const TYPICAL: Self =
+        Self { at_ambient_mass_fraction: LIMIT_AT_AMBIENT, flame_temperature_k: 1700.0 };
     /// Flames go out early: 0.16 and 1800 K.
-    pub const EARLY: Self = Self {
-        at_ambient_mass_fraction: 0.16,
-        flame_temperature_k: 1800.0,
-    };
+    pub const EARLY: Self = Self { at_ambient_mass_fraction: 0.16, flame_temperature_k: 1800.0 };
     /// Flames go out late: 0.13 and 1600 K.
-    pub const LATE: Self = Self {
-        at_ambient_mass_fraction: 0.13,
-        flame_temperature_k: 1600.0,
-    };
+    pub const LATE: Self = Self { at_ambient_mass_fraction: 0.13, flame_temperature_k: 1600.0 };
 }
 
 /// Mass fraction of oxygen below which a flame goes out.
@@ -91,9 +81,7 @@ pub fn extinction_mass_fraction(limit: LimitingOxygen, temperature_k: f64) -> f6
 /// ```
 #[must_use]
 pub fn usable_heat_kj(air_mass_kg: f64, limit_mass_fraction: f64) -> f64 {
-    air_mass_kg
-        * (OXYGEN_IN_AIR_MASS_FRACTION - limit_mass_fraction).max(0.0)
-        * HEAT_PER_OXYGEN_KJ_KG
+    air_mass_kg * (OXYGEN_IN_AIR_MASS_FRACTION - limit_mass_fraction).max(0.0) * HEAT_PER_OXYGEN_KJ_KG
 }
 
 /// Mass fraction of oxygen in air or smoke from its mole fraction, with the mean molar mass of air.
@@ -165,21 +153,11 @@ mod tests {
     use approx::{assert_relative_eq, relative_eq};
 
     fn t_squared(growth_kw_s2: f64) -> DesignFire {
-        DesignFire {
-            growth_kw_s2,
-            peak_kw: 1e6,
-            energy_kj: 1e7,
-            decay_from_share: 0.7,
-        }
+        DesignFire { growth_kw_s2, peak_kw: 1e6, energy_kj: 1e7, decay_from_share: 0.7 }
     }
 
     fn steady(heat_release_kw: f64) -> DesignFire {
-        DesignFire {
-            growth_kw_s2: 1e9,
-            peak_kw: heat_release_kw,
-            energy_kj: 1e8,
-            decay_from_share: 0.7,
-        }
+        DesignFire { growth_kw_s2: 1e9, peak_kw: heat_release_kw, energy_kj: 1e8, decay_from_share: 0.7 }
     }
 
     #[test]
@@ -189,14 +167,8 @@ mod tests {
             let got = extinction_mass_fraction(LimitingOxygen::TYPICAL, temperature_k);
             assert_relative_eq!(got, expected, max_relative = 5e-3);
         }
-        assert_eq!(
-            extinction_mass_fraction(LimitingOxygen::TYPICAL, 1800.0),
-            0.0
-        );
-        assert_eq!(
-            extinction_mass_fraction(LimitingOxygen::TYPICAL, 250.0),
-            0.15
-        );
+        assert_eq!(extinction_mass_fraction(LimitingOxygen::TYPICAL, 1800.0), 0.0);
+        assert_eq!(extinction_mass_fraction(LimitingOxygen::TYPICAL, 250.0), 0.15);
     }
 
     #[test]
@@ -226,16 +198,10 @@ mod tests {
             let mass_kg = volume_m3 * air_density_kg_m3(293.15);
             let limit = mass_from_mole_fraction(mole_fraction);
             let heat_kj = usable_heat_kj(mass_kg, limit);
-            assert!(
-                relative_eq!(heat_kj / 1000.0, heat_mj, max_relative = 0.015),
-                "{volume_m3}: {heat_kj}"
-            );
+            assert!(relative_eq!(heat_kj / 1000.0, heat_mj, max_relative = 0.015), "{volume_m3}: {heat_kj}");
             for (growth, expected_s) in [(0.0117, medium_s), (0.0469, fast_s)] {
                 let got_s = budget_time_s(&t_squared(growth), mass_kg, 0.0, limit).unwrap();
-                assert!(
-                    relative_eq!(got_s, expected_s, max_relative = 0.01),
-                    "{volume_m3}: {got_s}"
-                );
+                assert!(relative_eq!(got_s, expected_s, max_relative = 0.01), "{volume_m3}: {got_s}");
             }
         }
     }
@@ -254,12 +220,8 @@ mod tests {
 
     #[test]
     fn fuel_that_is_too_little_is_never_starved_by_the_budget() {
-        let candle = DesignFire {
-            growth_kw_s2: 0.01,
-            peak_kw: 100.0,
-            energy_kj: 5000.0,
-            decay_from_share: 0.7,
-        };
+        let candle =
+            DesignFire { growth_kw_s2: 0.01, peak_kw: 100.0, energy_kj: 5000.0, decay_from_share: 0.7 };
 
         assert_eq!(budget_time_s(&candle, 39.0, 0.0, 0.15), None);
     }

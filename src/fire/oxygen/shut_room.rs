@@ -133,29 +133,14 @@ fn burn_in_steps(fire: &DesignFire, room: &ShutRoom<'_>, horizon_s: f64, scale: 
             / (2.0 * HALF_RAMP_MASS_FRACTION))
             .clamp(0.0, 1.0);
         if burning < OUT_BELOW_SHARE {
-            return ShutBurn {
-                state: now,
-                starved: true,
-            };
+            return ShutBurn { state: now, starved: true };
         }
         let step_s = scale * (0.02 * now.time_s).max(1.0);
         let step_s = step_s.min(end_s - now.time_s).max(1e-6);
         let gasified_kw = phases.heat_release_kw(fire.growth_kw_s2, now.time_s + 0.5 * step_s);
-        now = step(
-            &now,
-            room,
-            Step {
-                step_s,
-                gasified_kw,
-                burning,
-                first_mass_kg,
-            },
-        );
+        now = step(&now, room, Step { step_s, gasified_kw, burning, first_mass_kg });
     }
-    ShutBurn {
-        state: now,
-        starved: false,
-    }
+    ShutBurn { state: now, starved: false }
 }
 
 struct Step {
@@ -220,15 +205,10 @@ fn step(now: &ShutState, room: &ShutRoom<'_>, step: Step) -> ShutState {
 /// What a room exceeds of the range of [`burn_shut`].
 #[must_use]
 pub fn burn_shut_limits(room: &ShutRoom<'_>) -> Exceeded {
-    Exceeded::none()
-        .when(
-            room.volume_m3 > 500.0,
-            "volume above 500 m³: the gas is hardly well mixed",
-        )
-        .when(
-            room.leakage_area_m2 > 0.001 * room.volume_m3,
-            "leakage like that of an opening: the openings count instead",
-        )
+    Exceeded::none().when(room.volume_m3 > 500.0, "volume above 500 m³: the gas is hardly well mixed").when(
+        room.leakage_area_m2 > 0.001 * room.volume_m3,
+        "leakage like that of an opening: the openings count instead",
+    )
 }
 
 #[cfg(test)]
@@ -258,21 +238,11 @@ mod tests {
     }
 
     fn t_squared(growth_kw_s2: f64) -> DesignFire {
-        DesignFire {
-            growth_kw_s2,
-            peak_kw: 1e6,
-            energy_kj: 1e7,
-            decay_from_share: 0.7,
-        }
+        DesignFire { growth_kw_s2, peak_kw: 1e6, energy_kj: 1e7, decay_from_share: 0.7 }
     }
 
     fn steady(heat_release_kw: f64) -> DesignFire {
-        DesignFire {
-            growth_kw_s2: 1e9,
-            peak_kw: heat_release_kw,
-            energy_kj: 1e8,
-            decay_from_share: 0.7,
-        }
+        DesignFire { growth_kw_s2: 1e9, peak_kw: heat_release_kw, energy_kj: 1e8, decay_from_share: 0.7 }
     }
 
     #[test]
@@ -290,11 +260,7 @@ mod tests {
                 air_mass_kg: mass_kg,
                 specific_heat_kj_kgk: AIR_SPECIFIC_HEAT_KJ_KGK,
             });
-            assert_relative_eq!(
-                burnt.state.temperature_k - 293.0,
-                beyler_k,
-                max_relative = 0.05
-            );
+            assert_relative_eq!(burnt.state.temperature_k - 293.0, beyler_k, max_relative = 0.05);
         }
     }
 
@@ -302,10 +268,7 @@ mod tests {
     fn without_losses_the_temperature_is_that_of_the_closed_form() {
         // Derived for an adiabatic leaky room: T = T_0 e^(Q t/(c_p m_0 T_0)); 60 m³ at 1.2047
         // kg/m³, 50 kW, 120 s: 388.41 K.
-        let adiabatic = ShutRoom {
-            volume_m3: 60.0,
-            ..room(&[])
-        };
+        let adiabatic = ShutRoom { volume_m3: 60.0, ..room(&[]) };
         let burnt = burn_in_steps(&steady(50.0), &adiabatic, 120.0, 0.1);
 
         assert_relative_eq!(burnt.state.temperature_k, 388.412, max_relative = 1e-3);
@@ -318,12 +281,7 @@ mod tests {
         let fine = at(0.02);
         let error = |scale: f64| (at(scale).temperature_k - fine.temperature_k).abs();
 
-        assert!(
-            error(0.5) < 0.65 * error(1.0),
-            "{} {}",
-            error(0.5),
-            error(1.0)
-        );
+        assert!(error(0.5) < 0.65 * error(1.0), "{} {}", error(0.5), error(1.0));
         assert!(error(1.0) < 0.03 * (fine.temperature_k - 293.0));
     }
 
@@ -332,8 +290,7 @@ mod tests {
         // Oxygen gone = burnt + carried out; what is carried out had at most 0.2315 in it.
         let state = burn_in_steps(&t_squared(0.0117), &room(&[BOARD]), 150.0, 0.1).state;
         let first_kg = 32.7 * air_density_kg_m3(293.0);
-        let gone_kg =
-            OXYGEN_IN_AIR_MASS_FRACTION * first_kg - state.oxygen_mass_fraction * state.gas_mass_kg;
+        let gone_kg = OXYGEN_IN_AIR_MASS_FRACTION * first_kg - state.oxygen_mass_fraction * state.gas_mass_kg;
         let burnt_kg = state.released_kj / HEAT_PER_OXYGEN_KJ_KG;
         let carried_kg = gone_kg - burnt_kg;
 
@@ -343,21 +300,10 @@ mod tests {
 
     #[test]
     fn leakage_that_feeds_the_fire_keeps_it_alive() {
-        let small = DesignFire {
-            growth_kw_s2: 0.01,
-            peak_kw: 30.0,
-            energy_kj: 60_000.0,
-            decay_from_share: 0.7,
-        };
+        let small =
+            DesignFire { growth_kw_s2: 0.01, peak_kw: 30.0, energy_kj: 60_000.0, decay_from_share: 0.7 };
         let tight = burn_shut(&small, &room(&[BOARD]), 7200.0);
-        let leaky = burn_shut(
-            &small,
-            &ShutRoom {
-                leakage_area_m2: 0.1,
-                ..room(&[BOARD])
-            },
-            7200.0,
-        );
+        let leaky = burn_shut(&small, &ShutRoom { leakage_area_m2: 0.1, ..room(&[BOARD]) }, 7200.0);
 
         assert!(tight.starved && !leaky.starved);
     }
