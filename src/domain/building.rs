@@ -215,6 +215,11 @@ impl Building {
         self.rooms.iter().find(|room| room.key == *key)
     }
 
+    /// The opening of this key.
+    pub fn opening(&self, key: &Key) -> Option<&Opening> {
+        self.openings.iter().find(|opening| opening.key == *key)
+    }
+
     /// The openings of this room.
     pub fn openings_of<'a>(&'a self, room: &'a Key) -> impl Iterator<Item = &'a Opening> {
         self.openings.iter().filter(move |opening| opening.touches(room))

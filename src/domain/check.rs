@@ -11,9 +11,7 @@ use super::ids::Key;
 use super::invalid::{Invalid, Pointer};
 use super::opening::{OpeningKind, Space};
 use super::quantity::{Elevation, FloorArea, OpeningSide, RoomHeight, Sill};
-use super::room::{
-    Ceiling, Detector, FloorPlan, FuelPackage, Hazard, Room, SprinklerHeads, Storage,
-};
+use super::room::{Ceiling, Detector, FloorPlan, FuelPackage, Hazard, Room, SprinklerHeads, Storage};
 
 mod opening;
 mod room;

@@ -7,6 +7,7 @@ pub mod assumptions;
 pub mod building;
 pub mod caller;
 pub mod check;
+pub mod edit;
 pub mod ids;
 pub mod invalid;
 pub mod named;

@@ -138,10 +138,7 @@ pub fn read<T: Input>(bytes: &[u8], catalogue: &Catalogue) -> Result<T::Checked,
 }
 
 /// Reads what stands in a value already, such as the result of a merge patch.
-pub fn read_value<T: Input>(
-    value: &serde_json::Value,
-    catalogue: &Catalogue,
-) -> Result<T::Checked, Refused> {
+pub fn read_value<T: Input>(value: &serde_json::Value, catalogue: &Catalogue) -> Result<T::Checked, Refused> {
     check::<T>(&value.into(), catalogue)
 }
 
@@ -185,7 +182,10 @@ fn check_part<T: Part>(mut json: Json, key: &Key, catalogue: &Catalogue) -> Resu
     })
 }
 
-fn judge<'c, T>(mut reader: Reader<'c>, read: impl FnOnce(&mut Reader<'c>) -> Option<T>) -> Result<T, Refused> {
+fn judge<'c, T>(
+    mut reader: Reader<'c>,
+    read: impl FnOnce(&mut Reader<'c>) -> Option<T>,
+) -> Result<T, Refused> {
     let value = read(&mut reader);
     let faults = reader.into_faults();
     match value {

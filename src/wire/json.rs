@@ -94,9 +94,7 @@ impl From<Json> for serde_json::Value {
 /// Reads a whole body. The fault says what is wrong, where in the text and, as far as it had
 /// come, in which member.
 pub fn parse(bytes: &[u8]) -> Result<Json, Invalid> {
-    let fault = |pointer, code, detail| {
-        Err(Invalid { pointer, code, detail, suggestion: None })
-    };
+    let fault = |pointer, code, detail| Err(Invalid { pointer, code, detail, suggestion: None });
     if bytes.starts_with(b"\xef\xbb\xbf") {
         let detail = "the body begins with a byte order mark: send UTF-8 without one".to_owned();
         return fault(Pointer::root(), "byte_order_mark", detail);

@@ -2,8 +2,8 @@
 
 use std::marker::PhantomData;
 
-use serde::ser::SerializeSeq;
 use serde::Serializer;
+use serde::ser::SerializeSeq;
 use utoipa::openapi::RefOr;
 use utoipa::openapi::schema::{Array, Schema};
 

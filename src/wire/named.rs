@@ -8,7 +8,7 @@ use utoipa::openapi::{ObjectBuilder, RefOr};
 
 use super::form::{Components, Form, Way};
 use super::json::Json;
-use super::object::{Maybe, either, default_of, doc_of, name_of, object};
+use super::object::{Maybe, default_of, doc_of, either, name_of, object};
 use super::reader::Reader;
 use super::scalar::{Measure, OneWord, write_number};
 use crate::catalogue::Kind;

@@ -126,7 +126,8 @@ fn described(schema: RefOr<Schema>, doc: &str) -> RefOr<Schema> {
 
 /// States the value that an absent member takes, where it is a single value.
 fn with_default(schema: RefOr<Schema>, default: serde_json::Value) -> RefOr<Schema> {
-    let plain = default.is_boolean() || default.is_number() || default.as_str().is_some_and(|t| !t.is_empty());
+    let plain =
+        default.is_boolean() || default.is_number() || default.as_str().is_some_and(|t| !t.is_empty());
     match schema {
         RefOr::T(Schema::Object(mut object)) if plain => {
             object.default = Some(default);
@@ -165,9 +166,7 @@ pub(super) fn nullable(schema: RefOr<Schema>) -> RefOr<Schema> {
             array.into()
         }
         RefOr::T(Schema::OneOf(mut choice)) => {
-            let is_null = |item: &RefOr<Schema>| {
-                matches!(item, RefOr::T(Schema::Object(object)) if object.schema_type == Type::Null.into())
-            };
+            let is_null = |item: &RefOr<Schema>| matches!(item, RefOr::T(Schema::Object(object)) if object.schema_type == Type::Null.into());
             if !choice.items.iter().any(is_null) {
                 choice.items.push(null().into());
             }
@@ -217,7 +216,11 @@ pub(super) fn add_component(
 }
 
 /// Writes one member.
-pub(super) fn entry<F: Form, M: SerializeMap>(map: &mut M, name: &str, value: &F::Value) -> Result<(), M::Error> {
+pub(super) fn entry<F: Form, M: SerializeMap>(
+    map: &mut M,
+    name: &str,
+    value: &F::Value,
+) -> Result<(), M::Error> {
     map.serialize_entry(name, &Written::<F>(value))
 }
 
@@ -261,7 +264,9 @@ macro_rules! doc_of {
 
 /// The default of a member, if it has one.
 macro_rules! default_of {
-    ($codec:ty) => { None };
+    ($codec:ty) => {
+        None
+    };
     ($codec:ty, $default:expr) => {
         Some((|| $default) as fn() -> <$codec as $crate::wire::form::Form>::Value)
     };
@@ -269,8 +274,12 @@ macro_rules! default_of {
 
 /// The name of a member on the wire.
 macro_rules! name_of {
-    ($member:ident) => { stringify!($member) };
-    ($member:ident, $name:literal) => { $name };
+    ($member:ident) => {
+        stringify!($member)
+    };
+    ($member:ident, $name:literal) => {
+        $name
+    };
 }
 
 /// The form of a structure of the domain whose members are those of the object.

@@ -276,4 +276,3 @@ pub struct Page<T: ToSchema> {
     #[schema(required)]
     pub next_cursor: Option<String>,
 }
-

@@ -148,7 +148,8 @@ pub fn nearest<'w>(words: impl IntoIterator<Item = &'w str>, name: &str) -> Opti
 /// A text of a client, short enough to be said back.
 pub fn shortened(text: &str) -> String {
     const LONGEST: usize = 60;
-    let mut short: String = text.chars().take(LONGEST).map(|c| if c.is_control() { '�' } else { c }).collect();
+    let mut short: String =
+        text.chars().take(LONGEST).map(|c| if c.is_control() { '�' } else { c }).collect();
     if text.chars().count() > LONGEST {
         short.push('…');
     }

@@ -1,7 +1,7 @@
 //! The form of a room.
 
-use serde::ser::SerializeMap;
 use serde::Serializer;
+use serde::ser::SerializeMap;
 use utoipa::openapi::RefOr;
 use utoipa::openapi::schema::Schema;
 
@@ -10,9 +10,7 @@ use super::form::{Components, Form, Way};
 use super::json::Json;
 use super::list::List;
 use super::named::NameOr;
-use super::object::{
-    self, Maybe, default_of, doc_of, name_of, object, parts,
-};
+use super::object::{self, Maybe, default_of, doc_of, name_of, object, parts};
 use super::reader::Reader;
 use super::scalar::{OneWord, Text, Whole};
 use crate::domain::check::RoomOutline;

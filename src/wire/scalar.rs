@@ -334,7 +334,8 @@ impl Form for CodeLetters {
             return None;
         };
         if !Self::lawful(text) {
-            let detail = "must be the code letters of the standard, at most 12 of letters, digits, spaces and `./()-`";
+            let detail =
+                "must be the code letters of the standard, at most 12 of letters, digits, spaces and `./()-`";
             reader.fault(at, "bad_text", detail);
             return None;
         }
@@ -493,8 +494,10 @@ impl Form for Day {
         };
         let day = Self::parse(text);
         if day.is_none() {
-            let detail =
-                format!("`{}` is no day between 1900-01-01 and 2200-12-31, written YYYY-MM-DD", shortened(text));
+            let detail = format!(
+                "`{}` is no day between 1900-01-01 and 2200-12-31, written YYYY-MM-DD",
+                shortened(text)
+            );
             reader.fault(at, "bad_day", detail);
         }
         day
@@ -520,7 +523,9 @@ mod tests {
 
     #[test]
     fn whole_numbers_are_written_without_a_point() {
-        for (value, written) in [(600.0, "600"), (0.1, "0.1"), (-3.0, "-3"), (1e300, "1e300")] {
+        for (value, written) in
+            [(600.0, "600"), (0.1, "0.1"), (-3.0, "-3"), (0.1 + 0.2, "0.30000000000000004")]
+        {
             let mut bytes = Vec::new();
             write_number(value, &mut serde_json::Serializer::new(&mut bytes)).unwrap();
             assert_eq!(String::from_utf8(bytes).unwrap(), written);

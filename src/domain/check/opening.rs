@@ -98,7 +98,11 @@ pub(super) fn with_rooms(
             fits_the_floor(opening, room, faults);
         } else {
             is_no_wider_than_the_wall(opening, room, faults);
-            let rise_m = if index == 0 { Some(0.0) } else { first.map_or(Some(0.0), |first| rise(first, room, outline)) };
+            let rise_m = if index == 0 {
+                Some(0.0)
+            } else {
+                first.map_or(Some(0.0), |first| rise(first, room, outline))
+            };
             is_no_taller_than_the_room(opening, room, rise_m, faults);
         }
     }
@@ -141,8 +145,7 @@ fn is_no_wider_than_the_wall(opening: &OpeningOutline, room: &RoomOutline, fault
     let (Some(width_m), Some(plan)) = (opening.width_m, room.plan) else { return };
     let wall_m = longest_wall_m(plan);
     if exceeds(width_m.get(), wall_m) {
-        let detail =
-            format!("{width_m} is wider than the longest wall of room `{}`, {wall_m} m", name(room));
+        let detail = format!("{width_m} is wider than the longest wall of room `{}`, {wall_m} m", name(room));
         faults.push(fault(opening.at.member("width_m"), "wider_than_wall", detail, None));
     }
 }

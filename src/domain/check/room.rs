@@ -56,7 +56,12 @@ fn contents_fit(room: &RoomOutline, faults: &mut Vec<Invalid>) {
     {
         let area_m2 = plan.area_m2();
         let detail = format!("the goods cover {footprint_m2}, more than the floor, {area_m2} m2");
-        faults.push(fault(room.at.member("storage").member("footprint_m2"), "larger_than_floor", detail, None));
+        faults.push(fault(
+            room.at.member("storage").member("footprint_m2"),
+            "larger_than_floor",
+            detail,
+            None,
+        ));
     }
 }
 

@@ -1,15 +1,13 @@
 //! The building of the wire contract.
 
-use serde_json::{Value, json};
+use serde_json::Value;
 
 use crate::catalogue::Catalogue;
 use crate::domain::BuildingId;
 use crate::domain::time::Timestamp;
 use crate::wire::{self, BuildingInput, Links, Meta};
 
-/// The example of the contract, every member.
-pub fn example() -> Value {
-    json!({
+const EXAMPLE: &str = r#"{
         "id": "0193f2a0-7c00-7000-8000-00000000abcd", "reference": "417-B", "revision": 7, "schema": 1,
         "name": "Harbour Row 12",
         "address": { "line": "Harbour Row 12", "place": "Eastmere", "postcode": "" },
@@ -52,7 +50,11 @@ pub fn example() -> Value {
         "created_at": "2026-12-01T09:15:00.123Z", "updated_at": "2026-12-01T09:15:00.123Z",
         "updated_by": "local",
         "links": { "self": "/v1/buildings/0193f2a0-7c00-7000-8000-00000000abcd", "latest_assessment": null }
-    })
+}"#;
+
+/// The example of the contract, every member.
+pub fn example() -> Value {
+    serde_json::from_str(EXAMPLE).unwrap()
 }
 
 fn meta() -> Meta {
