@@ -5,9 +5,8 @@ use std::sync::Arc;
 use sqlx::{Connection, SqliteConnection};
 
 use super::cache::{Cache, Decoded};
-use super::condition::Condition;
 use super::error::{Missing, StoreError};
-use super::records::{Head, ListBuildings, Page, Part, Saved, SavedBuilding, Summary, Worst, WorstRating};
+use super::records::{Head, ListBuildings, Page, Saved, SavedBuilding, Summary, Worst, WorstRating};
 use super::{Store, heads, parts, revisions, rows};
 use crate::domain::building::Location;
 use crate::domain::ids::{AgencyId, BuildingId, Key};
@@ -103,20 +102,6 @@ impl Store {
         key: &Key,
     ) -> Result<Saved<Opening>, StoreError> {
         self.get_building(caller, id).await?.opening(key).ok_or(StoreError::NotFound(Missing::Opening))
-    }
-
-    /// Judges a condition without changing anything.
-    ///
-    /// For a request that is refused for its body: whether it would have been
-    /// refused earlier, as not found or stale. The change itself judges again.
-    pub async fn judge(
-        &self,
-        caller: &Caller,
-        id: BuildingId,
-        part: &Part,
-        condition: &Condition,
-    ) -> Result<(), StoreError> {
-        condition.judge(self.get_building(caller, id).await?.tag(part))
     }
 
     /// A page of summaries in order of id, which is the order in which they were entered.

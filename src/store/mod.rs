@@ -7,10 +7,9 @@
 //!
 //! | to | call |
 //! |---|---|
-//! | open, close | [`Store::open`], [`Store::close`] |
+//! | open, probe, close | [`Store::open`], [`Store::ready`], [`Store::writes_waiting`], [`Store::close`] |
 //! | read a building, room, opening | [`get_building`](Store::get_building), [`find_building`](Store::find_building), [`get_room`](Store::get_room), [`get_opening`](Store::get_opening) |
 //! | list buildings | [`list_buildings`](Store::list_buildings), [`is_empty`](Store::is_empty) |
-//! | judge a condition without a change | [`judge`](Store::judge) |
 //! | save whole | [`create_building`](Store::create_building), [`put_building`](Store::put_building) |
 //! | save one part | [`put_room`](Store::put_room), [`put_opening`](Store::put_opening) |
 //! | change what is there (PATCH) | [`edit`](Store::edit) |
@@ -45,6 +44,9 @@ mod revisions;
 mod rows;
 mod writer;
 
+#[cfg(test)]
+mod tests;
+
 use sqlx::sqlite::SqlitePool;
 
 pub use assessments::StoredReport;
@@ -78,6 +80,17 @@ impl Store {
             readers,
             cache: cache::Cache::default(),
         })
+    }
+
+    /// Whether records can be read and changes are taken: an empty transaction goes the way of every other.
+    pub async fn ready(&self) -> Result<(), StoreError> {
+        drop(self.readers.acquire().await?);
+        self.writer.write(|_| Box::pin(async { Ok(()) })).await
+    }
+
+    /// How many changes wait for their turn.
+    pub fn writes_waiting(&self) -> usize {
+        self.writer.waiting()
     }
 
     /// Waits for the changes that are queued, then closes the file with nothing left in its log.

@@ -29,7 +29,7 @@ enum Message {
 
 /// Changes that may wait. Beyond it a caller is told to come back: at some
 /// thousand changes a second nobody waits here longer than about a second.
-const QUEUE: usize = 512;
+pub(super) const QUEUE: usize = 512;
 
 /// The near end of the queue.
 #[derive(Debug, Clone)]
@@ -77,6 +77,11 @@ impl Writer {
             };
             Err(lost.into())
         })
+    }
+
+    /// How many jobs wait.
+    pub(super) fn waiting(&self) -> usize {
+        self.queue.max_capacity() - self.queue.capacity()
     }
 
     /// Waits for what is queued, moves the log into the file, ends the task.
