@@ -11,6 +11,9 @@ pub const MAX_ROOMS: usize = 500;
 /// Most openings a building may have.
 pub const MAX_OPENINGS: usize = 2000;
 
+/// Lowest and highest floor number.
+pub const FLOOR_NUMBERS: std::ops::RangeInclusive<i32> = -50..=300;
+
 /// Where post finds it.
 #[derive(Debug, Clone, PartialEq, Eq, Default)]
 pub struct Address {
