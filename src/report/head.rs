@@ -3,28 +3,32 @@
 use serde::Serialize;
 use utoipa::ToSchema;
 
-use super::words::Level;
+use super::words::LevelWord;
+use crate::domain::assumptions::Assumptions;
+use crate::domain::building::Building;
 use crate::domain::ids::{AssessmentId, BuildingId};
 use crate::domain::time::Timestamp;
 
-/// What only the caller knows about an assessment: its ids and its moment. All null for an
-/// answer that nothing was kept of.
-#[derive(Debug, Clone, Copy, PartialEq, Eq, Default)]
-pub struct Issue {
-    /// The assessment, where it is kept.
+/// What only the caller knows of an assessment: what was assessed, and under which ids and moment.
+#[derive(Debug, Clone, Copy, PartialEq)]
+pub struct Head<'a> {
+    /// The building that was assessed.
+    pub building: &'a Building,
+    /// The assumptions that were asked for.
+    pub assumptions: &'a Assumptions,
+    /// Id of the assessment; none where nothing is kept.
     pub assessment_id: Option<AssessmentId>,
-    /// The building, where it is in the inventory.
+    /// Id of the building; none where it is not in the inventory.
     pub building_id: Option<BuildingId>,
     /// Its revision.
     pub building_revision: Option<u64>,
     /// When the assessment was made.
-    pub created_at: Option<Timestamp>,
+    pub created_at: Timestamp,
 }
 
 /// The head members of both reports.
 #[derive(Debug, Clone, PartialEq, Serialize, ToSchema)]
-#[schema(as = ReportHead)]
-pub struct Head {
+pub struct ReportHead {
     /// Id of the assessment; null where nothing was kept.
     #[schema(required, format = Uuid)]
     pub assessment_id: Option<String>,
@@ -35,7 +39,7 @@ pub struct Head {
     #[schema(required)]
     pub building_revision: Option<u64>,
     /// Version of the computation; raised whenever any result may change.
-    pub engine_version: String,
+    pub engine_version: &'static str,
     /// SHA-256 of the catalogue.
     pub catalogue_digest: String,
     /// SHA-256 of the resolved inputs: same digest and engine, same findings.
@@ -43,10 +47,10 @@ pub struct Head {
     /// Number of the set of rating rules; they are printed under `rules`.
     pub rating_rule: u32,
     /// Which level of computation gave the ratings.
-    pub level: Level,
+    pub level: LevelWord,
     /// Seed of the sampling.
     pub seed: u64,
-    /// When the assessment was made.
+    /// When the assessment was made; null where the moment cannot be written.
     #[schema(required, format = DateTime)]
     pub created_at: Option<String>,
 }

@@ -1,141 +1,136 @@
-//! The closed words of a report.
+//! Closed words of the findings, as a report and its schema print them.
 
-use serde::Serialize;
-use utoipa::ToSchema;
+use std::borrow::Cow;
 
-/// Declares an enum that is snake_case on the wire and knows its own word.
-macro_rules! words {
-    ($($(#[$meta:meta])* $name:ident { $($(#[$inner:meta])* $variant:ident = $word:literal,)+ })+) => {$(
-        $(#[$meta])*
-        #[derive(Debug, Clone, Copy, PartialEq, Eq, PartialOrd, Ord, Hash, Serialize, ToSchema)]
-        pub enum $name {
-            $($(#[$inner])* #[serde(rename = $word)] $variant,)+
+use serde::{Serialize, Serializer};
+use utoipa::openapi::schema::{ObjectBuilder, Schema, Type};
+use utoipa::openapi::RefOr;
+use utoipa::{PartialSchema, ToSchema};
+
+use crate::assessment::findings;
+use crate::domain::{assumptions, building, room};
+
+/// A closed set of words.
+pub trait Words: Copy + 'static {
+    /// Name of the schema.
+    const NAME: &'static str;
+    /// What the words tell.
+    const TELLS: &'static str;
+    /// All of them, in order.
+    const EVERY: &'static [Self];
+
+    /// The word on the wire.
+    fn word(self) -> &'static str;
+}
+
+/// A value printed as its word.
+#[derive(Debug, Clone, Copy, PartialEq, Eq, PartialOrd, Ord, Hash)]
+pub struct Word<W>(pub W);
+
+impl<W: Words> Serialize for Word<W> {
+    fn serialize<S: Serializer>(&self, serializer: S) -> Result<S::Ok, S::Error> {
+        serializer.serialize_str(self.0.word())
+    }
+}
+
+impl<W: Words> PartialSchema for Word<W> {
+    fn schema() -> RefOr<Schema> {
+        ObjectBuilder::new()
+            .schema_type(Type::String)
+            .description(Some(W::TELLS))
+            .enum_values(Some(W::EVERY.iter().map(|value| value.word())))
+            .into()
+    }
+}
+
+impl<W: Words> ToSchema for Word<W> {
+    fn name() -> Cow<'static, str> {
+        Cow::Borrowed(W::NAME)
+    }
+}
+
+impl<W> From<W> for Word<W> {
+    fn from(value: W) -> Self {
+        Self(value)
+    }
+}
+
+/// Enumerations of the findings carry their words; only the schema is added.
+macro_rules! of_findings {
+    ($($name:ident as $alias:ident tells $tells:literal;)*) => {$(
+        #[doc = concat!($tells, " See [`findings::", stringify!($name), "`].")]
+        pub type $alias = Word<findings::$name>;
+
+        impl Words for findings::$name {
+            const NAME: &'static str = stringify!($name);
+            const TELLS: &'static str = $tells;
+            const EVERY: &'static [Self] = Self::ALL;
+
+            fn word(self) -> &'static str {
+                self.word()
+            }
         }
+    )*};
+}
 
-        impl $name {
-            /// All, in the order of their declaration.
-            pub const ALL: &'static [Self] = &[$(Self::$variant,)+];
+/// Enumerations of the domain get their words here.
+macro_rules! of_domain {
+    ($($path:path, $name:ident as $alias:ident tells $tells:literal { $($variant:ident = $word:literal),+ $(,)? })*) => {$(
+        #[doc = $tells]
+        pub type $alias = Word<$path>;
 
-            /// The word on the wire.
-            #[must_use]
-            pub const fn word(self) -> &'static str {
+        impl Words for $path {
+            const NAME: &'static str = stringify!($name);
+            const TELLS: &'static str = $tells;
+            const EVERY: &'static [Self] = &[$(Self::$variant),+];
+
+            fn word(self) -> &'static str {
                 match self { $(Self::$variant => $word,)+ }
             }
         }
-    )+};
+    )*};
 }
 
-words! {
-    /// Which rule gave the ratings.
-    Level {
-        /// Closed forms.
-        Screening = "screening",
-        /// Two layers per room over time.
-        Transient = "transient",
-        /// The transient run over uncertain inputs.
-        Sampled = "sampled",
-    }
+of_findings! {
+    FlashoverRating as FlashoverWord tells "What an established flaming fire that nobody fights does in this room, never the chance of a fire. `not_indicated` is only to be read with `holds_while` and `not_covered`; `not_assessed` counts with the worst.";
+    BackdraftRating as BackdraftWord tells "Whether the shut room can hold gas that burns violently once air reaches it. Screening gives `not_indicated`, `cannot_be_excluded` or `not_assessed`, which counts with the worst.";
+    BackdraftOutcome as OutcomeWord tells "What follows when the shut room is opened.";
+    LimitedBy as LimitWord tells "What holds the fire, or its gas, back.";
+    BeforeWater as BeforeWaterWord tells "How sure the order of flashover and water on the fire is, over the corners of both.";
+    Provenance as ProvenanceWord tells "Whether a published text was read, a value recalled without its text, or set by this project.";
+    Direction as DirectionWord tells "On which side of the value the input must stay.";
+    DetectedBy as DetectedByWord tells "What tells people of the fire first.";
+    MilestoneKind as MilestoneWord tells "A moment of the fire or of the response.";
+}
 
-    /// A way the building may stand while the room burns.
-    Scenario {
-        /// Recorded states; self-closing doors and released hold-opens shut on detection.
-        AsFound = "as_found",
-        /// The door to the way out stands open: someone fled.
-        DoorOpen = "door_open",
-        /// Everything shut, leakage only.
-        Shut = "shut",
-        /// Shut once the fire has grown.
-        ShutLate = "shut_late",
-        /// Glass falls by its criterion.
-        WindowFails = "window_fails",
-        /// A crew opens a door after the fire has burnt shut.
-        Entry = "entry",
+of_domain! {
+    assumptions::Level, Level as LevelWord tells "How deep the computation went." {
+        Screening = "screening", Transient = "transient", Sampled = "sampled",
     }
-
-    /// What an established flaming fire that nobody fights does in this room. Never the chance of a fire.
-    FlashoverRating {
-        /// Every scenario computed falls well short. Always read with `holds_while` and `not_covered`.
-        NotIndicated = "not_indicated",
-        /// Within the scatter of the published data.
-        Possible = "possible",
-        /// The fire reaches what the most demanding correlation asks for.
-        Likely = "likely",
-        /// The fire reaches far more than any correlation asks for.
-        Expected = "expected",
-        /// No answer: to be treated with the worst until there is one.
-        NotAssessed = "not_assessed",
+    assumptions::Scenario, Scenario as ScenarioWord tells "A way the building may stand while the room burns." {
+        AsFound = "as_found", DoorOpen = "door_open", Shut = "shut", ShutLate = "shut_late",
+        WindowFails = "window_fails", Entry = "entry",
     }
-
-    /// Whether a shut room can hold gas that burns violently once air reaches it.
-    BackdraftRating {
-        /// Every case computed falls short. Always read with `holds_while` and `not_covered`.
-        NotIndicated = "not_indicated",
-        /// The first screen does not exclude it.
-        CannotBeExcluded = "cannot_be_excluded",
-        /// The mixture can burn at median inputs.
-        Credible = "credible",
-        /// The mixture can burn violently at median inputs.
-        CredibleViolent = "credible_violent",
-        /// No answer: to be treated with the worst until there is one.
-        NotAssessed = "not_assessed",
+    assumptions::GrowthClass, GrowthClass as GrowthWord tells "Growth of the t² fire: 1055 kW after 600, 300, 150 or 75 s." {
+        Slow = "slow", Medium = "medium", Fast = "fast", UltraFast = "ultra_fast",
     }
-
-    /// What follows when a shut room is opened.
-    BackdraftOutcome {
-        /// Nothing beyond the fire itself.
-        None = "none",
-        /// Air runs in, mixes, and the mixture burns out through the opening.
-        Backdraft = "backdraft",
-        /// The gas burns where it leaves.
-        FlamingOutflow = "flaming_outflow",
-        /// Mixed gas away from the fire ignites.
-        SmokeExplosion = "smoke_explosion",
-        /// Not computed at this level.
-        NotAssessed = "not_assessed",
+    room::Hazard, Hazard as HazardWord tells "A hazard that the methods do not compute." {
+        None = "none", NotRecorded = "not_recorded", LithiumIon = "lithium_ion",
+        GasCylinders = "gas_cylinders", FlammableLiquid = "flammable_liquid",
+        FlammableGas = "flammable_gas", CombustibleDust = "combustible_dust", Oxidisers = "oxidisers",
+        Explosives = "explosives", Hoard = "hoard", ExposedFoam = "exposed_foam",
+        MedicalOxygen = "medical_oxygen",
     }
-
-    /// What holds the fire, or its gas, back.
-    LimitedBy {
-        /// The fuel that burns at once.
-        Fuel = "fuel",
-        /// The air through the openings.
-        Ventilation = "ventilation",
-        /// The oxygen inside the shut room.
-        Oxygen = "oxygen",
-        /// The gas that the shut fire has made and not burnt.
-        UnburnedFuel = "unburned_fuel",
+    room::Place, FirePlace as PlaceWord tells "Where in the room the fire burns." {
+        Centre = "centre", Wall = "wall", Corner = "corner",
     }
-
-    /// How strong the pressure wave is.
-    PressureBand {
-        /// Under 100 Pa.
-        Under100Pa = "under_100_pa",
-        /// 100 to 1000 Pa.
-        From100To1000Pa = "100_to_1000_pa",
-        /// 1 to 10 kPa.
-        From1To10Kpa = "1_to_10_kpa",
-        /// Over 10 kPa.
-        Over10Kpa = "over_10_kpa",
+    room::RoomKind, RoomKind as RoomKindWord tells "What sort of space." {
+        Room = "room", Corridor = "corridor", Stair = "stair", Shaft = "shaft", Atrium = "atrium",
+        Attic = "attic", Void = "void",
     }
-
-    /// Whether the text behind a number was read, or the number recalled.
-    Provenance {
-        /// Read in a published text or data set.
-        Seen = "seen",
-        /// Recalled without the text: to be checked before anything rests on it.
-        Memory = "memory",
-    }
-
-    /// Classes of growth of the t² fire.
-    Growth {
-        /// 1055 kW after 600 s.
-        Slow = "slow",
-        /// 1055 kW after 300 s.
-        Medium = "medium",
-        /// 1055 kW after 150 s.
-        Fast = "fast",
-        /// 1055 kW after 75 s.
-        UltraFast = "ultra_fast",
+    building::SprinklerState, SprinklerState as SprinklerWord tells "What is recorded of the sprinklers." {
+        None = "none", NotRecorded = "not_recorded", OutOfService = "out_of_service",
+        Installed = "installed", WorkingTested = "working_tested",
     }
 }
 
@@ -145,19 +140,19 @@ mod tests {
 
     #[test]
     fn a_word_is_what_the_wire_carries() {
-        for &rating in FlashoverRating::ALL {
-            assert_eq!(serde_json::to_string(&rating).unwrap(), format!("\"{}\"", rating.word()));
-        }
-        for &band in PressureBand::ALL {
-            assert_eq!(serde_json::to_string(&band).unwrap(), format!("\"{}\"", band.word()));
-        }
+        assert_eq!(
+            serde_json::to_string(&Word(findings::FlashoverRating::NotIndicated)).unwrap(),
+            "\"not_indicated\""
+        );
+        assert_eq!(serde_json::to_string(&Word(assumptions::Scenario::ShutLate)).unwrap(), "\"shut_late\"");
     }
 
     #[test]
     fn no_rating_is_a_word_that_reassures() {
-        let ratings = FlashoverRating::ALL.iter().map(|r| r.word());
-        for word in ratings.chain(BackdraftRating::ALL.iter().map(|r| r.word())) {
-            assert!(!["safe", "no_risk", "low", "clear", "pass", "green"].contains(&word));
+        let flashover = findings::FlashoverRating::ALL.iter().map(|rating| rating.word());
+        let backdraft = findings::BackdraftRating::ALL.iter().map(|rating| rating.word());
+        for word in flashover.chain(backdraft) {
+            assert!(!["safe", "no_risk", "low", "clear", "pass", "green"].contains(&word), "{word}");
         }
     }
 }
