@@ -30,10 +30,10 @@ pub struct Head<'a> {
 #[derive(Debug, Clone, PartialEq, Serialize, ToSchema)]
 pub struct ReportHead {
     /// Id of the assessment; null where nothing was kept.
-    #[schema(required, format = Uuid)]
+    #[schema(required, format = "uuid")]
     pub assessment_id: Option<String>,
     /// Id of the building; null where it is not in the inventory.
-    #[schema(required, format = Uuid)]
+    #[schema(required, format = "uuid")]
     pub building_id: Option<String>,
     /// Revision of the building that was assessed.
     #[schema(required)]
@@ -51,7 +51,7 @@ pub struct ReportHead {
     /// Seed of the sampling.
     pub seed: u64,
     /// When the assessment was made; null where the moment cannot be written.
-    #[schema(required, format = DateTime)]
+    #[schema(required, format = "date-time")]
     pub created_at: Option<String>,
 }
 

@@ -108,7 +108,8 @@ mod tests {
 
     #[test]
     fn an_input_is_echoed_exactly() {
-        for (value, expected) in [(0.0127, "0.0127"), (3.6576, "3.6576"), (123_456.0, "123456"), (0.1, "0.1")] {
+        for (value, expected) in [(0.0127, "0.0127"), (3.6576, "3.6576"), (123_456.0, "123456"), (0.1, "0.1")]
+        {
             assert_eq!(serde_json::to_string(&Exact::of(value)).unwrap(), expected);
         }
     }

@@ -94,11 +94,7 @@ pub struct HazardFound {
 
 impl From<&findings::HazardFinding> for HazardFound {
     fn from(found: &findings::HazardFinding) -> Self {
-        Self {
-            hazard: found.hazard.into(),
-            text: found.text,
-            bars_not_indicated: found.bars_not_indicated,
-        }
+        Self { hazard: found.hazard.into(), text: found.text, bars_not_indicated: found.bars_not_indicated }
     }
 }
 

@@ -5,10 +5,10 @@ use utoipa::ToSchema;
 
 use super::number::Exact;
 use super::words::{GrowthWord, LevelWord, ScenarioWord};
+use crate::domain::Key;
 use crate::domain::assumptions::{Ambient, Assumptions};
 use crate::domain::building::Response;
 use crate::domain::quantity::{Kind, Quantity};
-use crate::domain::Key;
 
 /// What was asked for; null where it was left to the service.
 #[derive(Debug, Clone, PartialEq, Serialize, ToSchema)]

@@ -5,7 +5,7 @@ use utoipa::ToSchema;
 
 use super::figure::{Range, number, range};
 use super::number::Number;
-use super::words::{DetectedByWord, GrowthWord, FlashoverWord, MilestoneWord, ScenarioWord};
+use super::words::{DetectedByWord, FlashoverWord, GrowthWord, MilestoneWord, ScenarioWord};
 use crate::assessment::findings::{self, MilestoneKind};
 use crate::domain::Key;
 

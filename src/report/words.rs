@@ -3,8 +3,8 @@
 use std::borrow::Cow;
 
 use serde::{Serialize, Serializer};
-use utoipa::openapi::schema::{ObjectBuilder, Schema, Type};
 use utoipa::openapi::RefOr;
+use utoipa::openapi::schema::{ObjectBuilder, Schema, Type};
 use utoipa::{PartialSchema, ToSchema};
 
 use crate::assessment::findings;

@@ -3,8 +3,8 @@
 
 use super::span::about;
 use crate::assessment::findings::{
-    BackdraftFinding, BackdraftRating, BeforeWater, BuildingFindings, FlashoverFinding,
-    FlashoverRating, HoldsWhile, LargeSpaceFinding, RoomFindings,
+    BackdraftFinding, BackdraftRating, BeforeWater, BuildingFindings, FlashoverFinding, FlashoverRating,
+    HoldsWhile, LargeSpaceFinding, Reason, RoomFindings,
 };
 use crate::domain::assumptions::Scenario;
 use crate::domain::room::Hazard;
@@ -82,7 +82,9 @@ fn flashover(finding: &FlashoverFinding) -> String {
         FlashoverRating::NotIndicated => return not_indicated(finding.holds_while.first()),
         FlashoverRating::NotAssessed => {
             return match &finding.reason {
-                Some(reason) => format!("Not assessed, count it with the worst: {}", clause(&reason.text)),
+                Some(reason) => {
+                    format!("Not assessed, count it with the worst: {}", clause(in_words(reason)))
+                }
                 None => "Not assessed, count it with the worst".to_owned(),
             };
         }
@@ -94,9 +96,17 @@ fn flashover(finding: &FlashoverFinding) -> String {
     match finding.time_s {
         Some(time) => format!("{verb} after {}{case}{}", about(time.typical), water(finding)),
         // "Flashover" alone needs its verb once no time follows.
-        None if finding.rating == FlashoverRating::Likely => format!("Flashover likely{case}, time not known"),
+        None if finding.rating == FlashoverRating::Likely => {
+            format!("Flashover likely{case}, time not known")
+        }
         None => format!("{verb}{case}, time not known"),
     }
+}
+
+/// The reason without the stable word that it may lead with.
+fn in_words(reason: &Reason) -> &str {
+    let text = &*reason.text;
+    text.strip_prefix(reason.key).and_then(|rest| rest.strip_prefix(':')).unwrap_or(text)
 }
 
 /// Leads with its condition: it must never read as an all-clear.
@@ -201,7 +211,14 @@ fn listed(words: &[&str]) -> String {
     }
 }
 
-/// A sentence made ready to stand inside another.
-fn clause(sentence: &str) -> &str {
-    sentence.trim().trim_end_matches('.')
+/// A sentence made ready to stand inside another: no full stop, and no capital unless it is a name's.
+fn clause(sentence: &str) -> String {
+    let sentence = sentence.trim().trim_end_matches('.');
+    let mut letters = sentence.chars();
+    match (letters.next(), letters.next()) {
+        (Some(first), Some(second)) if second.is_lowercase() || second == ' ' => {
+            first.to_lowercase().chain(sentence.chars().skip(1)).collect()
+        }
+        _ => sentence.to_owned(),
+    }
 }
