@@ -106,6 +106,14 @@ pub struct BuildingReport {
     pub links: BuildingReportLinks,
 }
 
+impl BuildingReport {
+    /// The bytes that are served and stored.
+    #[must_use]
+    pub fn to_json(&self) -> Vec<u8> {
+        serde_json::to_vec(self).expect("every map has text for keys, and writing to memory cannot fail")
+    }
+}
+
 /// Writes the report of a building.
 #[must_use]
 pub fn building_report(found: &findings::BuildingFindings, head: &Head<'_>) -> BuildingReport {

@@ -101,7 +101,8 @@ fn water(out: &mut String, report: &BuildingReport) {
         (Some(available), _) => format!("only {} L/min are recorded.", available.get()),
         (None, _) => "no supply is recorded.".to_owned(),
     };
-    paragraph(out, &format!("Water: {name} asks for {} L/min; {against}", needed.get()), "", "");
+    let text = format!("Water: a fire in {name} calls for {:.0} L/min; {against}", needed.get());
+    paragraph(out, &text, "", "");
     out.push('\n');
 }
 

@@ -152,7 +152,7 @@ fn a_building_leads_with_how_many_rooms_and_the_worst() {
     assert_eq!(
         headline::building(&findings),
         "1 of 2 rooms may flash over before water is on the fire; 2 may hide a backdraft when shut; \
-         1 could not be judged for flashover. Worst: The store. Flashover after about 5 minutes with \
+         1 could not be judged for flashover. The worst, The store: flashover after about 5 minutes with \
          the door open, before water is on the fire; shut, it may hide a backdraft."
     );
 }

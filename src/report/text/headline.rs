@@ -48,7 +48,11 @@ pub fn building(findings: &BuildingFindings) -> String {
     let open = count(findings, |room| room.flashover.rating == FlashoverRating::NotAssessed);
 
     let mut sentence = match before {
-        0 => format!("In none of {} does the screen put flashover before water", rooms(all)),
+        0 => format!(
+            "In none of {} does the screen put flashover before water, as they are recorded",
+            rooms(all)
+        ),
+        n if n == all && all == 1 => "Its one room may flash over before water is on the fire".to_owned(),
         n => format!("{n} of {} may flash over before water is on the fire", rooms(all)),
     };
     if hides > 0 {
@@ -59,7 +63,7 @@ pub fn building(findings: &BuildingFindings) -> String {
     }
     sentence.push('.');
     if let Some(worst) = worst(findings) {
-        sentence.push_str(&format!(" Worst: {}. {}", worst.name, room(worst)));
+        sentence.push_str(&format!(" The worst, {}: {}.", worst.name.trim(), clause(&room(worst))));
     }
     sentence
 }
