@@ -1,0 +1,40 @@
+//! Claims about whole reports.
+
+mod contract;
+mod headlines;
+mod printed;
+mod schema;
+
+use serde_json::Value;
+
+/// Words that must not be used of a rating, nor anywhere near one.
+const BANNED: [&str; 8] = ["safe", "safely", "no risk", "low risk", "clear", "pass", "passes", "green"];
+
+/// The banned word that a text holds, as a whole word.
+fn banned(text: &str) -> Option<&'static str> {
+    let words: Vec<String> =
+        text.to_lowercase().split(|c: char| !c.is_alphanumeric()).map(ToOwned::to_owned).collect();
+    BANNED.into_iter().find(|banned| {
+        let banned: Vec<&str> = banned.split(' ').collect();
+        words.windows(banned.len()).any(|window| window == banned.as_slice())
+    })
+}
+
+/// Every text of a document, with its path.
+fn texts(value: &Value, path: &str, each: &mut impl FnMut(&str, &str)) {
+    match value {
+        Value::String(text) => each(path, text),
+        Value::Array(list) => list.iter().for_each(|value| texts(value, path, each)),
+        Value::Object(members) => {
+            members.iter().for_each(|(name, value)| texts(value, &format!("{path}/{name}"), each));
+        }
+        _ => {}
+    }
+}
+
+#[test]
+fn the_ban_catches_whole_words_only() {
+    assert_eq!(banned("This room is safe."), Some("safe"));
+    assert_eq!(banned("There is NO RISK here"), Some("no risk"));
+    assert_eq!(banned("unsafe compass, cleared"), None);
+}
