@@ -6,6 +6,7 @@ use super::{Failure, documents};
 use crate::assessment;
 use crate::catalogue::Catalogue;
 use crate::config::Assess;
+use crate::domain::time::Timestamp;
 use crate::domain::{Assumptions, Building};
 use crate::report;
 use crate::wire::{self, AssessInput, BuildingInput, Refused};
@@ -19,7 +20,14 @@ pub fn run(flags: &Assess) -> Result<(), Failure> {
     let findings =
         assessment::assess(&building, Catalogue::embedded(), &assumptions, &mut || ControlFlow::Continue(()))
             .map_err(|_| "the computation was stopped")?;
-    let head = report::Head::unsaved(&building, &assumptions);
+    let head = report::Head {
+        building: &building,
+        assumptions: &assumptions,
+        assessment_id: None,
+        building_id: None,
+        building_revision: None,
+        created_at: Timestamp(jiff::Timestamp::now().as_microsecond()),
+    };
     let report = report::building_report(&findings, &head);
     if flags.json {
         println!("{}", serde_json::to_string_pretty(&report)?);
@@ -33,7 +41,7 @@ pub fn run(flags: &Assess) -> Result<(), Failure> {
 fn read(text: &[u8]) -> Result<(Building, Assumptions), Refused> {
     let catalogue = Catalogue::embedded();
     if wire::json::parse(text).is_ok_and(|document| document.member("building").is_some()) {
-        return wire::read::<AssessInput>(text, catalogue);
+        return wire::read::<AssessInput>(text, catalogue).map(|asked| (asked.building, asked.assumptions));
     }
     wire::read::<BuildingInput>(text, catalogue).map(|building| (building, Assumptions::default()))
 }
