@@ -1,0 +1,1 @@
+//! Published experiments beside the screening physics: a first reality check.
