@@ -35,12 +35,7 @@ fn one_room(criterion: &mut Criterion) {
     let input = ScreenInput {
         enclosure: Enclosure::of_box(3.66, 3.66, 2.44, door),
         surfaces: &surfaces,
-        fire: DesignFire {
-            growth_kw_s2: 0.0469,
-            peak_kw: 3000.0,
-            energy_kj: 8e6,
-            decay_from_share: 0.7,
-        },
+        fire: DesignFire { growth_kw_s2: 0.0469, peak_kw: 3000.0, energy_kj: 8e6, decay_from_share: 0.7 },
         position_factor: 1.0,
         ambient_temperature_k: 293.15,
     };

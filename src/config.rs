@@ -100,7 +100,10 @@ pub struct Serve {
     pub listen: SocketAddr,
 
     #[command(flatten)]
-    #[expect(missing_docs, reason = "described by its own type; a doc comment here would replace the help text")]
+    #[expect(
+        missing_docs,
+        reason = "described by its own type; a doc comment here would replace the help text"
+    )]
     pub database: Database,
 
     /// Fill an empty inventory with an invented district, already assessed.
@@ -131,7 +134,10 @@ pub struct Import {
     pub from: PathBuf,
 
     #[command(flatten)]
-    #[expect(missing_docs, reason = "described by its own type; a doc comment here would replace the help text")]
+    #[expect(
+        missing_docs,
+        reason = "described by its own type; a doc comment here would replace the help text"
+    )]
     pub database: Database,
 }
 
@@ -139,6 +145,9 @@ pub struct Import {
 #[derive(Debug, Args)]
 pub struct Export {
     #[command(flatten)]
-    #[expect(missing_docs, reason = "described by its own type; a doc comment here would replace the help text")]
+    #[expect(
+        missing_docs,
+        reason = "described by its own type; a doc comment here would replace the help text"
+    )]
     pub database: Database,
 }

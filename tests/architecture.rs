@@ -7,10 +7,7 @@ use std::path::{Path, PathBuf};
 /// Who may use whom. A folder may always use itself; `fire::sources` alone is open to `report`.
 const ARROWS: &[(&str, &[&str])] = &[
     ("main", &["cli"]),
-    (
-        "cli",
-        &["http", "compute", "store", "report", "wire", "assessment", "catalogue", "domain", "config"],
-    ),
+    ("cli", &["http", "compute", "store", "report", "wire", "assessment", "catalogue", "domain", "config"]),
     ("http", &["compute", "store", "report", "wire", "assessment", "catalogue", "domain"]),
     ("report", &["wire", "assessment", "domain", "fire::sources", "fire::methods"]),
     ("store", &["wire", "assessment", "catalogue", "domain"]),
@@ -152,8 +149,18 @@ fn only_the_folders_named_here_know_a_framework() {
 #[test]
 fn the_top_level_holds_only_what_is_listed() {
     let listed = [
-        "Cargo.toml", "Cargo.lock", "README.md", "DEVELOPERS.md", "LICENSE", "src", "migrations", "openapi", "tests",
-        "seed-data", "benches", "target",
+        "Cargo.toml",
+        "Cargo.lock",
+        "README.md",
+        "DEVELOPERS.md",
+        "LICENSE",
+        "src",
+        "migrations",
+        "openapi",
+        "tests",
+        "seed-data",
+        "benches",
+        "target",
     ];
     let found: Vec<String> = fs::read_dir(env!("CARGO_MANIFEST_DIR"))
         .unwrap()
@@ -166,7 +173,8 @@ fn the_top_level_holds_only_what_is_listed() {
 
 #[test]
 fn the_reader_sees_groups_and_single_paths() {
-    let text = "use crate::{fire::growth, domain::{Room, Key}};\nlet a = crate::wire::read();\n// crate::store::x\n";
+    let text =
+        "use crate::{fire::growth, domain::{Room, Key}};\nlet a = crate::wire::read();\n// crate::store::x\n";
 
     let found = paths_after(text, "crate::");
 

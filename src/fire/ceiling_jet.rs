@@ -98,7 +98,10 @@ pub(super) fn alpert_velocity_per_kw_1_3(place: CeilingPlace) -> f64 {
 #[must_use]
 pub fn alpert_limits(heat_release_kw: f64, place: CeilingPlace) -> Exceeded {
     Exceeded::none()
-        .when(place.height_m < 4.6, "ceiling lower than the 4.6 m of the tests; the gas is confined and detectors act sooner")
+        .when(
+            place.height_m < 4.6,
+            "ceiling lower than the 4.6 m of the tests; the gas is confined and detectors act sooner",
+        )
         .when(place.height_m > 15.5, "ceiling higher than the 15.5 m of the tests")
         .when(heat_release_kw < 670.0, "fire smaller than the 670 kW of the tests")
         .when(heat_release_kw > 98_000.0, "fire larger than the 98 MW of the tests")

@@ -77,12 +77,7 @@ impl DesignFire {
         let share = self.decay_from_share.clamp(0.0, 1.0);
         let before_decay_kj = share * self.energy_kj;
         if !(self.growth_kw_s2 > 0.0 && self.peak_kw > 0.0 && self.energy_kj > 0.0) {
-            return Phases {
-                growth_end_s: 0.0,
-                decay_start_s: 0.0,
-                end_s: 0.0,
-                reached_kw: 0.0,
-            };
+            return Phases { growth_end_s: 0.0, decay_start_s: 0.0, end_s: 0.0, reached_kw: 0.0 };
         }
 
         let to_peak_s = (self.peak_kw / self.growth_kw_s2).sqrt();
@@ -94,17 +89,8 @@ impl DesignFire {
             let steady_s = (before_decay_kj - to_peak_kj) / self.peak_kw;
             (to_peak_s, to_peak_s + steady_s, self.peak_kw)
         };
-        let decay_s = if reached_kw > 0.0 {
-            2.0 * (1.0 - share) * self.energy_kj / reached_kw
-        } else {
-            0.0
-        };
-        Phases {
-            growth_end_s,
-            decay_start_s,
-            end_s: decay_start_s + decay_s,
-            reached_kw,
-        }
+        let decay_s = if reached_kw > 0.0 { 2.0 * (1.0 - share) * self.energy_kj / reached_kw } else { 0.0 };
+        Phases { growth_end_s, decay_start_s, end_s: decay_start_s + decay_s, reached_kw }
     }
 
     /// Heat release at a time, kW.
@@ -121,11 +107,7 @@ impl DesignFire {
             return t_squared_energy_kj(self.growth_kw_s2, time_s);
         }
         if time_s >= phases.end_s {
-            return if phases.end_s > 0.0 {
-                self.energy_kj
-            } else {
-                0.0
-            };
+            return if phases.end_s > 0.0 { self.energy_kj } else { 0.0 };
         }
         let grown_kj = t_squared_energy_kj(self.growth_kw_s2, phases.growth_end_s);
         if time_s <= phases.decay_start_s {
@@ -177,10 +159,7 @@ impl DesignFire {
     /// The same fuel where no more than a limit can burn: lower and longer.
     #[must_use]
     pub fn capped_kw(self, limit_kw: f64) -> Self {
-        Self {
-            peak_kw: self.peak_kw.min(limit_kw),
-            ..self
-        }
+        Self { peak_kw: self.peak_kw.min(limit_kw), ..self }
     }
 }
 

@@ -165,20 +165,11 @@ pub fn activation_s(
 
 /// [`activation_s`] for a [`DesignFire`], on the clock of its curve.
 #[must_use]
-pub fn activation_by_fire_s(
-    element: &HeatElement,
-    watch: &Watch,
-    fire: &DesignFire,
-) -> Option<f64> {
+pub fn activation_by_fire_s(element: &HeatElement, watch: &Watch, fire: &DesignFire) -> Option<f64> {
     let phases = fire.phases();
     // After its end the fire heats nothing more.
-    let watch = Watch {
-        until_s: watch.until_s.min(phases.end_s),
-        ..*watch
-    };
-    activation_s(element, &watch, |time_s| {
-        phases.heat_release_kw(fire.growth_kw_s2, time_s)
-    })
+    let watch = Watch { until_s: watch.until_s.min(phases.end_s), ..*watch };
+    activation_s(element, &watch, |time_s| phases.heat_release_kw(fire.growth_kw_s2, time_s))
 }
 
 /// Time at which the ceiling jet at a smoke detector has risen by so much, in s on the clock of the fire's curve; none where
@@ -242,36 +233,21 @@ pub fn heskestad_delichatsios_front_s(growth_kw_s2: f64, place: CeilingPlace) ->
         return 0.0;
     }
     let a = GRAVITY_M_S2 / (AIR_SPECIFIC_HEAT_KJ_KGK * AMBIENT_K * air_density_kg_m3(AMBIENT_K));
-    0.861
-        * (1.0 + place.radius_m / place.height_m)
-        * (a * growth_kw_s2).powf(-0.2)
-        * place.height_m.powf(0.8)
+    0.861 * (1.0 + place.radius_m / place.height_m) * (a * growth_kw_s2).powf(-0.2) * place.height_m.powf(0.8)
 }
 
 /// What an element exceeds of the range of [`element_rise_k`].
 #[must_use]
 pub fn element_limits(element: &HeatElement) -> Exceeded {
     Exceeded::none()
-        .when(
-            element.rti_m05s05 < 20.0,
-            "quicker than tested links (RTI below 20)",
-        )
-        .when(
-            element.rti_m05s05 > 350.0,
-            "slower than tested links (RTI above 350)",
-        )
+        .when(element.rti_m05s05 < 20.0, "quicker than tested links (RTI below 20)")
+        .when(element.rti_m05s05 > 350.0, "slower than tested links (RTI above 350)")
 }
 
 /// What a place exceeds of the range of [`smoke_alarm_s`].
 #[must_use]
 pub fn smoke_alarm_limits(place: CeilingPlace) -> Exceeded {
     Exceeded::none()
-        .when(
-            place.radius_m > 4.0 * place.height_m,
-            "further from the fire than four ceiling heights",
-        )
-        .when(
-            place.height_m > 15.5,
-            "ceiling higher than the 15.5 m of the tests",
-        )
+        .when(place.radius_m > 4.0 * place.height_m, "further from the fire than four ceiling heights")
+        .when(place.height_m > 15.5, "ceiling higher than the 15.5 m of the tests")
 }

@@ -23,10 +23,7 @@ impl Exceeded {
     /// Nothing exceeded.
     #[must_use]
     pub const fn none() -> Self {
-        Self {
-            notes: [""; CAPACITY],
-            count: 0,
-        }
+        Self { notes: [""; CAPACITY], count: 0 }
     }
 
     /// Adds the explanation when the condition holds. A seventh is dropped: no method has that many.

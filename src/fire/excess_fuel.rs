@@ -24,17 +24,9 @@ pub struct AftergasShare {
 
 impl AftergasShare {
     /// Linings that do not burn.
-    pub const NONCOMBUSTIBLE_LINING: Self = Self {
-        low: 0.1,
-        typical: 0.4,
-        high: 1.0,
-    };
+    pub const NONCOMBUSTIBLE_LINING: Self = Self { low: 0.1, typical: 0.4, high: 1.0 };
     /// Linings that gasify too.
-    pub const COMBUSTIBLE_LINING: Self = Self {
-        low: 0.2,
-        typical: 0.8,
-        high: 2.0,
-    };
+    pub const COMBUSTIBLE_LINING: Self = Self { low: 0.2, typical: 0.8, high: 2.0 };
 }
 
 /// What [`screen`] looks at.
@@ -94,11 +86,7 @@ pub fn screen(input: &ExcessInput<'_>) -> ExcessFuel {
     let state = burn.state;
     let left_kj = (input.fire.energy_kj - state.gasified_kj).max(0.0);
     let after = |share: f64| {
-        let after_kj = if burn.starved {
-            (share * state.gasified_kj).min(left_kj)
-        } else {
-            0.0
-        };
+        let after_kj = if burn.starved { (share * state.gasified_kj).min(left_kj) } else { 0.0 };
         state.unburned_kj_kg + after_kj / state.gas_mass_kg
     };
     let threshold_kj_kg = threshold_kj_kg(state.temperature_k);
@@ -110,11 +98,7 @@ pub fn screen(input: &ExcessInput<'_>) -> ExcessFuel {
         threshold_kj_kg,
         layer_temperature_k: state.temperature_k,
         burn,
-        outcome: if high_kj_kg < threshold_kj_kg {
-            Outcome::NotIndicated
-        } else {
-            Outcome::CannotBeExcluded
-        },
+        outcome: if high_kj_kg < threshold_kj_kg { Outcome::NotIndicated } else { Outcome::CannotBeExcluded },
     }
 }
 

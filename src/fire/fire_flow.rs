@@ -58,9 +58,7 @@ pub fn royer_nelson_l_min(volume_m3: f64) -> f64 {
 /// ```
 #[must_use]
 pub fn nfa_l_min(floor_area_m2: f64, involved_share: f64) -> f64 {
-    LITRES_PER_GALLON / SQUARE_METRES_PER_SQUARE_FOOT / 3.0
-        * floor_area_m2.max(0.0)
-        * involved_share
+    LITRES_PER_GALLON / SQUARE_METRES_PER_SQUARE_FOOT / 3.0 * floor_area_m2.max(0.0) * involved_share
 }
 
 /// What a share exceeds of the range of [`nfa_l_min`]: up to about half involved.
@@ -174,11 +172,7 @@ pub fn compare(needed_l_min: f64, available_l_min: f64) -> Supply {
     Supply {
         needed_l_min,
         available_l_min,
-        ratio: if needed_l_min > 0.0 {
-            available_l_min / needed_l_min
-        } else {
-            f64::INFINITY
-        },
+        ratio: if needed_l_min > 0.0 { available_l_min / needed_l_min } else { f64::INFINITY },
         shortfall_l_min: (needed_l_min - available_l_min).max(0.0),
     }
 }

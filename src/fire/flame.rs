@@ -61,10 +61,7 @@ pub fn dimensionless_heat_release(fire: RoundFire) -> f64 {
 pub fn heskestad_height_limits(fire: RoundFire) -> Exceeded {
     let q_star = dimensionless_heat_release(fire);
     Exceeded::none()
-        .when(
-            q_star < 0.1,
-            "too wide for its heat: the flame breaks up into many (Q* below 0.1)",
-        )
+        .when(q_star < 0.1, "too wide for its heat: the flame breaks up into many (Q* below 0.1)")
         .when(q_star > 1e4, "a jet rather than a fire (Q* above 10 000)")
 }
 

@@ -48,10 +48,7 @@ impl Enclosure {
     /// The opening of the room.
     #[must_use]
     pub fn opening(&self) -> WallOpening {
-        WallOpening {
-            area_m2: self.opening_area_m2,
-            height_m: self.opening_height_m,
-        }
+        WallOpening { area_m2: self.opening_area_m2, height_m: self.opening_height_m }
     }
 }
 
@@ -91,17 +88,13 @@ pub fn babrauskas_kw(room: Enclosure) -> f64 {
 #[must_use]
 pub fn babrauskas_limits(room: Enclosure) -> Exceeded {
     no_opening(room)
-        .when(
-            room.opening_height_m > 2.7,
-            "opening higher than those of the test rooms (about 1 to 2 m)",
-        )
+        .when(room.opening_height_m > 2.7, "opening higher than those of the test rooms (about 1 to 2 m)")
         .when(
             room.opening_height_m > 0.0 && room.opening_height_m < 0.3,
             "opening lower than those of the test rooms (about 1 to 2 m)",
         )
         .when(
-            room.opening().factor_m5_2() > 0.0
-                && room.bounding_area_m2 / room.opening().factor_m5_2() > 60.0,
+            room.opening().factor_m5_2() > 0.0 && room.bounding_area_m2 / room.opening().factor_m5_2() > 60.0,
             "surface large beside the opening: the losses that the rule leaves out decide",
         )
 }
@@ -137,8 +130,7 @@ pub fn thomas_kw(room: Enclosure) -> f64 {
     const SURFACE_LOSS_KW_PER_M2: f64 = 7.8;
     const OPENING_LOSS_KW_PER_M5_2: f64 = 378.0;
 
-    SURFACE_LOSS_KW_PER_M2 * room.bounding_area_m2
-        + OPENING_LOSS_KW_PER_M5_2 * room.opening().factor_m5_2()
+    SURFACE_LOSS_KW_PER_M2 * room.bounding_area_m2 + OPENING_LOSS_KW_PER_M5_2 * room.opening().factor_m5_2()
 }
 
 /// What a room exceeds of the range of [`thomas_kw`].
@@ -190,14 +182,8 @@ pub(super) const MCCAFFREY_FLASHOVER: f64 = 610.0;
 #[must_use]
 pub fn mccaffrey_limits(room: Enclosure) -> Exceeded {
     no_opening(room)
-        .when(
-            room.opening_height_m > 2.7,
-            "opening higher than the rooms of the fit (0.3 to 2.7 m)",
-        )
-        .when(
-            room.bounding_area_m2 > 250.0,
-            "surface far larger than in the rooms of the fit",
-        )
+        .when(room.opening_height_m > 2.7, "opening higher than the rooms of the fit (0.3 to 2.7 m)")
+        .when(room.bounding_area_m2 > 250.0, "surface far larger than in the rooms of the fit")
 }
 
 fn no_opening(room: Enclosure) -> Exceeded {

@@ -57,11 +57,7 @@ pub struct Fallout {
 pub fn fallout(glazing: Glazing) -> Option<Fallout> {
     let celsius = |low: f64, typical: f64, high: f64| {
         const ICE: f64 = super::constants::ICE_POINT_K;
-        Some(Fallout {
-            low_k: low + ICE,
-            typical_k: typical + ICE,
-            high_k: high + ICE,
-        })
+        Some(Fallout { low_k: low + ICE, typical_k: typical + ICE, high_k: high + ICE })
     };
     match glazing {
         Glazing::Float3Mm => celsius(290.0, 340.0, 390.0),
@@ -75,9 +71,7 @@ pub fn fallout(glazing: Glazing) -> Option<Fallout> {
 #[must_use]
 pub fn fallout_source(glazing: Glazing) -> &'static Source {
     match glazing {
-        Glazing::Float3Mm | Glazing::Float4To6Mm | Glazing::DoubleGlazed => {
-            &sources::BABRAUSKAS_GLASS_1997
-        }
+        Glazing::Float3Mm | Glazing::Float4To6Mm | Glazing::DoubleGlazed => &sources::BABRAUSKAS_GLASS_1997,
         Glazing::Tempered => &sources::WANG_2014,
         Glazing::Wired | Glazing::FireRated => &sources::EN_1634,
     }

@@ -138,12 +138,6 @@ pub fn t_squared_time_to_kw_s(growth_kw_s2: f64, heat_release_kw: f64) -> Option
 #[must_use]
 pub fn t_squared_limits(growth_kw_s2: f64) -> Exceeded {
     Exceeded::none()
-        .when(
-            growth_kw_s2 < 0.0027,
-            "growth slower than the slowest class (1055 kW in 600 s)",
-        )
-        .when(
-            growth_kw_s2 > 0.19,
-            "growth faster than the fastest class (1055 kW in 75 s)",
-        )
+        .when(growth_kw_s2 < 0.0027, "growth slower than the slowest class (1055 kW in 600 s)")
+        .when(growth_kw_s2 > 0.19, "growth faster than the fastest class (1055 kW in 75 s)")
 }

@@ -61,16 +61,10 @@ const MCCAFFREY_RISE: f64 = 6.85;
 #[must_use]
 pub fn mccaffrey_limits(room: Vented, rise_k: f64) -> Exceeded {
     Exceeded::none()
-        .when(
-            room.opening.factor_m5_2() <= 0.0,
-            "no wall opening: the correlation does not hold",
-        )
+        .when(room.opening.factor_m5_2() <= 0.0, "no wall opening: the correlation does not hold")
         .when(rise_k > 600.0, "rise above 600 K, the highest of the fit")
         .when(rise_k < 20.0, "rise below 20 K, the lowest of the fit")
-        .when(
-            room.opening.height_m > 2.7,
-            "opening higher than the rooms of the fit (0.3 to 2.7 m)",
-        )
+        .when(room.opening.height_m > 2.7, "opening higher than the rooms of the fit (0.3 to 2.7 m)")
 }
 
 /// Where the fire stands in the room.
@@ -146,17 +140,10 @@ pub struct GrowingVented<'a> {
 /// # Errors
 ///
 /// [`NotConverged`] where a number handed in is not finite.
-pub fn mccaffrey_time_to_rise_s(
-    room: &GrowingVented<'_>,
-    rise_k: f64,
-) -> Result<Option<f64>, NotConverged> {
+pub fn mccaffrey_time_to_rise_s(room: &GrowingVented<'_>, rise_k: f64) -> Result<Option<f64>, NotConverged> {
     // ΔT ≥ rise  ⇔  Q² ≥ (rise / (6.85 f))³ · A√H · Σ h_k A: no power in the loop.
     let per_factor_k = rise_k / (MCCAFFREY_RISE * room.position_factor);
-    first_time_over_loss_s(
-        "time at which the hot layer has risen",
-        room,
-        per_factor_k.powi(3),
-    )
+    first_time_over_loss_s("time at which the hot layer has risen", room, per_factor_k.powi(3))
 }
 
 /// First time at which a growing fire has the heat release that
@@ -167,9 +154,7 @@ pub fn mccaffrey_time_to_rise_s(
 /// # Errors
 ///
 /// [`NotConverged`] where a number handed in is not finite.
-pub fn mccaffrey_time_to_flashover_s(
-    room: &GrowingVented<'_>,
-) -> Result<Option<f64>, NotConverged> {
+pub fn mccaffrey_time_to_flashover_s(room: &GrowingVented<'_>) -> Result<Option<f64>, NotConverged> {
     let coefficient = flashover::MCCAFFREY_FLASHOVER * flashover::MCCAFFREY_FLASHOVER;
     first_time_over_loss_s("time to flashover by McCaffrey", room, coefficient)
 }
@@ -189,8 +174,7 @@ fn first_time_over_loss_s(
     }
     let reached = |time_s: f64| {
         let heat_kw = phases.heat_release_kw(room.fire.growth_kw_s2, time_s);
-        heat_kw * heat_kw
-            >= coefficient * factor_m5_2 * total_conductance_kw_k(room.surfaces, time_s)
+        heat_kw * heat_kw >= coefficient * factor_m5_2 * total_conductance_kw_k(room.surfaces, time_s)
     };
     if reached(phases.decay_start_s) {
         return search::first_time_s(what, 0.0, phases.decay_start_s, reached).map(Some);
@@ -271,10 +255,7 @@ pub fn foote_pagni_alvares_rise_k(room: Forced) -> f64 {
 #[must_use]
 pub fn foote_pagni_alvares_limits(room: Forced, rise_k: f64) -> Exceeded {
     Exceeded::none()
-        .when(
-            room.mass_flow_kg_s <= 0.0,
-            "no forced flow: the closed-room form counts instead",
-        )
+        .when(room.mass_flow_kg_s <= 0.0, "no forced flow: the closed-room form counts instead")
         .when(
             !(150.0..=490.0).contains(&room.heat_release_kw),
             "heat release outside the 150 to 490 kW of the tests",
@@ -283,10 +264,7 @@ pub fn foote_pagni_alvares_limits(room: Forced, rise_k: f64) -> Exceeded {
             !(0.11..=0.325).contains(&room.mass_flow_kg_s),
             "air flow outside the 0.11 to 0.325 kg/s of the tests",
         )
-        .when(
-            rise_k > 300.0,
-            "layer hotter than the 100 to 300 °C of the tests",
-        )
+        .when(rise_k > 300.0, "layer hotter than the 100 to 300 °C of the tests")
 }
 
 /// Rise of the layer in a fan-driven room, in K, by Deal and Beyler.
@@ -311,17 +289,13 @@ pub fn foote_pagni_alvares_limits(room: Forced, rise_k: f64) -> Exceeded {
 /// ```
 #[must_use]
 pub fn deal_beyler_rise_k(room: Forced) -> f64 {
-    room.heat_release_kw.max(0.0)
-        / (room.mass_flow_kg_s * room.specific_heat_kj_kgk + room.conductance_kw_k)
+    room.heat_release_kw.max(0.0) / (room.mass_flow_kg_s * room.specific_heat_kj_kgk + room.conductance_kw_k)
 }
 
 /// What a time exceeds of the range of [`deal_beyler_rise_k`].
 #[must_use]
 pub fn deal_beyler_limits(time_s: f64) -> Exceeded {
-    Exceeded::none().when(
-        time_s > 2000.0,
-        "later than about 2000 s, the end of the fitted tests",
-    )
+    Exceeded::none().when(time_s > 2000.0, "later than about 2000 s, the end of the fitted tests")
 }
 
 /// A steady fire in a shut room.
@@ -378,11 +352,7 @@ pub fn beyler_closed_rise_k(room: Closed) -> f64 {
     let k2 = room.heat_release_kw.max(0.0) / capacity_kj_k;
     let x = k1 * room.time_s.max(0.0).sqrt();
     // x - 1 + e^(-x) loses all digits for a small x: e^(-x) - 1 is what `exp_m1` keeps.
-    if k1 > 0.0 {
-        2.0 * k2 / (k1 * k1) * (x + (-x).exp_m1())
-    } else {
-        k2 * room.time_s.max(0.0)
-    }
+    if k1 > 0.0 { 2.0 * k2 / (k1 * k1) * (x + (-x).exp_m1()) } else { k2 * room.time_s.max(0.0) }
 }
 
 /// What a state exceeds of the range of [`beyler_closed_rise_k`]: shut but leaky enough not to build up
@@ -392,12 +362,8 @@ pub fn beyler_closed_limits(room: Closed, rise_k: f64) -> Exceeded {
     let released_kj = room.heat_release_kw * room.time_s;
     Exceeded::none()
         .when(
-            released_kj
-                > super::oxygen::usable_heat_kj(room.air_mass_kg, super::oxygen::LIMIT_AT_AMBIENT),
+            released_kj > super::oxygen::usable_heat_kj(room.air_mass_kg, super::oxygen::LIMIT_AT_AMBIENT),
             "more heat than the oxygen of the shut room yields",
         )
-        .when(
-            rise_k > 150.0,
-            "rise above 150 K, where the lost gas mass begins to matter",
-        )
+        .when(rise_k > 150.0, "rise above 150 K, where the lost gas mass begins to matter")
 }

@@ -20,9 +20,7 @@ pub fn surface_area_m2(area_m2: f64, leakage_ratio: f64) -> f64 {
 #[must_use]
 pub fn expansion_m3_s(net_heat_release_kw: f64, ambient_temperature_k: f64) -> f64 {
     net_heat_release_kw.max(0.0)
-        / (air_density_kg_m3(ambient_temperature_k)
-            * AIR_SPECIFIC_HEAT_KJ_KGK
-            * ambient_temperature_k)
+        / (air_density_kg_m3(ambient_temperature_k) * AIR_SPECIFIC_HEAT_KJ_KGK * ambient_temperature_k)
 }
 
 /// Overpressure of a leaky shut room with a steady fire, in Pa.
@@ -32,8 +30,7 @@ pub fn expansion_m3_s(net_heat_release_kw: f64, ambient_temperature_k: f64) -> f
 /// ```
 #[must_use]
 pub fn quasi_steady_pressure_pa(vent: PressureInput) -> f64 {
-    let mass_flow_kg_s =
-        vent.net_heat_release_kw / (AIR_SPECIFIC_HEAT_KJ_KGK * vent.ambient_temperature_k);
+    let mass_flow_kg_s = vent.net_heat_release_kw / (AIR_SPECIFIC_HEAT_KJ_KGK * vent.ambient_temperature_k);
     let flux = mass_flow_kg_s / (vent.discharge_coefficient * vent.leakage_area_m2);
     flux * flux / (2.0 * air_density_kg_m3(vent.ambient_temperature_k))
 }

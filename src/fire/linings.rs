@@ -58,9 +58,7 @@ impl Surface {
 #[must_use]
 pub fn penetration_time_s(surface: &Surface) -> f64 {
     let half_m = 0.5 * surface.thickness_m;
-    surface.density_kg_m3 * surface.specific_heat_j_kgk / surface.conductivity_w_mk
-        * half_m
-        * half_m
+    surface.density_kg_m3 * surface.specific_heat_j_kgk / surface.conductivity_w_mk * half_m * half_m
 }
 
 /// Effective conductance of a lining a time after the fire began, in kW/(m² K).
@@ -99,21 +97,14 @@ pub fn conductance_kw_m2k(surface: &Surface, time_s: f64) -> f64 {
 /// which is this sum.
 #[must_use]
 pub fn total_conductance_kw_k(surfaces: &[Surface], time_s: f64) -> f64 {
-    surfaces
-        .iter()
-        .map(|s| conductance_kw_m2k(s, time_s) * s.area_m2)
-        .sum()
+    surfaces.iter().map(|s| conductance_kw_m2k(s, time_s) * s.area_m2).sum()
 }
 
 /// Conductance weighted by area, in kW/(m² K); zero without surfaces.
 #[must_use]
 pub fn mean_conductance_kw_m2k(surfaces: &[Surface], time_s: f64) -> f64 {
     let area_m2 = total_area_m2(surfaces);
-    if area_m2 > 0.0 {
-        total_conductance_kw_k(surfaces, time_s) / area_m2
-    } else {
-        0.0
-    }
+    if area_m2 > 0.0 { total_conductance_kw_k(surfaces, time_s) / area_m2 } else { 0.0 }
 }
 
 /// Area of all surfaces, m².

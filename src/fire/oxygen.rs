@@ -23,20 +23,12 @@ pub struct LimitingOxygen {
 
 impl LimitingOxygen {
     /// 0.15 and 1700 K.
-    pub const TYPICAL: Self = Self {
-        at_ambient_mass_fraction: LIMIT_AT_AMBIENT,
-        flame_temperature_k: 1700.0,
-    };
+    pub const TYPICAL: Self =
+        Self { at_ambient_mass_fraction: LIMIT_AT_AMBIENT, flame_temperature_k: 1700.0 };
     /// Flames go out early: 0.16 and 1800 K.
-    pub const EARLY: Self = Self {
-        at_ambient_mass_fraction: 0.16,
-        flame_temperature_k: 1800.0,
-    };
+    pub const EARLY: Self = Self { at_ambient_mass_fraction: 0.16, flame_temperature_k: 1800.0 };
     /// Flames go out late: 0.13 and 1600 K.
-    pub const LATE: Self = Self {
-        at_ambient_mass_fraction: 0.13,
-        flame_temperature_k: 1600.0,
-    };
+    pub const LATE: Self = Self { at_ambient_mass_fraction: 0.13, flame_temperature_k: 1600.0 };
 }
 
 /// Mass fraction of oxygen below which a flame goes out.
@@ -90,9 +82,7 @@ pub fn extinction_mass_fraction(limit: LimitingOxygen, temperature_k: f64) -> f6
 /// ```
 #[must_use]
 pub fn usable_heat_kj(air_mass_kg: f64, limit_mass_fraction: f64) -> f64 {
-    air_mass_kg
-        * (OXYGEN_IN_AIR_MASS_FRACTION - limit_mass_fraction).max(0.0)
-        * HEAT_PER_OXYGEN_KJ_KG
+    air_mass_kg * (OXYGEN_IN_AIR_MASS_FRACTION - limit_mass_fraction).max(0.0) * HEAT_PER_OXYGEN_KJ_KG
 }
 
 /// Mass fraction of oxygen in air or smoke from its mole fraction, with the mean molar mass of air.
@@ -173,10 +163,7 @@ pub fn burn_shut(fire: &DesignFire, room: &ShutRoom<'_>, horizon_s: f64) -> Shut
     };
     let end_s = horizon_s.min(phases.end_s);
     while now.time_s < end_s {
-        let step_s = (0.02 * now.time_s)
-            .max(1.0)
-            .min(end_s - now.time_s)
-            .max(1e-6);
+        let step_s = (0.02 * now.time_s).max(1.0).min(end_s - now.time_s).max(1e-6);
         let middle_s = now.time_s + 0.5 * step_s;
         let gasified_kw = phases.heat_release_kw(fire.growth_kw_s2, middle_s);
         let limit = extinction_mass_fraction(room.limit, now.temperature_k);
@@ -184,10 +171,7 @@ pub fn burn_shut(fire: &DesignFire, room: &ShutRoom<'_>, horizon_s: f64) -> Shut
             / (2.0 * HALF_RAMP_MASS_FRACTION))
             .clamp(0.0, 1.0);
         if burning < OUT_AT_SHARE {
-            return ShutBurn {
-                state: now,
-                starved: true,
-            };
+            return ShutBurn { state: now, starved: true };
         }
         let heat_kw = burning * gasified_kw;
 
@@ -232,10 +216,7 @@ pub fn burn_shut(fire: &DesignFire, room: &ShutRoom<'_>, horizon_s: f64) -> Shut
             peak_temperature_k: now.peak_temperature_k.max(temperature_k),
         };
     }
-    ShutBurn {
-        state: now,
-        starved: false,
-    }
+    ShutBurn { state: now, starved: false }
 }
 
 /// Time at which a fire has used the oxygen of a shut room down to a limit, in s, by the plain budget; none
@@ -270,13 +251,8 @@ pub fn budget_time_s(
 /// What a room exceeds of the range of [`burn_shut`].
 #[must_use]
 pub fn burn_shut_limits(room: &ShutRoom<'_>) -> Exceeded {
-    Exceeded::none()
-        .when(
-            room.volume_m3 > 500.0,
-            "volume above 500 m³: the gas is hardly well mixed",
-        )
-        .when(
-            room.leakage_area_m2 > 0.001 * room.volume_m3,
-            "leakage like that of an opening: the openings count instead",
-        )
+    Exceeded::none().when(room.volume_m3 > 500.0, "volume above 500 m³: the gas is hardly well mixed").when(
+        room.leakage_area_m2 > 0.001 * room.volume_m3,
+        "leakage like that of an opening: the openings count instead",
+    )
 }

@@ -178,14 +178,8 @@ pub fn thomas_large_fire_kg_s(perimeter_m: f64, height_m: f64) -> f64 {
 #[must_use]
 pub fn thomas_large_fire_limits(perimeter_m: f64, height_m: f64) -> Exceeded {
     Exceeded::none()
-        .when(
-            height_m > 2.5 * perimeter_m,
-            "higher above the fire than 2.5 perimeters",
-        )
-        .when(
-            !(0.9..=14.0).contains(&perimeter_m),
-            "perimeter outside 0.9 to 14 m",
-        )
+        .when(height_m > 2.5 * perimeter_m, "higher above the fire than 2.5 perimeters")
+        .when(!(0.9..=14.0).contains(&perimeter_m), "perimeter outside 0.9 to 14 m")
 }
 
 /// State on the axis of a plume, by McCaffrey.
@@ -226,17 +220,9 @@ pub struct McCaffreyPlume {
 /// assert!((plume.rise_k - 420.0).abs() < 1.0 && (plume.velocity_m_s - 4.77).abs() < 0.01);
 /// ```
 #[must_use]
-pub fn mccaffrey(
-    heat_release_kw: f64,
-    height_m: f64,
-    ambient_temperature_k: f64,
-) -> McCaffreyPlume {
+pub fn mccaffrey(heat_release_kw: f64, height_m: f64, ambient_temperature_k: f64) -> McCaffreyPlume {
     if heat_release_kw <= 0.0 || height_m <= 0.0 {
-        return McCaffreyPlume {
-            rise_k: 0.0,
-            velocity_m_s: 0.0,
-            mass_flow_kg_s: 0.0,
-        };
+        return McCaffreyPlume { rise_k: 0.0, velocity_m_s: 0.0, mass_flow_kg_s: 0.0 };
     }
     let x = height_m / heat_release_kw.powf(0.4);
     let (kappa, eta, a, b) = if x < 0.08 {

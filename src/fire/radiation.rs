@@ -27,17 +27,12 @@ use super::constants::STEFAN_BOLTZMANN_KW_M2K4;
 /// ```
 #[must_use]
 pub fn point_source_kw_m2(heat_release_kw: f64, radiative_fraction: f64, distance_m: f64) -> f64 {
-    radiative_fraction * heat_release_kw.max(0.0)
-        / (4.0 * std::f64::consts::PI * distance_m * distance_m)
+    radiative_fraction * heat_release_kw.max(0.0) / (4.0 * std::f64::consts::PI * distance_m * distance_m)
 }
 
 /// Heat release that gives a flux at a distance, in kW: [`point_source_kw_m2`] turned round.
 #[must_use]
-pub fn point_source_heat_release_kw(
-    flux_kw_m2: f64,
-    radiative_fraction: f64,
-    distance_m: f64,
-) -> f64 {
+pub fn point_source_heat_release_kw(flux_kw_m2: f64, radiative_fraction: f64, distance_m: f64) -> f64 {
     4.0 * std::f64::consts::PI * distance_m * distance_m * flux_kw_m2 / radiative_fraction
 }
 
@@ -109,9 +104,7 @@ pub fn layer_flux_kw_m2(layer: HotLayer) -> f64 {
 #[must_use]
 pub fn layer_temperature_for_flux_k(layer: HotLayer, flux_kw_m2: f64) -> f64 {
     let seen = layer.view_factor * layer.emissivity * STEFAN_BOLTZMANN_KW_M2K4;
-    (flux_kw_m2 / seen + layer.surface_temperature_k.powi(4))
-        .sqrt()
-        .sqrt()
+    (flux_kw_m2 / seen + layer.surface_temperature_k.powi(4)).sqrt().sqrt()
 }
 
 /// Share of the sky that a rectangle overhead fills, seen from the point below its middle.

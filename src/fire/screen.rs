@@ -85,10 +85,7 @@ impl Screen {
     /// Lowest and highest heat release asked for by the correlations in range, kW; by all three where none is.
     #[must_use]
     pub fn required_span_kw(&self) -> (f64, f64) {
-        let any_in_range = self
-            .requirements()
-            .iter()
-            .any(|(_, r)| r.exceeded.is_empty());
+        let any_in_range = self.requirements().iter().any(|(_, r)| r.exceeded.is_empty());
         self.requirements()
             .iter()
             .filter(|(_, r)| !any_in_range || r.exceeded.is_empty())
@@ -115,27 +112,16 @@ pub fn flashover_screen(input: &ScreenInput<'_>) -> Result<Screen, NotConverged>
     let fire = input.fire.capped_kw(ventilation_limit_kw);
     let phases = fire.phases();
     let available_kw = phases.reached_kw;
-    let limited_by = if ventilation_limit_kw < fuel_limit_kw {
-        LimitedBy::Ventilation
-    } else {
-        LimitedBy::Fuel
-    };
+    let limited_by =
+        if ventilation_limit_kw < fuel_limit_kw { LimitedBy::Ventilation } else { LimitedBy::Fuel };
 
     let conductance_kw_k = total_conductance_kw_k(input.surfaces, phases.decay_start_s);
-    let growing = GrowingVented {
-        fire,
-        opening,
-        surfaces: input.surfaces,
-        position_factor: input.position_factor,
-    };
+    let growing =
+        GrowingVented { fire, opening, surfaces: input.surfaces, position_factor: input.position_factor };
 
     let babrauskas_kw = flashover::babrauskas_kw(room);
     let thomas_kw = flashover::thomas_kw(room);
-    let vented = Vented {
-        heat_release_kw: available_kw,
-        opening,
-        conductance_kw_k,
-    };
+    let vented = Vented { heat_release_kw: available_kw, opening, conductance_kw_k };
     let hot_layer_rise_k = input.position_factor * hot_layer::mccaffrey_rise_k(vented);
     let open = ventilation_limit_kw > 0.0;
     Ok(Screen {
@@ -150,11 +136,7 @@ pub fn flashover_screen(input: &ScreenInput<'_>) -> Result<Screen, NotConverged>
             exceeded: flashover::thomas_limits(room),
         },
         mccaffrey: Requirement {
-            required_kw: if open {
-                flashover::mccaffrey_kw(room, conductance_kw_k)
-            } else {
-                0.0
-            },
+            required_kw: if open { flashover::mccaffrey_kw(room, conductance_kw_k) } else { 0.0 },
             time_s: hot_layer::mccaffrey_time_to_flashover_s(&growing)?,
             exceeded: flashover::mccaffrey_limits(room),
         },

@@ -31,12 +31,5 @@ pub(super) fn first_time_s(
         }
     }
     // An interval so long that its ends are further apart than the tolerance in the last bit.
-    if to_s - from_s <= 1e-9 * to_s {
-        Ok(to_s)
-    } else {
-        Err(NotConverged {
-            what,
-            after: MAX_STEPS,
-        })
-    }
+    if to_s - from_s <= 1e-9 * to_s { Ok(to_s) } else { Err(NotConverged { what, after: MAX_STEPS }) }
 }

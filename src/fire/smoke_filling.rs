@@ -44,9 +44,8 @@ const ENTRAINED_VOLUME: f64 = 0.064;
 /// ```
 #[must_use]
 pub fn zukoski_height_m(room: FillingRoom, cube_root_integral_kw13_s: f64) -> f64 {
-    let filled =
-        2.0 * ENTRAINED_VOLUME * room.height_m.powf(2.0 / 3.0) * cube_root_integral_kw13_s.max(0.0)
-            / (3.0 * room.floor_area_m2);
+    let filled = 2.0 * ENTRAINED_VOLUME * room.height_m.powf(2.0 / 3.0) * cube_root_integral_kw13_s.max(0.0)
+        / (3.0 * room.floor_area_m2);
     room.height_m * (1.0 + filled).powf(-1.5)
 }
 
@@ -103,12 +102,9 @@ pub fn zukoski_time_to_height_s(
     if growing <= phases.growth_end_s {
         return Ok(Some(growing));
     }
-    super::search::first_time_s(
-        "time for the layer to come down",
-        0.0,
-        phases.end_s,
-        |time_s| cube_root_integral_kw13_s(fire, time_s) >= needed,
-    )
+    super::search::first_time_s("time for the layer to come down", 0.0, phases.end_s, |time_s| {
+        cube_root_integral_kw13_s(fire, time_s) >= needed
+    })
     .map(Some)
 }
 
@@ -118,14 +114,8 @@ pub fn zukoski_time_to_height_s(
 pub fn zukoski_limits(room: FillingRoom) -> Exceeded {
     let shape = room.floor_area_m2 / (room.height_m * room.height_m);
     Exceeded::none()
-        .when(
-            shape < 0.4,
-            "a shaft: the plume meets the walls before the ceiling",
-        )
-        .when(
-            shape > 100.0,
-            "so wide that the smoke cools and mixes before it has spread",
-        )
+        .when(shape < 0.4, "a shaft: the plume meets the walls before the ceiling")
+        .when(shape > 100.0, "so wide that the smoke cools and mixes before it has spread")
 }
 
 /// First smoke above the floor under a steady fire, in m, by NFPA 92. Not below zero nor above the ceiling.
@@ -194,14 +184,8 @@ pub fn nfpa92_t_squared_height_m(room: FillingRoom, growth_time_s: f64, time_s: 
 pub fn nfpa92_steady_limits(room: FillingRoom, layer_height_m: f64) -> Exceeded {
     let shape = room.floor_area_m2 / (room.height_m * room.height_m);
     Exceeded::none()
-        .when(
-            !(0.9..=14.0).contains(&shape),
-            "floor area over height squared outside 0.9 to 14",
-        )
-        .when(
-            layer_height_m < 0.2 * room.height_m,
-            "layer lower than a fifth of the height",
-        )
+        .when(!(0.9..=14.0).contains(&shape), "floor area over height squared outside 0.9 to 14")
+        .when(layer_height_m < 0.2 * room.height_m, "layer lower than a fifth of the height")
 }
 
 /// What a state exceeds of the range of [`nfpa92_t_squared_height_m`]: `A/H²` 1 to 23, `z/H` at least 0.2.
@@ -209,12 +193,6 @@ pub fn nfpa92_steady_limits(room: FillingRoom, layer_height_m: f64) -> Exceeded 
 pub fn nfpa92_t_squared_limits(room: FillingRoom, layer_height_m: f64) -> Exceeded {
     let shape = room.floor_area_m2 / (room.height_m * room.height_m);
     Exceeded::none()
-        .when(
-            !(1.0..=23.0).contains(&shape),
-            "floor area over height squared outside 1 to 23",
-        )
-        .when(
-            layer_height_m < 0.2 * room.height_m,
-            "layer lower than a fifth of the height",
-        )
+        .when(!(1.0..=23.0).contains(&shape), "floor area over height squared outside 1 to 23")
+        .when(layer_height_m < 0.2 * room.height_m, "layer lower than a fifth of the height")
 }

@@ -50,12 +50,6 @@ pub fn evans_kw(spray: Spray) -> f64 {
 #[must_use]
 pub fn evans_limits(spray: Spray) -> Exceeded {
     Exceeded::none()
-        .when(
-            spray.density_mm_s < 0.06,
-            "less water than the 0.06 mm/s of the tests",
-        )
-        .when(
-            spray.heat_release_kw > 5000.0,
-            "larger when the sprinkler opens than the fires of the tests",
-        )
+        .when(spray.density_mm_s < 0.06, "less water than the 0.06 mm/s of the tests")
+        .when(spray.heat_release_kw > 5000.0, "larger when the sprinkler opens than the fires of the tests")
 }

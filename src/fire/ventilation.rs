@@ -46,14 +46,11 @@ impl WallOpening {
 /// ```
 #[must_use]
 pub fn combine(openings: impl IntoIterator<Item = WallOpening>) -> WallOpening {
-    let (area_m2, moment_m3) = openings.into_iter().fold((0.0, 0.0), |(area, moment), o| {
-        (area + o.area_m2, moment + o.area_m2 * o.height_m)
-    });
+    let (area_m2, moment_m3) = openings
+        .into_iter()
+        .fold((0.0, 0.0), |(area, moment), o| (area + o.area_m2, moment + o.area_m2 * o.height_m));
     if area_m2 > 0.0 {
-        WallOpening {
-            area_m2,
-            height_m: moment_m3 / area_m2,
-        }
+        WallOpening { area_m2, height_m: moment_m3 / area_m2 }
     } else {
         WallOpening::default()
     }
@@ -120,10 +117,7 @@ pub fn kawagoe_limits(opening: WallOpening) -> Exceeded {
             opening.factor_m5_2() <= 0.0,
             "no wall opening: the limit is zero and the oxygen in the room counts instead",
         )
-        .when(
-            opening.height_m > 4.0,
-            "opening higher than about 4 m: the room is hardly well mixed",
-        )
+        .when(opening.height_m > 4.0, "opening higher than about 4 m: the room is hardly well mixed")
 }
 
 /// Gas and air on either side of an opening, for [`rockett_inflow_kg_s`].
