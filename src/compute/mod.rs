@@ -5,6 +5,7 @@
 //! whoever finds a lane full is told so at once. Work whose asker has gone away is told to stop.
 
 mod queue;
+mod watch;
 #[cfg(test)]
 mod tests;
 
@@ -17,6 +18,7 @@ use std::thread;
 use tokio::sync::oneshot;
 
 use queue::Queue;
+pub use watch::Watch;
 
 /// How many pieces of work may wait in each lane.
 const WAITING_PER_LANE: usize = 64;
