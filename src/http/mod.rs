@@ -6,20 +6,34 @@
 pub mod app;
 pub mod problem;
 
+mod answer;
 mod ask;
+mod assessing;
+mod assessments;
 mod body;
+mod buildings;
 mod caller;
+mod change;
 mod conditional;
 mod docs;
 mod document;
+mod examples;
+mod forms;
+mod headers;
+mod kept;
 mod layers;
 mod media;
+mod methods;
 mod metrics;
+mod openings;
 mod pages;
 mod paging;
 mod params;
 mod probes;
+mod refusal;
+mod rooms;
 mod routes;
+mod summary;
 
 pub use app::{App, Clock, Ids, Parts, SystemClock, UniqueIds};
 pub use document::openapi;

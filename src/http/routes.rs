@@ -3,13 +3,36 @@
 use axum::Router;
 use axum::routing::get;
 use utoipa_axum::router::OpenApiRouter;
+use utoipa_axum::routes;
 
 use super::app::App;
-use super::{docs, document, layers, metrics, pages, probes, problem};
+use super::{
+    assessments, buildings, docs, document, layers, methods, metrics, openings, pages, probes, problem, rooms,
+};
 
 /// The operations of the interface. What is registered here is in the OpenAPI document too.
 pub(super) fn operations() -> OpenApiRouter<App> {
     OpenApiRouter::new()
+        .routes(routes!(buildings::list_buildings, buildings::create_building))
+        .routes(routes!(
+            buildings::get_building,
+            buildings::put_building,
+            buildings::patch_building,
+            buildings::delete_building
+        ))
+        .routes(routes!(rooms::get_room, rooms::put_room, rooms::patch_room, rooms::delete_room))
+        .routes(routes!(
+            openings::get_opening,
+            openings::put_opening,
+            openings::patch_opening,
+            openings::delete_opening
+        ))
+        .routes(routes!(assessments::list_assessments, assessments::create_assessment))
+        .routes(routes!(assessments::get_latest_assessment))
+        .routes(routes!(assessments::get_assessment))
+        .routes(routes!(assessments::get_room_report))
+        .routes(routes!(assessments::assess))
+        .routes(routes!(methods::list_methods))
 }
 
 /// The whole service.
