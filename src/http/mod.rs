@@ -1,1 +1,41 @@
-//! Routes, extractors, errors to status.
+//! Routes, extractors, errors to statuses.
+//!
+//! A handler converts, calls one method of the store or one piece of computing, and answers.
+//! [`routes`] is the list of them all.
+
+pub mod app;
+pub mod problem;
+
+mod answer;
+mod ask;
+mod assessing;
+mod assessments;
+mod body;
+mod buildings;
+mod caller;
+mod change;
+mod conditional;
+mod docs;
+mod document;
+mod examples;
+mod forms;
+mod headers;
+mod kept;
+mod layers;
+mod media;
+mod methods;
+mod metrics;
+mod openings;
+mod pages;
+mod paging;
+mod params;
+mod probes;
+mod refusal;
+mod rooms;
+mod routes;
+mod summary;
+
+pub use app::{App, Clock, Ids, Parts, SystemClock, UniqueIds};
+pub use document::openapi;
+pub use metrics::Metrics;
+pub use routes::router;
