@@ -8,7 +8,7 @@ pub mod problem;
 
 mod answer;
 mod ask;
-mod assessing;
+pub mod assessing;
 mod assessments;
 mod body;
 mod buildings;
