@@ -11,6 +11,9 @@ pub const MAX_ROOMS: usize = 500;
 /// Most openings a building may have.
 pub const MAX_OPENINGS: usize = 2000;
 
+/// Lowest and highest floor number.
+pub const FLOOR_NUMBERS: std::ops::RangeInclusive<i32> = -50..=300;
+
 /// Where post finds it.
 #[derive(Debug, Clone, PartialEq, Eq, Default)]
 pub struct Address {
@@ -210,6 +213,11 @@ impl Building {
     /// The room of this key.
     pub fn room(&self, key: &Key) -> Option<&Room> {
         self.rooms.iter().find(|room| room.key == *key)
+    }
+
+    /// The opening of this key.
+    pub fn opening(&self, key: &Key) -> Option<&Opening> {
+        self.openings.iter().find(|opening| opening.key == *key)
     }
 
     /// The openings of this room.

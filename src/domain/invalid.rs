@@ -3,7 +3,7 @@
 use std::fmt;
 
 /// A JSON Pointer (RFC 6901) to a member of the input.
-#[derive(Debug, Clone, PartialEq, Eq, PartialOrd, Ord, Default)]
+#[derive(Debug, Clone, PartialEq, Eq, PartialOrd, Ord, Hash, Default)]
 pub struct Pointer(String);
 
 impl Pointer {
@@ -22,6 +22,17 @@ impl Pointer {
     #[must_use]
     pub fn element(&self, index: usize) -> Self {
         Self(format!("{}/{index}", self.0))
+    }
+
+    /// The name or number of the last step; empty at the root.
+    pub fn last(&self) -> &str {
+        self.0.rsplit('/').next().unwrap_or_default()
+    }
+
+    /// What remains of the pointer below `base`, if it lies there.
+    pub fn below(&self, base: &Self) -> Option<Self> {
+        let rest = self.0.strip_prefix(base.as_str())?;
+        (rest.is_empty() || rest.starts_with('/')).then(|| Self(rest.to_owned()))
     }
 
     /// The pointer as RFC 6901 writes it.

@@ -6,6 +6,8 @@
 pub mod assumptions;
 pub mod building;
 pub mod caller;
+pub mod check;
+pub mod edit;
 pub mod ids;
 pub mod invalid;
 pub mod named;
@@ -14,6 +16,8 @@ pub mod properties;
 pub mod quantity;
 pub mod room;
 pub mod time;
+pub mod units;
+pub mod word;
 
 pub use assumptions::Assumptions;
 pub use building::Building;
@@ -24,3 +28,4 @@ pub use named::Named;
 pub use opening::Opening;
 pub use quantity::Quantity;
 pub use room::Room;
+pub use word::Word;

@@ -109,6 +109,24 @@ pub struct Opening {
 }
 
 impl Opening {
+    /// Members whose basis can be recorded.
+    pub const BASIS_MEMBERS: &[&str] = &[
+        "kind",
+        "width_m",
+        "height_m",
+        "sill_m",
+        "open_fraction",
+        "held_open",
+        "self_closing",
+        "fire_rating_min",
+        "leakage_area_m2",
+        "swing",
+        "entry",
+        "side",
+        "azimuth_deg",
+        "glazing",
+    ];
+
     /// Whether the opening touches this room.
     pub fn touches(&self, room: &Key) -> bool {
         self.connects.iter().any(|side| matches!(side, Space::Room(key) if key == room))

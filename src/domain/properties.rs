@@ -40,7 +40,12 @@ pub trait Properties {
         Vec::new()
     }
 
-    /// Every number out of its limits, and every pair that contradicts itself.
+    /// What else is wrong, beyond single numbers and pairs.
+    fn own_fault(&self) -> Option<PropertyFault> {
+        None
+    }
+
+    /// Every number out of its limits, every pair that contradicts itself, and what else is wrong.
     fn faults(&self) -> Vec<PropertyFault> {
         let numbers = self.numbers();
         let value = |member| numbers.iter().find(|(name, _)| *name == member).map(|(_, v)| *v);
@@ -61,6 +66,7 @@ pub trait Properties {
                 faults.push(PropertyFault { member: low, reason: format!("must not exceed `{high}`") });
             }
         }
+        faults.extend(self.own_fault());
         faults
     }
 }
@@ -83,7 +89,7 @@ pub struct UseProperties {
     pub fire_load_p80_mj_m2: f64,
     /// Fire load that 95 % of such rooms stay below. At least the 80 % fractile.
     pub fire_load_p95_mj_m2: f64,
-    /// Growth coefficient α of the t² fire. 0.0001 to 20 kW/s².
+    /// Growth coefficient α of the t² fire. 0.0001 to 50 kW/s².
     pub growth_kw_s2: f64,
     /// Heat release per burning floor area, fuel-controlled. 10 to 20 000 kW/m².
     pub heat_release_per_area_kw_m2: f64,
@@ -100,7 +106,7 @@ impl Properties for UseProperties {
         limit("fire_load_mean_mj_m2", 1.0, 50_000.0),
         limit("fire_load_p80_mj_m2", 1.0, 50_000.0),
         limit("fire_load_p95_mj_m2", 1.0, 50_000.0),
-        limit("growth_kw_s2", 0.0001, 20.0),
+        limit("growth_kw_s2", 0.0001, 50.0),
         limit("heat_release_per_area_kw_m2", 10.0, 20_000.0),
     ];
 
@@ -131,6 +137,9 @@ pub enum IgnitionEase {
 }
 
 impl IgnitionEase {
+    /// Every one of them, for reading names and printing them.
+    pub const ALL: [Self; 3] = [Self::Easy, Self::Normal, Self::Hard];
+
     /// Received flux at which the thing is taken to ignite, in kW/m²: 10, 20 and 40.
     ///
     /// Source: Babrauskas, *Will the second item ignite?*, Fire Safety Journal 4 (1981/82).
@@ -162,7 +171,7 @@ pub struct ItemProperties {
     pub energy_mj: f64,
     /// Highest heat release, burning freely. 1 to 500 000 kW.
     pub peak_kw: f64,
-    /// Growth coefficient α of its t² fire. 0.0001 to 20 kW/s².
+    /// Growth coefficient α of its t² fire. 0.0001 to 50 kW/s².
     pub growth_kw_s2: f64,
     /// Area it burns over, seen from above. 0.01 to 1000 m².
     pub burning_area_m2: f64,
@@ -179,7 +188,7 @@ impl Properties for ItemProperties {
         limit("mass_kg", 0.01, 200_000.0),
         limit("energy_mj", 0.1, 5_000_000.0),
         limit("peak_kw", 1.0, 500_000.0),
-        limit("growth_kw_s2", 0.0001, 20.0),
+        limit("growth_kw_s2", 0.0001, 50.0),
         limit("burning_area_m2", 0.01, 1000.0),
         limit("height_m", 0.01, 50.0),
     ];
@@ -261,6 +270,14 @@ impl Properties for FuelProperties {
     fn ordered(&self) -> Vec<[&'static str; 2]> {
         vec![["chemical_heat_mj_kg", "heat_of_combustion_mj_kg"]]
     }
+
+    /// Without carbon or hydrogen the formula has nothing to burn.
+    fn own_fault(&self) -> Option<PropertyFault> {
+        (self.carbon == 0.0 && self.hydrogen == 0.0).then(|| PropertyFault {
+            member: "carbon",
+            reason: "must be above 0 when `hydrogen` is 0".into(),
+        })
+    }
 }
 
 /// What a combustible lining does to the growth of a fire in its room.
@@ -273,6 +290,9 @@ pub enum ExposedGrowth {
 }
 
 impl ExposedGrowth {
+    /// Every one of them, for reading names and printing them.
+    pub const ALL: [Self; 2] = [Self::Fast, Self::UltraFast];
+
     /// Least growth coefficient of a fire in a room so lined, in kW/s².
     ///
     /// The classes are those of EN 1991-1-2, Table E.5 (1 MW in 150 s and in 75 s, from
@@ -370,6 +390,10 @@ pub enum DetectorKind {
 }
 
 impl DetectorKind {
+    /// Every one of them, for reading names and printing them.
+    pub const ALL: [Self; 5] =
+        [Self::SmokePoint, Self::SmokeBeam, Self::SmokeAspirating, Self::HeatFixed, Self::HeatRateOfRise];
+
     /// Name on the wire and in the catalogue.
     pub const fn name(self) -> &'static str {
         match self {
@@ -417,6 +441,15 @@ impl Properties for DetectorProperties {
             ("activation_optical_density_1_m", self.activation_optical_density_1_m),
         ])
     }
+
+    /// A detector without a criterion would never act.
+    fn own_fault(&self) -> Option<PropertyFault> {
+        let criteria = self.numbers().iter().filter(|(member, _)| member.starts_with("activation_")).count();
+        (criteria == 0).then(|| PropertyFault {
+            member: "activation_rise_k",
+            reason: "must be given, or another criterion that makes the detector act".into(),
+        })
+    }
 }
 
 /// A sprinkler head, by what opens it and what it then gives.
@@ -447,5 +480,129 @@ impl Properties for SprinklerProperties {
             ("activation_c", self.activation_c),
             ("spray_density_mm_s", self.spray_density_mm_s),
         ]
+    }
+}
+
+#[cfg(test)]
+mod tests {
+    use super::*;
+
+    fn gypsum() -> MaterialProperties {
+        MaterialProperties {
+            conductivity_w_mk: 0.17,
+            density_kg_m3: 960.0,
+            specific_heat_j_kgk: 1100.0,
+            thickness_m: 0.0125,
+            combustible: false,
+            exposed_growth: None,
+        }
+    }
+
+    fn storage() -> UseProperties {
+        UseProperties {
+            fire_load_mean_mj_m2: 1180.0,
+            fire_load_p80_mj_m2: 1800.0,
+            fire_load_p95_mj_m2: 2690.0,
+            growth_kw_s2: 0.04444,
+            heat_release_per_area_kw_m2: 500.0,
+            sleeping: false,
+            way_out: false,
+            fuel: "wood".into(),
+        }
+    }
+
+    fn members(faults: Vec<PropertyFault>) -> Vec<&'static str> {
+        faults.into_iter().map(|fault| fault.member).collect()
+    }
+
+    #[test]
+    fn plausible_properties_have_no_faults() {
+        assert_eq!(gypsum().faults(), vec![]);
+        assert_eq!(storage().faults(), vec![]);
+    }
+
+    #[test]
+    fn both_ends_of_a_limit_are_accepted_and_the_next_number_is_not() {
+        for limit in MaterialProperties::LIMITS {
+            for (value, fine) in [
+                (limit.least, true),
+                (limit.most, true),
+                (limit.least.next_down(), false),
+                (limit.most.next_up(), false),
+                (-limit.most, false),
+                (f64::NAN, false),
+                (f64::INFINITY, false),
+            ] {
+                let mut material = gypsum();
+                let member = match limit.member {
+                    "conductivity_w_mk" => &mut material.conductivity_w_mk,
+                    "density_kg_m3" => &mut material.density_kg_m3,
+                    "specific_heat_j_kgk" => &mut material.specific_heat_j_kgk,
+                    "thickness_m" => &mut material.thickness_m,
+                    other => panic!("a limit without a member: {other}"),
+                };
+                *member = value;
+
+                let want = if fine { vec![] } else { vec![limit.member] };
+                assert_eq!(members(material.faults()), want, "{} = {value}", limit.member);
+            }
+        }
+    }
+
+    #[test]
+    fn every_fault_is_reported_at_once() {
+        let nonsense = MaterialProperties { density_kg_m3: -1.0, thickness_m: f64::NAN, ..gypsum() };
+
+        assert_eq!(members(nonsense.faults()), ["density_kg_m3", "thickness_m"]);
+    }
+
+    #[test]
+    fn fractiles_must_not_fall() {
+        let falling = UseProperties { fire_load_p80_mj_m2: 1000.0, fire_load_p95_mj_m2: 900.0, ..storage() };
+
+        assert_eq!(members(falling.faults()), ["fire_load_mean_mj_m2", "fire_load_p80_mj_m2"]);
+    }
+
+    #[test]
+    fn what_is_not_given_has_no_fault() {
+        let silent = DetectorProperties {
+            kind: DetectorKind::SmokePoint,
+            response_time_index_sqrt_ms: None,
+            activation_c: None,
+            activation_rise_k: Some(13.0),
+            activation_rate_k_min: None,
+            activation_optical_density_1_m: None,
+        };
+
+        assert_eq!(silent.faults(), vec![]);
+        assert_eq!(silent.numbers(), [("activation_rise_k", 13.0)]);
+        let deaf = DetectorProperties { activation_rise_k: None, ..silent };
+        assert_eq!(members(deaf.faults()), ["activation_rise_k"]);
+    }
+
+    #[test]
+    fn a_fuel_needs_carbon_or_hydrogen_and_cannot_release_more_than_it_holds() {
+        let methane = FuelProperties {
+            heat_of_combustion_mj_kg: 50.1,
+            chemical_heat_mj_kg: 49.6,
+            radiative_fraction: 0.141,
+            carbon: 1.0,
+            hydrogen: 4.0,
+            oxygen: 0.0,
+            nitrogen: 0.0,
+            chlorine: 0.0,
+            co_yield_kg_kg: None,
+            soot_yield_kg_kg: None,
+            hcn_yield_kg_kg: None,
+            stoichiometric_air_kg_kg: 17.2,
+        };
+        let hydrogen = FuelProperties { carbon: 0.0, ..methane.clone() };
+        let nothing = FuelProperties { hydrogen: 0.0, ..hydrogen.clone() };
+        let swapped = FuelProperties { chemical_heat_mj_kg: 51.0, ..methane.clone() };
+
+        assert_eq!(methane.faults(), vec![]);
+        assert_eq!(hydrogen.faults(), vec![]);
+        assert_eq!(members(nothing.faults()), ["carbon"]);
+        assert_eq!(members(swapped.faults()), ["chemical_heat_mj_kg"]);
     }
 }

@@ -1,6 +1,9 @@
 //! Quantities: a number with a unit and physical limits, checked on construction.
 
+use std::fmt;
 use std::marker::PhantomData;
+
+use super::units::{self, Unreadable};
 
 /// What a quantity measures: its name in the OpenAPI document, its unit, its limits.
 pub trait Kind: Copy + std::fmt::Debug + 'static {
@@ -23,13 +26,51 @@ pub struct Quantity<K: Kind>(f64, PhantomData<K>);
 impl<K: Kind> Quantity<K> {
     /// Checks the limits; NaN and infinities are outside them.
     pub fn new(value: f64) -> Option<Self> {
-        (K::MIN..=K::MAX).contains(&value).then_some(Self(value, PhantomData))
+        // Adding zero turns the negative zero into the other: they are the same quantity.
+        (K::MIN..=K::MAX).contains(&value).then_some(Self(value + 0.0, PhantomData))
     }
 
     /// The number, in the kind's unit.
     pub fn get(self) -> f64 {
         self.0
     }
+
+    /// Reads a text with a unit, such as `12 ft 6 in`.
+    pub fn parse(text: &str) -> Result<Self, Fault> {
+        let value = units::read(text, K::UNIT).map_err(Fault::Unreadable)?;
+        Self::new(value).ok_or(Fault::OutOfRange(value))
+    }
+
+    /// The limits in words, with the reason for them.
+    pub fn limits() -> String {
+        let (min, max, because) = (K::MIN, K::MAX, K::LIMITS_BECAUSE);
+        format!("must lie between {min} and {max}{} ({because})", Spaced(K::UNIT))
+    }
+}
+
+/// The number and its unit, shortest form that reads back as the same quantity.
+impl<K: Kind> fmt::Display for Quantity<K> {
+    fn fmt(&self, f: &mut fmt::Formatter<'_>) -> fmt::Result {
+        write!(f, "{}{}", self.0, Spaced(K::UNIT))
+    }
+}
+
+struct Spaced(&'static str);
+
+impl fmt::Display for Spaced {
+    fn fmt(&self, f: &mut fmt::Formatter<'_>) -> fmt::Result {
+        let space = if self.0.is_empty() { "" } else { " " };
+        write!(f, "{space}{}", self.0)
+    }
+}
+
+/// Why a text is no quantity of its kind.
+#[derive(Debug, Clone, PartialEq)]
+pub enum Fault {
+    /// It cannot be read.
+    Unreadable(Unreadable),
+    /// It was read as this number of the kind's unit, which is outside the limits.
+    OutOfRange(f64),
 }
 
 macro_rules! kinds {
@@ -90,6 +131,8 @@ kinds! {
     FireRating = FireRatingKind, "min", 0.0..=480.0, "eight hours";
     /// A temperature.
     Temperature = TemperatureKind, "C", -60.0..=1500.0, "climate to flame";
+    /// A wind speed.
+    WindSpeed = WindSpeedKind, "m/s", 0.0..=60.0, "up to a hurricane";
     /// A longitude.
     Longitude = LongitudeKind, "deg", -180.0..=180.0, "the globe";
     /// A latitude.

@@ -267,20 +267,75 @@ pub struct Room {
     pub basis: BasisOf,
 }
 
-impl Room {
+impl FloorPlan {
     /// Floor area in m².
-    pub fn floor_area_m2(&self) -> f64 {
-        match self.plan {
-            FloorPlan::Rectangle { length_m, width_m } => length_m.get() * width_m.get(),
-            FloorPlan::Shape { area_m2, .. } => area_m2.get(),
+    pub fn area_m2(self) -> f64 {
+        match self {
+            Self::Rectangle { length_m, width_m } => length_m.get() * width_m.get(),
+            Self::Shape { area_m2, .. } => area_m2.get(),
         }
     }
 
     /// Length of the walls along the floor, in m.
-    pub fn perimeter_m(&self) -> f64 {
-        match self.plan {
-            FloorPlan::Rectangle { length_m, width_m } => 2.0 * (length_m.get() + width_m.get()),
-            FloorPlan::Shape { perimeter_m, .. } => perimeter_m.get(),
+    pub fn perimeter_m(self) -> f64 {
+        match self {
+            Self::Rectangle { length_m, width_m } => 2.0 * (length_m.get() + width_m.get()),
+            Self::Shape { perimeter_m, .. } => perimeter_m.get(),
         }
     }
 }
+
+impl Room {
+    /// Members whose [`Basis`] can be recorded; a dot leads into a member.
+    pub const BASIS_MEMBERS: &[&str] = &[
+        "kind",
+        "use",
+        "floor",
+        "length_m",
+        "width_m",
+        "area_m2",
+        "perimeter_m",
+        "height_m",
+        "plan",
+        "ceiling",
+        "ceiling.form",
+        "ceiling.high_m",
+        "leakage_class",
+        "leakage_area_m2",
+        "mechanical",
+        "mechanical.supply_m3_s",
+        "mechanical.extract_m3_s",
+        "linings",
+        "linings.walls",
+        "linings.walls.material",
+        "linings.walls.thickness_m",
+        "linings.ceiling",
+        "linings.ceiling.material",
+        "linings.ceiling.thickness_m",
+        "linings.floor",
+        "linings.floor.material",
+        "linings.floor.thickness_m",
+        "fuel_load_mj_m2",
+        "fuel_packages",
+        "storage",
+        "storage.height_m",
+        "storage.footprint_m2",
+        "storage.aisle_m",
+        "hazards",
+        "detectors",
+        "sprinkler_heads",
+    ];
+
+    /// Floor area in m².
+    pub fn floor_area_m2(&self) -> f64 {
+        self.plan.area_m2()
+    }
+
+    /// Length of the walls along the floor, in m.
+    pub fn perimeter_m(&self) -> f64 {
+        self.plan.perimeter_m()
+    }
+}
+
+/// Fewest and most pieces of one fuel package.
+pub const PACKAGE_COUNT: std::ops::RangeInclusive<u32> = 1..=10_000;

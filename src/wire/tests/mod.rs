@@ -1,0 +1,3 @@
+//! Tests of the forms as a whole.
+
+mod contract;
