@@ -5,6 +5,7 @@ mod assessments;
 mod conditions;
 mod files;
 mod lists;
+mod projections;
 mod saving;
 mod statements;
 mod writing;
