@@ -2,6 +2,7 @@
 
 mod agencies;
 mod assessments;
+mod caching;
 mod conditions;
 mod files;
 mod lists;
