@@ -2,7 +2,7 @@
 //!
 //! [`Store`] is the one handle. Every method takes the [`Caller`] whose agency
 //! it acts for, and is one transaction: changes go through the one
-//! [writer](writer), reads through connections that can do nothing else. Ids
+//! writer, reads through connections that can do nothing else. Ids
 //! and moments are passed in. A change that was answered with `Ok` is on disk.
 //!
 //! | to | call |
