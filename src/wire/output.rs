@@ -10,7 +10,7 @@ use utoipa::{PartialSchema, ToSchema};
 
 use super::building::{self, BuildingParts};
 use super::form::{Components, Form, Way, Written};
-use super::input::component_of;
+use super::input::{add_components, component_of};
 use super::stored::SCHEMA;
 use crate::domain::time::Timestamp;
 use crate::domain::{self, Assumptions, BuildingId};
@@ -134,7 +134,7 @@ impl ToSchema for Building {
     }
 
     fn schemas(into: &mut Components) {
-        BuildingParts::components_of_members(Way::Answer, into);
+        add_components(into, |into| BuildingParts::components_of_members(Way::Answer, into));
         into.push((Links::name().into_owned(), Links::schema()));
     }
 }
@@ -176,7 +176,7 @@ macro_rules! answer_of_form {
             }
 
             fn schemas(into: &mut Components) {
-                <$domain as Form>::components(Way::Answer, into);
+                add_components(into, |into| <$domain as Form>::components(Way::Answer, into));
             }
         }
     )*};
