@@ -67,7 +67,7 @@ const fn added(measures: &'static str, units: &'static [Unit]) -> Family {
     Family { measures, units, compound: true }
 }
 
-const BTU_J: f64 = 1055.055_852_62;
+const BTU_J: f64 = 1_055.055_852_62;
 const FT2_M2: f64 = 0.092_903_04;
 const LB_KG: f64 = 0.453_592_37;
 /// Heat of ordinary combustibles, per pound, in the reckoning of surveys.

@@ -102,22 +102,22 @@ pub(super) fn ignored_properties(mut object: Object, names: &[&str]) -> Object {
 }
 
 fn described(schema: RefOr<Schema>, doc: &str) -> RefOr<Schema> {
-    let doc = Some(doc.to_owned());
+    let doc = doc.to_owned();
     match schema {
         RefOr::Ref(mut reference) => {
-            reference.description = doc.unwrap_or_default();
+            reference.description = doc;
             reference.into()
         }
         RefOr::T(Schema::Object(mut object)) => {
-            object.description = doc;
+            object.description = Some(doc);
             object.into()
         }
         RefOr::T(Schema::OneOf(mut choice)) => {
-            choice.description = doc;
+            choice.description = Some(doc);
             RefOr::T(Schema::OneOf(choice))
         }
         RefOr::T(Schema::Array(mut array)) => {
-            array.description = doc;
+            array.description = Some(doc);
             array.into()
         }
         other => other,

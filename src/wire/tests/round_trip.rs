@@ -139,7 +139,7 @@ fn a_patch_changes_what_it_names_and_null_takes_back() {
 
     assert_eq!(patched.notes, "key at the harbour office");
     assert_eq!(patched.location, None);
-    assert_eq!(patched.water_available_l_min.map(crate::domain::Quantity::get), Some(1892.705_892));
+    assert_eq!(patched.water_available_l_min.map(crate::domain::Quantity::get), Some(1_892.705_892));
     assert_eq!(patched.rooms, building.rooms);
 }
 
