@@ -70,7 +70,8 @@ pub(super) fn property<F: Form>(
     let schema = match (way, default) {
         (Way::Request, Some(default)) => {
             let written = serde_json::to_value(Written::<F>(&default())).unwrap_or_default();
-            with_default(nullable(schema), written)
+            let schema = nullable(schema);
+            if F::DEFAULT_STATED { with_default(schema, written) } else { schema }
         }
         _ => {
             object.required.push(name.to_owned());

@@ -191,52 +191,9 @@ answer_of_form! {
     AssumptionsEcho = Assumptions, "Assumptions";
 }
 
-/// The worst ratings that the latest assessment gave to a room of a building.
-#[derive(Debug, Clone, PartialEq, Eq, Serialize, ToSchema)]
-pub struct Worst {
-    /// Flashover.
-    pub flashover: String,
-    /// Backdraft.
-    pub backdraft: String,
-    /// Entry.
-    pub entry: String,
-    /// The assessment is of an older revision, or by an older engine or catalogue.
-    pub stale: bool,
-}
-
 /// A position, WGS 84.
 #[derive(Debug, Clone, Copy, PartialEq)]
 pub struct LocationEcho(domain::building::Location);
-
-/// A building in a list.
-#[derive(Debug, Clone, PartialEq, Serialize, ToSchema)]
-pub struct BuildingSummary {
-    /// Id, given by the service.
-    pub id: String,
-    /// The bureau's own number.
-    #[schema(required)]
-    pub reference: Option<String>,
-    /// Name.
-    pub name: String,
-    /// Position.
-    #[schema(required)]
-    pub location: Option<LocationEcho>,
-    /// Occupancy group of the building code, as printed there.
-    #[schema(required)]
-    pub occupancy_group: Option<String>,
-    /// How many rooms it has.
-    pub rooms: u64,
-    /// Revision.
-    pub revision: u64,
-    /// When this revision was saved, RFC 3339 in UTC.
-    #[schema(format = DateTime)]
-    pub updated_at: String,
-    /// Worst ratings of the latest assessment; null: not assessed yet.
-    #[schema(required)]
-    pub worst: Option<Worst>,
-    /// Links.
-    pub links: Links,
-}
 
 impl From<domain::building::Location> for LocationEcho {
     fn from(location: domain::building::Location) -> Self {

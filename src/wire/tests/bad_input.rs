@@ -374,8 +374,12 @@ fn properties_may_stand_in_place_of_a_name_and_are_held_to_their_limits() {
 #[test]
 fn assumptions_are_held_to_their_words_and_limits() {
     assert_eq!(told(&faults_of::<AssumptionsInput>(&json!({}))), []);
+    assert_eq!(
+        told(&faults_of::<AssumptionsInput>(&json!({ "scenarios": [] }))),
+        [("/scenarios".to_owned(), "too_short")]
+    );
     let faults = faults_of::<AssumptionsInput>(&json!({
-        "level": "screen", "scenarios": ["shut", "open"], "horizon_s": -1, "fuel_load_fractile": 2,
+        "level": "screen", "scenarios": ["shut", "open", "shut"], "horizon_s": -1, "fuel_load_fractile": 2,
         "ambient": { "wind_m_s": "200 mph", "wind": 3 }, "response": { "turnout_s": "80 s" },
         "seed": -1, "entry_times_s": [60, "soon"],
     }));
@@ -391,6 +395,7 @@ fn assumptions_are_held_to_their_words_and_limits() {
             ("/horizon_s", "out_of_range"),
             ("/level", "unknown_word"),
             ("/scenarios/1", "unknown_word"),
+            ("/scenarios/2", "duplicate"),
             ("/seed", "out_of_range"),
         ]
     );

@@ -155,3 +155,22 @@ fn a_kept_building_outlives_the_catalogue_key_that_it_names() {
     assert!(from_text(&text, SCHEMA + 1, Catalogue::embedded()).is_err());
     assert!(from_text("{", SCHEMA, Catalogue::embedded()).is_err());
 }
+
+#[test]
+fn what_nobody_can_shut_stands_open_unless_said_otherwise() {
+    for (kind, said, expected) in [
+        ("gap", None, 1.0),
+        ("vent", None, 1.0),
+        ("vent", Some(0.2), 0.2),
+        ("door", None, 0.0),
+        ("window", None, 0.0),
+        ("roof_vent", None, 0.0),
+        ("door", Some(0.5), 0.5),
+    ] {
+        let opening = serde_json::json!({
+            "key": "o", "kind": kind, "connects": ["r", "outside"], "width_m": 1, "height_m": 1, "open_fraction": said,
+        });
+        let opening = wire::read_value::<wire::OpeningInput>(&opening, Catalogue::embedded()).unwrap();
+        assert_eq!(opening.open_fraction.get(), expected, "{kind}");
+    }
+}

@@ -28,7 +28,7 @@ fn components() -> BTreeMap<String, Value> {
     add::<wire::Room>(&mut all);
     add::<wire::Opening>(&mut all);
     add::<wire::AssumptionsEcho>(&mut all);
-    add::<wire::BuildingSummary>(&mut all);
+    add::<wire::LocationEcho>(&mut all);
     add::<wire::Problem>(&mut all);
     let mut components = BTreeMap::new();
     for (name, schema) in all {
