@@ -24,6 +24,20 @@ pub struct Band {
     pub high: f64,
 }
 
+impl Band {
+    /// The same in another unit.
+    #[must_use]
+    pub fn scaled(self, by: f64) -> Self {
+        Self { low: self.low * by, typical: self.typical * by, high: self.high * by }
+    }
+
+    /// The same from another zero.
+    #[must_use]
+    pub fn shifted(self, by: f64) -> Self {
+        Self { low: self.low + by, typical: self.typical + by, high: self.high + by }
+    }
+}
+
 /// Why a value or rating is missing: a stable key, and the text that stands in the report.
 #[derive(Debug, Clone, PartialEq, Eq)]
 pub struct Reason {
@@ -237,7 +251,7 @@ pub struct MethodUsed {
     pub key: &'static str,
     /// Name for people.
     pub title: &'static str,
-    /// Citation.
+    /// Citations in one line.
     pub source: &'static str,
     /// Whether the text was seen.
     pub provenance: Provenance,
@@ -480,8 +494,25 @@ pub struct ScenarioFinding {
     pub time_s: Option<Band>,
     /// Openings that count, and why.
     pub openings: Vec<OpeningState>,
+    /// The unburned gas, where the room can starve in this scenario.
+    pub starved: Option<StarvedFinding>,
     /// Why it was not judged, or how.
     pub reason: Option<Reason>,
+}
+
+/// Unburned gas of a scenario in which the room starves.
+#[derive(Debug, Clone, Copy, PartialEq)]
+pub struct StarvedFinding {
+    /// Backdraft rating of this scenario.
+    pub rating: BackdraftRating,
+    /// Heat of combustion of unburned gas per mass of layer gas, MJ/kg.
+    pub excess_fuel_mj_kg: Band,
+    /// From where on a mixture with air can carry a flame, MJ/kg.
+    pub threshold_mj_kg: f64,
+    /// Layer temperature when the flame dies, °C.
+    pub layer_temperature_c: Band,
+    /// When the flame dies, on the fire clock.
+    pub flame_out_s: Band,
 }
 
 /// What an opening counts as in a scenario.

@@ -5,13 +5,13 @@ use utoipa::ToSchema;
 
 use super::evidence::{Assumption, Caution, MethodUsed, Rule, building_cautions, rules};
 use super::figure::{each, number};
-use super::head::{Head, ReportHead, moment};
+use super::head::{Head, ReportHead};
 use super::number::{Exact, Number};
-use super::requested::Requested;
 use super::room::RoomFindings;
 use super::text::{RATING_IS, headline};
 use super::words::{BackdraftWord, FlashoverWord};
 use crate::assessment::findings;
+use crate::wire::AssumptionsEcho;
 
 /// A room's place in its building.
 #[derive(Debug, Clone, PartialEq, Serialize, ToSchema)]
@@ -87,7 +87,7 @@ pub struct BuildingReport {
     /// What every rating is conditional on.
     pub rating_is: &'static str,
     /// The assumptions that were asked for, as they came.
-    pub requested: Requested,
+    pub requested: AssumptionsEcho,
     /// The rooms, in the order of the building.
     pub rooms: Vec<RoomFindings>,
     /// The rooms, worst first.
@@ -140,13 +140,13 @@ pub fn building_report(found: &findings::BuildingFindings, head: &Head<'_>) -> B
             rating_rule: found.rating_rule,
             level: found.level.into(),
             seed: found.seed,
-            created_at: moment(head.created_at),
+            created_at: head.created_at.map(|at| at.to_string()),
         },
         name: head.building.name.clone(),
         reference: head.building.reference.clone(),
         headline: headline::building(found),
         rating_is: RATING_IS,
-        requested: head.assumptions.into(),
+        requested: AssumptionsEcho::of(head.assumptions),
         ranking: found.ranking.iter().map(|place| ranked(place, &rooms)).collect(),
         water: water(found, head),
         rooms,

@@ -5,7 +5,7 @@ use std::borrow::Cow;
 use serde::Serialize;
 use utoipa::ToSchema;
 
-use super::number::{Exact, Number};
+use super::number::Number;
 use super::words::{DirectionWord, ScenarioWord};
 use crate::assessment::findings;
 
@@ -55,9 +55,9 @@ pub struct Figure {
 pub struct Bound {
     /// The input, as in the building.
     pub field: &'static str,
-    /// Its value now, as recorded or assumed.
+    /// Its value now, as recorded, assumed or worked out from the building.
     #[schema(required)]
-    pub now: Option<Exact>,
+    pub now: Option<Number>,
     /// The value at which the rating changes; null where none within the input's limits does.
     #[schema(required)]
     pub value: Option<Number>,
@@ -114,7 +114,7 @@ impl From<&findings::HoldsWhile> for Bound {
     fn from(holds: &findings::HoldsWhile) -> Self {
         Self {
             field: holds.field,
-            now: Exact::of(holds.now),
+            now: Number::of(holds.now),
             value: number(holds.value),
             direction: holds.direction.into(),
             text: holds.words.clone(),

@@ -132,7 +132,7 @@ pub struct OpeningState {
     pub key: String,
     /// Share of it that stands open.
     #[schema(required)]
-    pub open_fraction: Option<Exact>,
+    pub open_fraction: Option<Number>,
     /// Area that gives the fire air; 0 for a shut one, which only leaks.
     #[schema(required)]
     pub counted_area_m2: Option<Number>,
@@ -163,7 +163,7 @@ impl From<&findings::OpeningState> for OpeningState {
     fn from(opening: &findings::OpeningState) -> Self {
         Self {
             key: opening.key.to_string(),
-            open_fraction: Exact::of(opening.open_fraction),
+            open_fraction: Number::of(opening.open_fraction),
             counted_area_m2: Number::of(opening.counted_area_m2),
             because: opening.because,
         }

@@ -22,8 +22,23 @@ pub struct Head<'a> {
     pub building_id: Option<BuildingId>,
     /// Its revision.
     pub building_revision: Option<u64>,
-    /// When the assessment was made.
-    pub created_at: Timestamp,
+    /// When the assessment was made; none where nobody looked at a clock.
+    pub created_at: Option<Timestamp>,
+}
+
+impl<'a> Head<'a> {
+    /// Of an assessment that is not kept: no ids, no moment, so that same inputs give same bytes.
+    #[must_use]
+    pub const fn unsaved(building: &'a Building, assumptions: &'a Assumptions) -> Self {
+        Self {
+            building,
+            assumptions,
+            assessment_id: None,
+            building_id: None,
+            building_revision: None,
+            created_at: None,
+        }
+    }
 }
 
 /// The head members of both reports.
@@ -50,30 +65,7 @@ pub struct ReportHead {
     pub level: LevelWord,
     /// Seed of the sampling.
     pub seed: u64,
-    /// When the assessment was made; null where the moment cannot be written.
+    /// When the assessment was made; null where nothing was kept and no clock read.
     #[schema(required, format = "date-time")]
     pub created_at: Option<String>,
-}
-
-/// RFC 3339 in UTC with milliseconds; none outside the years that RFC 3339 can write.
-pub(super) fn moment(at: Timestamp) -> Option<String> {
-    let at = jiff::Timestamp::from_microsecond(at.0).ok()?;
-    Some(at.strftime("%Y-%m-%dT%H:%M:%S%.3fZ").to_string())
-}
-
-#[cfg(test)]
-mod tests {
-    use super::*;
-
-    #[test]
-    fn a_moment_is_utc_with_milliseconds() {
-        // 1 796 116 500 s is 2026-12-01T09:15:00Z, by `date -u -d @1796116500`.
-        assert_eq!(moment(Timestamp(1_796_116_500_123_000)).unwrap(), "2026-12-01T09:15:00.123Z");
-        assert_eq!(moment(Timestamp(1_796_116_500_000_000)).unwrap(), "2026-12-01T09:15:00.000Z");
-    }
-
-    #[test]
-    fn a_moment_beyond_the_calendar_is_unknown() {
-        assert_eq!(moment(Timestamp(i64::MAX)), None);
-    }
 }

@@ -15,7 +15,6 @@ pub mod head;
 pub mod methods;
 pub mod number;
 pub mod protection;
-pub mod requested;
 pub mod room;
 pub mod stored;
 pub mod table;

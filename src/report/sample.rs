@@ -350,6 +350,6 @@ pub fn head<'a>(building: &'a Building, assumptions: &'a Assumptions) -> Head<'a
         assessment_id: Some(AssessmentId(uuid::Uuid::from_u128(0x0190_0000_0000_7000_8000_0000_0000_0001))),
         building_id: Some(BuildingId(uuid::Uuid::from_u128(0x0190_0000_0000_7000_8000_0000_0000_0002))),
         building_revision: Some(7),
-        created_at: Timestamp(1_796_116_500_123_000),
+        created_at: Some(Timestamp(1_796_116_500_123_000)),
     }
 }

@@ -95,7 +95,7 @@ pub fn room_report_bytes(stored: &[u8], key: &str) -> Result<Option<Vec<u8>>, se
     Ok(Some(out.close()))
 }
 
-fn array<'a>(value: Option<&'a RawValue>) -> Result<Vec<&'a RawValue>, serde_json::Error> {
+fn array(value: Option<&RawValue>) -> Result<Vec<&RawValue>, serde_json::Error> {
     value.map_or_else(|| Ok(Vec::new()), |value| serde_json::from_str(value.get()))
 }
 

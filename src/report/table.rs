@@ -6,7 +6,6 @@ use super::building::{BuildingReport, RankedRoom};
 use super::flashover::Flashover;
 use super::room::RoomBody;
 use super::text::span::clock;
-use super::words::Words;
 
 /// Columns of a line.
 pub const COLUMNS: usize = 100;
@@ -56,10 +55,10 @@ fn room_row(out: &mut String, ranked: &RankedRoom, room: &RoomBody) {
         [
             &ranked.rank.to_string(),
             &room.name,
-            &format!("{}{mark}", spaced(room.flashover.rating.0.word())),
+            &format!("{}{mark}", spaced(room.flashover.rating.word())),
             &time(&room.flashover),
             yes_no(room.flashover.before_water),
-            &spaced(room.backdraft.rating.0.word()),
+            &spaced(room.backdraft.rating.word()),
         ],
     );
     paragraph(out, &room.headline, "    ", "    ");
@@ -131,11 +130,11 @@ fn cautions(out: &mut String, report: &BuildingReport) {
 }
 
 fn footer(out: &mut String, report: &BuildingReport) {
-    let recalled = report.methods.iter().filter(|method| method.provenance.0.word() == "memory").count();
+    let recalled = report.methods.iter().filter(|method| method.provenance.word() == "memory").count();
     let text = format!(
         "Level {}, rating rule {}, engine {}. {} methods, {recalled} of them rest on recalled values; \
          sources, assumptions and rules: --json.",
-        report.head.level.0.word(),
+        report.head.level.word(),
         report.head.rating_rule,
         report.head.engine_version,
         report.methods.len(),

@@ -8,32 +8,34 @@ use utoipa::openapi::schema::{ObjectBuilder, Schema, Type};
 use utoipa::{PartialSchema, ToSchema};
 
 use crate::assessment::findings;
-use crate::domain::{assumptions, building, room};
+use crate::domain::word::Word;
+use crate::domain::{assumptions, room};
 
-/// A closed set of words.
-pub trait Words: Copy + 'static {
-    /// Name of the schema.
-    const NAME: &'static str;
-    /// What the words tell.
+/// What the words of a closed list tell, for the schema.
+pub trait Told: Word {
+    /// One or two sentences.
     const TELLS: &'static str;
-    /// All of them, in order.
-    const EVERY: &'static [Self];
-
-    /// The word on the wire.
-    fn word(self) -> &'static str;
 }
 
 /// A value printed as its word.
 #[derive(Debug, Clone, Copy, PartialEq, Eq, PartialOrd, Ord, Hash)]
-pub struct Word<W>(pub W);
+pub struct Printed<W>(pub W);
 
-impl<W: Words> Serialize for Word<W> {
+impl<W: Word> Printed<W> {
+    /// The word.
+    #[must_use]
+    pub fn word(self) -> &'static str {
+        self.0.word()
+    }
+}
+
+impl<W: Word> Serialize for Printed<W> {
     fn serialize<S: Serializer>(&self, serializer: S) -> Result<S::Ok, S::Error> {
         serializer.serialize_str(self.0.word())
     }
 }
 
-impl<W: Words> PartialSchema for Word<W> {
+impl<W: Told> PartialSchema for Printed<W> {
     fn schema() -> RefOr<Schema> {
         ObjectBuilder::new()
             .schema_type(Type::String)
@@ -43,50 +45,47 @@ impl<W: Words> PartialSchema for Word<W> {
     }
 }
 
-impl<W: Words> ToSchema for Word<W> {
+impl<W: Told> ToSchema for Printed<W> {
     fn name() -> Cow<'static, str> {
-        Cow::Borrowed(W::NAME)
+        Cow::Borrowed(W::LIST)
     }
 }
 
-impl<W> From<W> for Word<W> {
+impl<W> From<W> for Printed<W> {
     fn from(value: W) -> Self {
         Self(value)
     }
 }
 
-/// Enumerations of the findings carry their words; only the schema is added.
+/// Enumerations of the findings carry their words; the list and what it tells are added.
 macro_rules! of_findings {
     ($($name:ident as $alias:ident tells $tells:literal;)*) => {$(
         #[doc = concat!($tells, " See [`findings::", stringify!($name), "`].")]
-        pub type $alias = Word<findings::$name>;
+        pub type $alias = Printed<findings::$name>;
 
-        impl Words for findings::$name {
-            const NAME: &'static str = stringify!($name);
-            const TELLS: &'static str = $tells;
+        impl Word for findings::$name {
+            const LIST: &'static str = stringify!($name);
             const EVERY: &'static [Self] = Self::ALL;
 
             fn word(self) -> &'static str {
                 self.word()
             }
         }
+
+        impl Told for findings::$name {
+            const TELLS: &'static str = $tells;
+        }
     )*};
 }
 
-/// Enumerations of the domain get their words here.
+/// Enumerations of the domain are closed lists already.
 macro_rules! of_domain {
-    ($($path:path, $name:ident as $alias:ident tells $tells:literal { $($variant:ident = $word:literal),+ $(,)? })*) => {$(
+    ($($name:path as $alias:ident tells $tells:literal;)*) => {$(
         #[doc = $tells]
-        pub type $alias = Word<$path>;
+        pub type $alias = Printed<$name>;
 
-        impl Words for $path {
-            const NAME: &'static str = stringify!($name);
+        impl Told for $name {
             const TELLS: &'static str = $tells;
-            const EVERY: &'static [Self] = &[$(Self::$variant),+];
-
-            fn word(self) -> &'static str {
-                match self { $(Self::$variant => $word,)+ }
-            }
         }
     )*};
 }
@@ -104,34 +103,12 @@ of_findings! {
 }
 
 of_domain! {
-    assumptions::Level, Level as LevelWord tells "How deep the computation went." {
-        Screening = "screening", Transient = "transient", Sampled = "sampled",
-    }
-    assumptions::Scenario, Scenario as ScenarioWord tells "A way the building may stand while the room burns." {
-        AsFound = "as_found", DoorOpen = "door_open", Shut = "shut", ShutLate = "shut_late",
-        WindowFails = "window_fails", Entry = "entry",
-    }
-    assumptions::GrowthClass, GrowthClass as GrowthWord tells "Growth of the t² fire: 1055 kW after 600, 300, 150 or 75 s." {
-        Slow = "slow", Medium = "medium", Fast = "fast", UltraFast = "ultra_fast",
-    }
-    room::Hazard, Hazard as HazardWord tells "A hazard that the methods do not compute." {
-        None = "none", NotRecorded = "not_recorded", LithiumIon = "lithium_ion",
-        GasCylinders = "gas_cylinders", FlammableLiquid = "flammable_liquid",
-        FlammableGas = "flammable_gas", CombustibleDust = "combustible_dust", Oxidisers = "oxidisers",
-        Explosives = "explosives", Hoard = "hoard", ExposedFoam = "exposed_foam",
-        MedicalOxygen = "medical_oxygen",
-    }
-    room::Place, FirePlace as PlaceWord tells "Where in the room the fire burns." {
-        Centre = "centre", Wall = "wall", Corner = "corner",
-    }
-    room::RoomKind, RoomKind as RoomKindWord tells "What sort of space." {
-        Room = "room", Corridor = "corridor", Stair = "stair", Shaft = "shaft", Atrium = "atrium",
-        Attic = "attic", Void = "void",
-    }
-    building::SprinklerState, SprinklerState as SprinklerWord tells "What is recorded of the sprinklers." {
-        None = "none", NotRecorded = "not_recorded", OutOfService = "out_of_service",
-        Installed = "installed", WorkingTested = "working_tested",
-    }
+    assumptions::Level as LevelWord tells "How deep the computation went.";
+    assumptions::Scenario as ScenarioWord tells "A way the building may stand while the room burns.";
+    assumptions::GrowthClass as GrowthWord tells "Growth of the t² fire: 1055 kW after 600, 300, 150 or 75 s.";
+    room::Hazard as HazardWord tells "A hazard that the methods do not compute.";
+    room::Place as PlaceWord tells "Where in the room the fire burns.";
+    room::RoomKind as RoomKindWord tells "What sort of space.";
 }
 
 #[cfg(test)]
@@ -141,10 +118,13 @@ mod tests {
     #[test]
     fn a_word_is_what_the_wire_carries() {
         assert_eq!(
-            serde_json::to_string(&Word(findings::FlashoverRating::NotIndicated)).unwrap(),
+            serde_json::to_string(&Printed(findings::FlashoverRating::NotIndicated)).unwrap(),
             "\"not_indicated\""
         );
-        assert_eq!(serde_json::to_string(&Word(assumptions::Scenario::ShutLate)).unwrap(), "\"shut_late\"");
+        assert_eq!(
+            serde_json::to_string(&Printed(assumptions::Scenario::ShutLate)).unwrap(),
+            "\"shut_late\""
+        );
     }
 
     #[test]

@@ -3,12 +3,12 @@
 use sqlx::SqliteConnection;
 
 use super::error::StoreError;
-use super::projections::words;
 use super::records::Head;
 use super::rows;
 use crate::domain::building::Building;
 use crate::domain::ids::{AgencyId, BuildingId};
 use crate::domain::time::Timestamp;
+use crate::domain::word::Word;
 
 const GET: &str = "
     select b.revision, b.created_at_us, b.updated_at_us, b.updated_by, (
@@ -139,11 +139,11 @@ pub(super) async fn save(
         .bind(building.location.map(|location| location.latitude_deg.get()))
         .bind(building.occupancy_group.clone())
         .bind(building.construction_type.clone().map(|printed| printed.0))
-        .bind(building.inspected_on.map(words::day))
+        .bind(building.inspected_on.map(|day| day.to_string()))
         .bind(rows::number(building.water_available_l_min))
         .bind(building.alarm_monitored)
-        .bind(words::sprinkler_state(sprinklers.state))
-        .bind(sprinklers.coverage.map(words::coverage))
+        .bind(sprinklers.state.word())
+        .bind(sprinklers.coverage.map(Word::word))
         .bind(occupants.day)
         .bind(occupants.night)
         .bind(occupants.asleep)

@@ -3,7 +3,7 @@
 use serde_json::Value;
 
 use super::super::number::SIGNIFICANT_DIGITS;
-use super::super::{building_report, methods_document, room_report, room_report_bytes, sample};
+use super::super::{Head, building_report, methods_document, room_report, room_report_bytes, sample};
 use super::{banned, texts};
 use crate::assessment::findings::RoomFindings;
 use crate::domain::Assumptions;
@@ -204,12 +204,11 @@ fn nothing_kept_has_no_ids_and_leads_nowhere() {
     let rooms = vec![sample::room("store")];
     let building = sample::building(&rooms);
     let assumptions = Assumptions::default();
-    let mut head = sample::head(&building, &assumptions);
-    (head.assessment_id, head.building_id, head.building_revision) = (None, None, None);
+    let head = Head::unsaved(&building, &assumptions);
 
     let report = value(&building_report(&sample::findings(rooms), &head).to_json());
 
-    for member in ["assessment_id", "building_id", "building_revision"] {
+    for member in ["assessment_id", "building_id", "building_revision", "created_at"] {
         assert_eq!(report[member], Value::Null, "{member}");
     }
     assert_eq!(report["links"]["self"], Value::Null);

@@ -46,12 +46,12 @@ fn not_indicated_never_stands_without_its_condition() {
         value: Some(420.0),
         now: 100.0,
         direction: Direction::Below,
-        words: "The fire load stays below 420 MJ/m².".to_owned(),
+        words: "Holds while the fire load stays below 420 MJ/m²; now 100.".to_owned(),
     }];
 
     assert_eq!(
         headline::room(&room),
-        "Flashover not indicated, but only while the fire load stays below 420 MJ/m²."
+        "Flashover not indicated, but only while the fire load stays below 420 MJ/m²; now 100."
     );
 
     room.flashover.holds_while.clear();
@@ -102,6 +102,25 @@ fn a_hazard_that_no_figure_counts_is_named() {
     }
 
     assert!(headline::room(&room).ends_with("; not counted: lithium-ion batteries and gas cylinders."));
+}
+
+#[test]
+fn flashover_without_a_time_says_how_far_it_goes() {
+    for (key, expected) in [
+        (
+            "only_at_the_worst_corner",
+            "Flashover possible with the door open, if fuel, growth and lining are at their worst.",
+        ),
+        ("within_scatter", "Flashover possible with the door open: the fire comes close to what it takes."),
+        ("hazard_gas_cylinders", "Flashover cannot be excluded, whatever the figures say."),
+        ("anything_else", "Flashover possible with the door open, at a time that cannot be told."),
+    ] {
+        let mut room = with(FlashoverRating::Possible, BackdraftRating::NotIndicated);
+        room.flashover.time_s = None;
+        room.flashover.reason = sample::reason(key, "");
+
+        assert_eq!(headline::room(&room), expected);
+    }
 }
 
 #[test]

@@ -97,13 +97,23 @@ fn flashover(finding: &FlashoverFinding) -> String {
         FlashoverRating::Expected => "Flashover expected",
     };
     let case = finding.scenario.map_or("", scenario);
-    match finding.time_s {
-        Some(time) => format!("{verb} after {}{case}{}", about(time.typical), water(finding)),
-        // "Flashover" alone needs its verb once no time follows.
-        None if finding.rating == FlashoverRating::Likely => {
-            format!("Flashover likely{case}, time not known")
+    if let Some(time) = finding.time_s {
+        return format!("{verb} after {}{case}{}", about(time.typical), water(finding));
+    }
+    // "Flashover" alone needs its verb once no time follows.
+    let verb = if finding.rating == FlashoverRating::Likely { "Flashover likely" } else { verb };
+    match finding.reason.as_ref().map(|reason| reason.key) {
+        Some(key) if key.starts_with("hazard_") => {
+            "Flashover cannot be excluded, whatever the figures say".to_owned()
         }
-        None => format!("{verb}{case}, time not known"),
+        Some("only_at_the_worst_corner") => {
+            format!("{verb}{case}, if fuel, growth and lining are at their worst")
+        }
+        Some("within_scatter") => format!("{verb}{case}: the fire comes close to what it takes"),
+        Some("oxygen_budget") => {
+            format!("{verb}{case} as far as the air inside lasts, at a time that cannot be told")
+        }
+        _ => format!("{verb}{case}, at a time that cannot be told"),
     }
 }
 

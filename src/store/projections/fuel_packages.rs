@@ -2,9 +2,10 @@
 
 use sqlx::SqliteConnection;
 
-use super::words;
+use super::name;
 use crate::domain::ids::{AgencyId, BuildingId, Key};
 use crate::domain::room::FuelPackage;
+use crate::domain::word::Word;
 use crate::store::error::StoreError;
 use crate::store::rows;
 
@@ -34,11 +35,11 @@ pub(super) async fn insert(
         .bind(id.to_string())
         .bind(room.to_string())
         .bind(package.key.to_string())
-        .bind(words::name(&package.item))
+        .bind(name(&package.item))
         .bind(package.count)
         .bind(rows::number(package.mass_kg))
         .bind(package.base_height_m.get())
-        .bind(words::place(package.place))
+        .bind(package.place.word())
         .bind(rows::number(package.spacing_m))
         .execute(db)
         .await?;

@@ -6,12 +6,20 @@
 pub(super) mod fuel_packages;
 pub(super) mod openings;
 pub(super) mod rooms;
-pub(super) mod words;
 
 use sqlx::SqliteConnection;
 
 use super::error::StoreError;
+use crate::domain::Named;
 use crate::domain::ids::{AgencyId, BuildingId};
+
+/// The key of a catalogue row; nothing where the properties were given.
+fn name<T>(named: &Named<T>) -> Option<String> {
+    match named {
+        Named::Catalogue(key) => Some(key.clone()),
+        Named::Given(_) => None,
+    }
+}
 
 /// Removes whatever is projected of a building.
 pub(super) async fn delete_all(

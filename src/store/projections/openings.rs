@@ -2,9 +2,9 @@
 
 use sqlx::SqliteConnection;
 
-use super::words;
 use crate::domain::ids::{AgencyId, BuildingId, Key};
 use crate::domain::opening::{Opening, Space};
+use crate::domain::word::Word;
 use crate::store::error::StoreError;
 use crate::store::rows;
 
@@ -53,7 +53,7 @@ pub(in crate::store) async fn insert(
         .bind(id.to_string())
         .bind(opening.key.to_string())
         .bind(opening.name.clone())
-        .bind(words::opening_kind(opening.kind))
+        .bind(opening.kind.word())
         .bind(room(first))
         .bind(room(second))
         .bind(opening.width_m.get())
@@ -65,11 +65,11 @@ pub(in crate::store) async fn insert(
         .bind(opening.self_closing)
         .bind(rows::number(opening.fire_rating_min))
         .bind(rows::number(opening.leakage_area_m2))
-        .bind(opening.swing.map(words::swing))
+        .bind(opening.swing.map(Word::word))
         .bind(opening.entry)
-        .bind(opening.side.map(words::side))
+        .bind(opening.side.map(Word::word))
         .bind(rows::number(opening.azimuth_deg))
-        .bind(opening.glazing.map(words::glazing))
+        .bind(opening.glazing.map(Word::word))
         .execute(db)
         .await?;
     Ok(())

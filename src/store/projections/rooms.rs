@@ -2,9 +2,10 @@
 
 use sqlx::SqliteConnection;
 
-use super::{fuel_packages, words};
+use super::{fuel_packages, name};
 use crate::domain::ids::{AgencyId, BuildingId, Key};
-use crate::domain::room::{FloorPlan, Hazard, Lining, Room};
+use crate::domain::room::{FloorPlan, Lining, Room};
+use crate::domain::word::Word;
 use crate::store::error::StoreError;
 use crate::store::rows;
 
@@ -52,9 +53,9 @@ pub(in crate::store) async fn insert(
         FloorPlan::Rectangle { length_m, width_m } => (Some(length_m.get()), Some(width_m.get())),
         FloorPlan::Shape { .. } => (None, None),
     };
-    let material = |lining: &Option<Lining>| lining.as_ref().and_then(|lining| words::name(&lining.material));
+    let material = |lining: &Option<Lining>| lining.as_ref().and_then(|lining| name(&lining.material));
     let thickness_m = |lining: &Option<Lining>| rows::number(lining.as_ref().and_then(|it| it.thickness_m));
-    let hazards: Vec<&str> = room.hazards.iter().copied().map(words::hazard as fn(Hazard) -> _).collect();
+    let hazards: Vec<&str> = room.hazards.iter().map(|hazard| hazard.word()).collect();
     let storage = room.storage.as_ref();
     let heads = room.sprinkler_heads.as_ref();
     sqlx::query(SAVE)
@@ -62,20 +63,20 @@ pub(in crate::store) async fn insert(
         .bind(id.to_string())
         .bind(room.key.to_string())
         .bind(room.name.clone())
-        .bind(words::room_kind(room.kind))
-        .bind(words::name(&room.room_use))
+        .bind(room.kind.word())
+        .bind(name(&room.room_use))
         .bind(room.floor)
         .bind(length_m)
         .bind(width_m)
         .bind(room.floor_area_m2())
         .bind(room.perimeter_m())
         .bind(room.height_m.get())
-        .bind(words::ceiling_form(room.ceiling.form))
+        .bind(room.ceiling.form.word())
         .bind(rows::number(room.ceiling.high_m))
         .bind(room.position.map(|position| position.x_m.get()))
         .bind(room.position.map(|position| position.y_m.get()))
         .bind(room.position.map(|position| position.turn_deg.get()))
-        .bind(room.leakage_class.as_ref().and_then(words::name))
+        .bind(room.leakage_class.as_ref().and_then(name))
         .bind(rows::number(room.leakage_area_m2))
         .bind(room.mechanical.map(|fans| fans.supply_m3_s.get()))
         .bind(room.mechanical.map(|fans| fans.extract_m3_s.get()))
@@ -87,14 +88,14 @@ pub(in crate::store) async fn insert(
         .bind(material(&room.linings.floor))
         .bind(thickness_m(&room.linings.floor))
         .bind(rows::number(room.fuel_load_mj_m2))
-        .bind(storage.and_then(|goods| words::name(&goods.commodity)))
+        .bind(storage.and_then(|goods| name(&goods.commodity)))
         .bind(storage.map(|goods| goods.height_m.get()))
         .bind(storage.map(|goods| goods.footprint_m2.get()))
         .bind(rows::number(storage.and_then(|goods| goods.aisle_m)))
         .bind(storage.map(|goods| goods.racks))
         .bind(hazards.join(" "))
         .bind(rows::stored_count(room.detectors.len() as u64))
-        .bind(heads.and_then(|heads| words::name(&heads.class)))
+        .bind(heads.and_then(|heads| name(&heads.class)))
         .bind(rows::number(heads.and_then(|heads| heads.spacing_m)))
         .execute(&mut *db)
         .await?;

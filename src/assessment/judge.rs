@@ -1,0 +1,206 @@
+//! One room, one state, one fire: the heat release that is there against the heat release required.
+
+use super::inputs::Inputs;
+use super::openings::State;
+use crate::fire::DesignFire;
+use crate::fire::flashover::{self, Enclosure, LIMIT_20_KW_M2_FLOOR, LIMIT_600_C_GAS_K};
+use crate::fire::hot_layer::{GrowingVented, Position, mccaffrey_time_to_rise_s, measured_position_factor};
+use crate::fire::linings::{Surface, total_area_m2, total_conductance_kw_k};
+use crate::fire::oxygen::{LimitingOxygen, ShutBurn, ShutRoom, burn_shut};
+use crate::fire::radiation::{HotLayer, layer_temperature_for_flux_k, overhead_view_factor};
+
+/// What decides a rating.
+#[derive(Debug, Clone, Copy, PartialEq)]
+pub(super) struct Judged {
+    /// Heat release that is reached, kW.
+    pub available_kw: f64,
+    /// Lowest and highest required by the correlations in range, kW; none in a shut room.
+    pub required_kw: Option<(f64, f64)>,
+    /// Available over highest and over lowest required; in a shut room the rise over that to 600 °C.
+    pub to_highest: f64,
+    pub to_lowest: f64,
+    pub limit: Limit,
+    /// How the fire of a shut room ended.
+    pub burn: Option<ShutBurn>,
+}
+
+/// What holds the fire down.
+#[derive(Debug, Clone, Copy, PartialEq, Eq)]
+pub(super) enum Limit {
+    Fuel,
+    Air,
+    Oxygen,
+}
+
+/// The enclosure of the correlations.
+pub(super) fn enclosure(state: &State, surfaces: &[Surface; 3]) -> Enclosure {
+    Enclosure {
+        bounding_area_m2: total_area_m2(surfaces),
+        opening_area_m2: state.wall.area_m2,
+        opening_height_m: state.wall.height_m,
+    }
+}
+
+/// The shut room of the oxygen method.
+pub(super) fn shut_room<'s>(inputs: &Inputs<'_>, leak_m2: f64, surfaces: &'s [Surface; 3]) -> ShutRoom<'s> {
+    ShutRoom {
+        volume_m3: inputs.geometry.volume_m3,
+        height_m: inputs.geometry.height_m,
+        leakage_area_m2: leak_m2,
+        surfaces,
+        ambient_temperature_k: inputs.ambient_k,
+        limit: LimitingOxygen::TYPICAL,
+    }
+}
+
+/// Judges a fire with all the air it wants in a room that stands so.
+pub(super) fn judge(inputs: &Inputs<'_>, state: &State, fire: DesignFire, surfaces: &[Surface; 3]) -> Judged {
+    if state.is_open() {
+        judge_open(state, fire, surfaces)
+    } else {
+        let room = shut_room(inputs, state.leak_m2, surfaces);
+        judge_burn(&fire, burn_shut(&fire, &room, inputs.horizon.shut_s), inputs.ambient_k)
+    }
+}
+
+fn judge_open(state: &State, fire: DesignFire, surfaces: &[Surface; 3]) -> Judged {
+    let fuel_kw = fire.reached_kw();
+    let air_kw = state.air_limit_kw(fire.growth_kw_s2);
+    let phases = fire.capped_kw(air_kw).phases();
+    let required_kw = required_span_kw(enclosure(state, surfaces), surfaces, phases.decay_start_s);
+    Judged {
+        available_kw: phases.reached_kw,
+        required_kw: Some(required_kw),
+        to_highest: ratio(phases.reached_kw, required_kw.1),
+        to_lowest: ratio(phases.reached_kw, required_kw.0),
+        limit: if air_kw < fuel_kw { Limit::Air } else { Limit::Fuel },
+        burn: None,
+    }
+}
+
+/// Judges a shut room by how its fire ended.
+pub(super) fn judge_burn(fire: &DesignFire, burn: ShutBurn, ambient_k: f64) -> Judged {
+    let share = ((burn.state.peak_temperature_k - ambient_k) / (LIMIT_600_C_GAS_K - ambient_k)).max(0.0);
+    Judged {
+        available_kw: fire.heat_release_kw(burn.state.time_s),
+        required_kw: None,
+        to_highest: share,
+        to_lowest: share,
+        limit: if burn.starved { Limit::Oxygen } else { Limit::Fuel },
+        burn: Some(burn),
+    }
+}
+
+fn ratio(available_kw: f64, required_kw: f64) -> f64 {
+    if available_kw <= 0.0 || required_kw <= 0.0 { 0.0 } else { available_kw / required_kw }
+}
+
+/// Lowest and highest heat release that the correlations in range ask for; all three where none is.
+fn required_span_kw(room: Enclosure, surfaces: &[Surface; 3], decay_start_s: f64) -> (f64, f64) {
+    let by_conductance = flashover::mccaffrey_kw(room, total_conductance_kw_k(surfaces, decay_start_s));
+    let all = [
+        (flashover::babrauskas_kw(room), flashover::babrauskas_limits(room).is_empty()),
+        (flashover::thomas_kw(room), flashover::thomas_limits(room).is_empty()),
+        (by_conductance, flashover::mccaffrey_limits(room).is_empty()),
+    ];
+    let any_in_range = all.iter().any(|(_, in_range)| *in_range);
+    all.iter()
+        .filter(|(_, in_range)| *in_range || !any_in_range)
+        .fold((f64::INFINITY, f64::NEG_INFINITY), |(low, high), (kw, _)| (low.min(*kw), high.max(*kw)))
+}
+
+/// Moments of flashover on the fire clock, s; none where they never come.
+#[derive(Debug, Clone, Copy, PartialEq, Default)]
+pub(super) struct Moments {
+    pub layer_600_c_s: Option<f64>,
+    pub floor_20_kw_m2_s: Option<f64>,
+    /// The fire has the heat that the highest correlation asks for.
+    pub by_heat_s: Option<f64>,
+}
+
+impl Moments {
+    /// The earliest of the three.
+    pub fn earliest_s(&self) -> Option<f64> {
+        [self.layer_600_c_s, self.floor_20_kw_m2_s, self.by_heat_s]
+            .into_iter()
+            .flatten()
+            .min_by(f64::total_cmp)
+    }
+}
+
+/// Factor on the rise for the place of the fire, at the worst of centre and corner: the corner, with the
+/// span that measured rooms support. Typical is its middle.
+#[derive(Debug, Clone, Copy, PartialEq)]
+pub(super) struct PlaceFactor {
+    pub low: f64,
+    pub typical: f64,
+    pub high: f64,
+}
+
+pub(super) const CORNER: PlaceFactor = {
+    let (low, high) = measured_position_factor(Position::Corner);
+    PlaceFactor { low, typical: 0.5 * (low + high), high }
+};
+
+/// When flashover comes in a room that stands open.
+pub(super) fn moments(
+    inputs: &Inputs<'_>,
+    state: &State,
+    fire: DesignFire,
+    surfaces: &[Surface; 3],
+    place_factor: f64,
+) -> Moments {
+    if !state.is_open() {
+        return Moments::default();
+    }
+    let fire = fire.capped_kw(state.air_limit_kw(fire.growth_kw_s2));
+    let phases = fire.phases();
+    let growing = GrowingVented { fire, opening: state.wall, surfaces, position_factor: place_factor };
+    // A search that does not settle counts as "never": the rating does not rest on it.
+    let time_to_rise_s = |rise_k: f64| mccaffrey_time_to_rise_s(&growing, rise_k).ok().flatten();
+    let required_kw = required_span_kw(enclosure(state, surfaces), surfaces, phases.decay_start_s).1;
+    let clock = FireClock::of(&fire);
+    Moments {
+        layer_600_c_s: time_to_rise_s(LIMIT_600_C_GAS_K - inputs.ambient_k).map(|at_s| clock.at_s(at_s)),
+        floor_20_kw_m2_s: time_to_rise_s(floor_flux_rise_k(inputs, state)).map(|at_s| clock.at_s(at_s)),
+        by_heat_s: fire.time_to_kw_s(required_kw).map(|at_s| clock.at_s(at_s)),
+    }
+}
+
+/// Rise of the layer at which it sends 20 kW/m² to the middle of the floor.
+///
+/// Thick smoke, its lower face half way up the opening, a floor at ambient temperature. What flames and hot
+/// walls add is left out.
+pub(super) fn floor_flux_rise_k(inputs: &Inputs<'_>, state: &State) -> f64 {
+    let face_m = (0.5 * state.wall.height_m).min(0.9 * inputs.geometry.height_m);
+    let layer = HotLayer {
+        temperature_k: 0.0,
+        emissivity: 1.0,
+        view_factor: overhead_view_factor(inputs.geometry.length_m, inputs.geometry.width_m, face_m)
+            .max(0.05),
+        surface_temperature_k: inputs.ambient_k,
+    };
+    layer_temperature_for_flux_k(layer, LIMIT_20_KW_M2_FLOOR) - inputs.ambient_k
+}
+
+/// Turns times of a fire's curve into times of the fire clock, whose zero is established burning.
+#[derive(Debug, Clone, Copy, PartialEq)]
+pub(super) struct FireClock {
+    established_s: f64,
+}
+
+impl FireClock {
+    pub fn of(fire: &DesignFire) -> Self {
+        Self { established_s: fire.established_s().unwrap_or(0.0) }
+    }
+
+    /// A time of the curve on the fire clock; what comes before established burning counts as its zero.
+    pub fn at_s(self, curve_s: f64) -> f64 {
+        (curve_s - self.established_s).max(0.0)
+    }
+
+    /// A time of the fire clock on the curve.
+    pub fn on_curve_s(self, fire_clock_s: f64) -> f64 {
+        fire_clock_s + self.established_s
+    }
+}
