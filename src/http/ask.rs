@@ -11,8 +11,8 @@ use axum::response::{IntoResponse, Response};
 
 use super::conditional::{Conditions, etag};
 use super::media;
-use super::problem::{ApiError, header, parameter};
-use crate::wire::problem::{Fault, Slug};
+use super::problem::ApiError;
+use crate::wire::problem::{ProblemItem, Slug};
 
 /// The head of a request. Each judgement is its own method, because their order is part of the
 /// contract: a handler first finds what is named (404), then asks [`Ask::accepts_json`] (406),
@@ -41,7 +41,7 @@ impl Ask {
             return Ok(());
         }
         Err(ApiError::new(Slug::NotAcceptable, "This address answers in application/json.").with_faults(vec![
-            header("Accept", "not_acceptable", "it leaves out application/json"),
+            ProblemItem::header("Accept", "not_acceptable", "it leaves out application/json", None),
         ]))
     }
 
@@ -76,7 +76,7 @@ impl Query {
             if !known.contains(&name.as_str()) {
                 faults.push(unknown(&name, known));
             } else if values.contains_key(&name) {
-                faults.push(parameter(&name, "duplicate", "the parameter is given twice"));
+                faults.push(ProblemItem::parameter(&name, "duplicate", "the parameter is given twice", None));
             } else {
                 values.insert(name, value);
             }
@@ -95,21 +95,21 @@ impl Query {
     }
 }
 
-fn unknown(name: &str, known: &[&str]) -> Fault {
-    let mut fault = parameter(name, "unknown_parameter", "this address has no such parameter");
-    let nearest = known.iter().copied().max_by(|a, b| {
-        strsim::jaro_winkler(a, name).total_cmp(&strsim::jaro_winkler(b, name))
-    });
-    fault.suggestion = nearest.map(str::to_owned);
-    fault
+fn unknown(name: &str, known: &[&str]) -> ProblemItem {
+    // Likeness by Jaro and Winkler from which a name is offered. Ours.
+    const LEAST: f64 = 0.78;
+    let likeness = |known: &&str| (strsim::jaro_winkler(known, name), (*known).to_owned());
+    let nearest = known.iter().map(likeness).filter(|(likeness, _)| *likeness >= LEAST);
+    let nearest = nearest.max_by(|(a, _), (b, _)| a.total_cmp(b)).map(|(_, known)| known);
+    ProblemItem::parameter(name, "unknown_parameter", "this address has no such parameter", nearest)
 }
 
 /// Refuses one parameter.
 pub fn bad_parameter(name: &str, code: &'static str, detail: impl Into<String>) -> ApiError {
-    bad_parameters(vec![parameter(name, code, detail)])
+    bad_parameters(vec![ProblemItem::parameter(name, code, detail, None)])
 }
 
-fn bad_parameters(faults: Vec<Fault>) -> ApiError {
+fn bad_parameters(faults: Vec<ProblemItem>) -> ApiError {
     ApiError::new(Slug::InvalidParameter, "A parameter behind the question mark is wrong.")
         .with_faults(faults)
 }

@@ -4,13 +4,14 @@ use std::sync::Arc;
 
 use super::app::App;
 use super::kept;
-use super::problem::{ApiError, member};
+use super::problem::ApiError;
+use super::refusal::invalid;
 use crate::assessment::{BuildingFindings, assess};
 use crate::compute::{Lane, StopFlag, Watch};
 use crate::domain::assumptions::Level;
 use crate::domain::ids::{AssessmentId, BuildingId};
 use crate::domain::time::Timestamp;
-use crate::domain::{Assumptions, Building};
+use crate::domain::{Assumptions, Building, Invalid, Pointer};
 use crate::report;
 use crate::store::NewAssessment;
 use crate::wire::problem::Slug;
@@ -69,9 +70,13 @@ fn only_what_is_there(level: Option<Level>) -> Result<(), ApiError> {
         None | Some(Level::Screening) => Ok(()),
         Some(Level::Transient | Level::Sampled) => {
             let detail = "This level is not available in this version yet; `screening` is.";
-            let mut fault = member("/assumptions/level", "not_available", detail);
-            fault.suggestion = Some("screening".to_owned());
-            Err(ApiError::new(Slug::Invalid, detail).with_faults(vec![fault]))
+            let fault = Invalid {
+                pointer: Pointer::root().member("assumptions").member("level"),
+                code: "not_available",
+                detail: detail.to_owned(),
+                suggestion: Some("screening".to_owned()),
+            };
+            Err(invalid(vec![fault]))
         }
     }
 }

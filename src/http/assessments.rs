@@ -13,7 +13,7 @@ use super::ask::Ask;
 use super::assessing::{Order, Record, make};
 use super::body::{Takes, Unread};
 use super::headers::ReadHeaders;
-use super::paging::{self, Page, PageQuery};
+use super::paging::{self, PageQuery};
 use super::params::{AssessmentPath, At, BuildingPath, RoomAt, RoomReportPath};
 use super::problem::ApiError;
 use super::summary::AssessmentSummary;
@@ -23,7 +23,7 @@ use crate::domain::ids::{AssessmentId, BuildingId};
 use crate::domain::time::Timestamp;
 use crate::report::{BuildingReport, RoomReport, room_report_bytes};
 use crate::store::{AssessmentCursor, Effects, StoredReport};
-use crate::wire::{AssessInput, AssessmentInput};
+use crate::wire::{AssessInput, AssessmentRequest, Page};
 
 /// Assess a building that is not in the inventory.
 ///
@@ -53,7 +53,7 @@ pub async fn assess(State(app): State<App>, ask: Ask, body: Unread) -> Result<Re
     path = "/v1/buildings/{id}/assessments",
     tag = "assessments",
     params(BuildingPath),
-    request_body(content = Option<AssessmentInput>, description = "What to assume", example = json!(examples::assessment())),
+    request_body(content = Option<AssessmentRequest>, description = "What to assume", example = json!(examples::assessment())),
     responses((
         status = 201, description = "The report, kept under its own address.", body = BuildingReport,
         headers(
@@ -113,12 +113,12 @@ pub async fn list_assessments(
     let after = found.next.map(|next| format!("{}.{}", next.created_at.0, next.id));
     let items = found.items.into_iter().map(AssessmentSummary::from).collect();
     let path = format!("/v1/buildings/{building}/assessments");
-    paging::answer(&Page::new(&path, &query, items, after.as_deref()))
+    paging::answer(&paging::page(&path, &query, items, after.as_deref()), REVALIDATE)
 }
 
 fn cursor_of(text: &str) -> Option<AssessmentCursor> {
     let (at, id) = text.split_once('.')?;
-    Some(AssessmentCursor { created_at: Timestamp(at.parse().ok()?), id: AssessmentId(id.parse().ok()?) })
+    Some(AssessmentCursor { created_at: Timestamp(at.parse().ok()?), id: AssessmentId::parse(id)? })
 }
 
 /// Read the latest assessment of a building, of whatever revision.

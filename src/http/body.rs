@@ -10,8 +10,8 @@ use axum::http::header::{ACCEPT_ENCODING, CONTENT_ENCODING, CONTENT_LENGTH, CONT
 use axum::http::{HeaderName, HeaderValue};
 
 use super::media;
-use super::problem::{ApiError, header};
-use crate::wire::problem::Slug;
+use super::problem::ApiError;
+use crate::wire::problem::{ProblemItem, Slug};
 
 /// Largest body taken.
 pub const MAX_BYTES: usize = 4 * 1024 * 1024;
@@ -113,9 +113,10 @@ fn right_type(headers: &HeaderMap, takes: Takes) -> Result<(), ApiError> {
 }
 
 fn wrong_type(name: &'static str, detail: &'static str) -> ApiError {
-    ApiError::new(Slug::UnsupportedMediaType, detail).with_faults(vec![header(
+    ApiError::new(Slug::UnsupportedMediaType, detail).with_faults(vec![ProblemItem::header(
         name,
         "unsupported_media_type",
         "this is not taken here",
+        None,
     )])
 }

@@ -4,21 +4,22 @@ use axum::extract::State;
 use axum::http::StatusCode;
 use axum::response::{IntoResponse, Response};
 
-use super::answer::{created, versioned};
+use super::answer::{REVALIDATE, created, versioned};
 use super::app::App;
 use super::ask::Ask;
 use super::body::{Takes, Unread};
 use super::change::{MayBeNew, judge};
 use super::headers::{ChangeHeaders, ReadHeaders};
-use super::paging::{self, Page, PageQuery};
+use super::paging::{self, PageQuery};
 use super::params::{At, BuildingPath};
 use super::problem::ApiError;
+use super::forms::Patch;
 use super::{examples, forms};
 use crate::domain::Caller;
 use crate::domain::ids::BuildingId;
 use crate::store::{Effects, ListBuildings, Part};
 use super::summary::BuildingSummary;
-use crate::wire::{Building, BuildingInput};
+use crate::wire::{Building, BuildingInput, Page};
 
 /// List the buildings of the inventory.
 ///
@@ -42,13 +43,13 @@ pub async fn list_buildings(caller: Caller, State(app): State<App>, ask: Ask) ->
     let query = ask.query(&["limit", "cursor", "reference"])?;
     let list = ListBuildings {
         reference: query.get("reference").map(str::to_owned),
-        after: paging::cursor(&query, |text| text.parse().ok().map(BuildingId))?,
+        after: paging::cursor(&query, BuildingId::parse)?,
         limit: paging::limit(&query)?,
     };
     let found = app.store.list_buildings(&caller, &list).await?;
     let after = found.next.map(|id| id.to_string());
     let items: Vec<_> = found.items.into_iter().map(BuildingSummary::from).collect();
-    paging::answer(&Page::new("/v1/buildings", &query, items, after.as_deref()))
+    paging::answer(&paging::page("/v1/buildings", &query, items, after.as_deref()), REVALIDATE)
 }
 
 /// Enter a building.
@@ -87,7 +88,7 @@ pub async fn create_building(
     let id = BuildingId(app.ids.record());
     let effects = Effects { at: app.clock.now() };
     let saved = app.store.create_building(&caller, id, building, effects).await?;
-    let answer = versioned(saved.head.revision, &forms::building(&saved))?;
+    let answer = versioned(saved.head.revision, &forms::building_document(&saved))?;
     created(&format!("/v1/buildings/{id}"), answer)
 }
 
@@ -117,7 +118,7 @@ pub async fn get_building(
     if let Some(answer) = ask.not_modified(saved.head.revision) {
         return Ok(answer);
     }
-    versioned(saved.head.revision, &forms::building(&saved))
+    versioned(saved.head.revision, &forms::building_document(&saved))
 }
 
 /// Replace a building.
@@ -149,7 +150,7 @@ pub async fn put_building(
     let change = judge(&app, &caller, address, &ask, Some((body, Takes::Json))).await?;
     let building = forms::read_building(&change.bytes, app.catalogue)?;
     let saved = app.store.put_building(&caller, id, building, change.condition, change.effects).await?;
-    versioned(saved.head.revision, &forms::building(&saved))
+    versioned(saved.head.revision, &forms::building_document(&saved))
 }
 
 /// Change members of a building.
@@ -182,11 +183,11 @@ pub async fn patch_building(
 ) -> Result<Response, ApiError> {
     let address = (id, &Part::Whole, MayBeNew::No);
     let change = judge(&app, &caller, address, &ask, Some((body, Takes::MergePatch))).await?;
-    let patch = forms::read_patch(&change.bytes)?;
+    let patch = Patch::read(&change.bytes)?;
     let catalogue = app.catalogue;
-    let edit = move |building: &_| forms::patched_building(building, &patch, catalogue);
+    let edit = move |building: &_| patch.on_building(building, catalogue);
     let saved = app.store.edit(&caller, id, Part::Whole, change.condition, change.effects, edit).await?;
-    versioned(saved.head.revision, &forms::building(&saved))
+    versioned(saved.head.revision, &forms::building_document(&saved))
 }
 
 /// Delete a building.

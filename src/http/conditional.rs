@@ -3,9 +3,9 @@
 use axum::http::HeaderMap;
 use axum::http::header::{ETAG, HeaderName, HeaderValue, IF_MATCH, IF_NONE_MATCH};
 
-use super::problem::{ApiError, header};
+use super::problem::ApiError;
 use crate::store::Condition;
-use crate::wire::problem::Slug;
+use crate::wire::problem::{ProblemItem, Slug};
 
 /// The tag of a revision: strong, from the number and not from the bytes, so that it is the
 /// same whether or not the body travels compressed.
@@ -98,11 +98,7 @@ impl Conditions {
     pub fn for_put(&self, current: Option<u64>) -> Result<Condition, ApiError> {
         match (current, &self.if_match, &self.if_none_match) {
             (Some(current), ..) => self.for_change(current),
-            (None, Some(_), _) => Err(ApiError::new(
-                Slug::PreconditionFailed,
-                "It does not exist, so If-Match cannot hold; a new one is put with `If-None-Match: *`.",
-            )
-            .with_faults(vec![header("If-Match", "precondition_failed", "it does not exist")])),
+            (None, Some(_), _) => Err(gone()),
             (None, None, Some(Tags::Any)) => Ok(Condition::NoneMatch),
             (None, None, _) => Err(required(IF_NONE_MATCH)),
         }
@@ -116,7 +112,7 @@ fn required(wanted: HeaderName) -> ApiError {
         ("If-None-Match", "It does not exist yet: to create it send `If-None-Match: *`.")
     };
     ApiError::new(Slug::PreconditionRequired, detail)
-        .with_faults(vec![header(name, "missing", "the header is missing")])
+        .with_faults(vec![ProblemItem::header(name, "missing", "the header is missing", None)])
 }
 
 /// Somebody else changed it first.
@@ -126,14 +122,21 @@ pub fn stale(current: u64) -> ApiError {
          written with its quotes."
     );
     ApiError::new(Slug::PreconditionFailed, detail)
-        .with_faults(vec![header("If-Match", "stale", "the tag is not the present one")])
+        .with_faults(vec![ProblemItem::header("If-Match", "stale", "the tag is not the present one", None)])
         .with_header(ETAG, tag(current))
+}
+
+/// There is nothing there to match.
+pub fn gone() -> ApiError {
+    let detail = "It does not exist, so If-Match cannot hold; a new one is put with `If-None-Match: *`.";
+    ApiError::new(Slug::PreconditionFailed, detail)
+        .with_faults(vec![ProblemItem::header("If-Match", "stale", "there is nothing to match", None)])
 }
 
 fn exists(current: u64) -> ApiError {
     let detail =
         format!("It exists already, in revision {current}; to change it send `If-Match` with its ETag.");
     ApiError::new(Slug::PreconditionFailed, detail)
-        .with_faults(vec![header("If-None-Match", "exists", "it exists already")])
+        .with_faults(vec![ProblemItem::header("If-None-Match", "exists", "it exists already", None)])
         .with_header(ETAG, tag(current))
 }

@@ -43,17 +43,24 @@ use crate::wire::problem::Problem;
 struct Service;
 
 static DOCUMENT: LazyLock<OpenApi> = LazyLock::new(write);
-static JSON: LazyLock<String> =
-    LazyLock::new(|| DOCUMENT.to_pretty_json().expect("the document is made of strings and numbers"));
+static TEXT: LazyLock<String> = LazyLock::new(|| {
+    let json = DOCUMENT.to_pretty_json().expect("the document is made of strings and numbers");
+    format!("{json}\n")
+});
 
 /// The document.
 pub fn openapi() -> &'static OpenApi {
     &DOCUMENT
 }
 
+/// The document as it is committed and served.
+pub fn openapi_text() -> &'static str {
+    &TEXT
+}
+
 /// `GET /openapi.json`.
 pub async fn get_document() -> Response {
-    ([(CONTENT_TYPE, "application/json"), (CACHE_CONTROL, "no-cache")], JSON.as_str()).into_response()
+    ([(CONTENT_TYPE, "application/json"), (CACHE_CONTROL, "no-cache")], openapi_text()).into_response()
 }
 
 fn write() -> OpenApi {

@@ -5,6 +5,7 @@ use crate::assessment::findings::{
     BackdraftRating, Band, BuildingFindings, FlashoverRating, RoomFindings,
 };
 use crate::domain::time::Timestamp;
+use crate::domain::word::Word as _;
 use crate::store::{AssessmentMeta, NewAssessment, Rated, RoomFinding, Spread};
 
 /// An assessment as the store takes it.

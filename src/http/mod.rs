@@ -36,6 +36,7 @@ mod routes;
 mod summary;
 
 pub use app::{App, Clock, Ids, Parts, SystemClock, UniqueIds};
-pub use document::openapi;
+pub use document::{openapi, openapi_text};
+pub use forms::building_document;
 pub use metrics::Metrics;
 pub use routes::router;

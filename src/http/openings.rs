@@ -12,8 +12,10 @@ use super::change::{MayBeNew, judge};
 use super::headers::{ChangeHeaders, PutHeaders, ReadHeaders};
 use super::params::{At, OpeningAt, OpeningPath};
 use super::problem::ApiError;
+use super::refusal::invalid;
+use super::forms::Patch;
 use super::{examples, forms};
-use crate::domain::Caller;
+use crate::domain::{Building as Record, Caller};
 use crate::store::{Part, SavedBuilding, StoreError, Missing};
 use crate::wire::{Opening, OpeningInput};
 
@@ -43,7 +45,7 @@ pub async fn get_opening(
     if let Some(answer) = ask.not_modified(saved.revision) {
         return Ok(answer);
     }
-    versioned(saved.revision, &forms::opening(&saved.value))
+    versioned(saved.revision, &Opening::of(&saved.value))
 }
 
 /// Put an opening under a key that the caller chose.
@@ -71,9 +73,11 @@ pub async fn put_opening(
     let part = Part::Opening(key.clone());
     let change = judge(&app, &caller, (id, &part, MayBeNew::Yes), &ask, Some((body, Takes::Json))).await?;
     let opening = forms::read_opening(&change.bytes, &key, app.catalogue)?;
-    let check = move |building: &_| forms::check_with_opening(building, &key);
+    // Putting it once more where it is already tells the faults as this body sees them.
+    let again = opening.clone();
+    let check = move |building: &Record| building.with_opening(again).map(drop).map_err(invalid);
     let saved = app.store.put_opening(&caller, id, opening, change.condition, change.effects, check).await?;
-    versioned(saved.revision, &forms::opening(&saved.value))
+    versioned(saved.revision, &Opening::of(&saved.value))
 }
 
 /// Change members of an opening.
@@ -103,13 +107,13 @@ pub async fn patch_opening(
 ) -> Result<Response, ApiError> {
     let part = Part::Opening(key.clone());
     let change = judge(&app, &caller, (id, &part, MayBeNew::No), &ask, Some((body, Takes::MergePatch))).await?;
-    let patch = forms::read_patch(&change.bytes)?;
+    let patch = Patch::read(&change.bytes)?;
     let (catalogue, of) = (app.catalogue, key.clone());
-    let edit = move |building: &_| forms::patched_opening(building, &of, &patch, catalogue);
+    let edit = move |building: &_| patch.on_opening(building, &of, catalogue);
     let saved: SavedBuilding =
         app.store.edit(&caller, id, part, change.condition, change.effects, edit).await?;
     let opening = saved.opening(&key).ok_or(StoreError::NotFound(Missing::Opening))?;
-    versioned(opening.revision, &forms::opening(&opening.value))
+    versioned(opening.revision, &Opening::of(&opening.value))
 }
 
 /// Delete an opening.

@@ -6,9 +6,10 @@ use axum::response::Response;
 use serde::Serialize;
 use utoipa::{IntoParams, ToSchema};
 
-use super::answer::{REVALIDATE, json, with};
+use super::answer::{json, with};
 use super::ask::{Query, bad_parameter};
 use super::problem::ApiError;
+use crate::wire::Page;
 
 /// Items on a page unless asked otherwise.
 const DEFAULT_LIMIT: u32 = 50;
@@ -25,19 +26,6 @@ pub struct PageQuery {
     limit: Option<u32>,
     /// Where the page begins: `next_cursor` of the page before.
     cursor: Option<String>,
-}
-
-/// One page of a list.
-#[derive(Debug, Serialize, ToSchema)]
-pub struct Page<T> {
-    /// The items, in a fixed order.
-    pub items: Vec<T>,
-    /// Address of the next page; null on the last.
-    #[schema(required)]
-    pub next: Option<String>,
-    /// Cursor of the next page; null on the last.
-    #[schema(required)]
-    pub next_cursor: Option<String>,
 }
 
 /// Reads `limit`.
@@ -59,27 +47,25 @@ pub fn cursor<T>(query: &Query, read: impl FnOnce(&str) -> Option<T>) -> Result<
 }
 
 /// Answers with a page.
-pub fn answer<T: Serialize>(page: &Page<T>) -> Result<Response, ApiError> {
-    Ok(with(json(StatusCode::OK, page)?, page.link().into_iter().chain([(CACHE_CONTROL, REVALIDATE)])))
+pub fn answer<T: Serialize + ToSchema>(page: &Page<T>, keep: HeaderValue) -> Result<Response, ApiError> {
+    let link = page.next.as_deref().and_then(link);
+    Ok(with(json(StatusCode::OK, page)?, link.into_iter().chain([(CACHE_CONTROL, keep)])))
 }
 
-impl<T> Page<T> {
-    /// A page of the list at `path`; `after` says where the next one begins, if there is one.
-    pub fn new(path: &str, query: &Query, items: Vec<T>, after: Option<&str>) -> Self {
-        let next_cursor = after.map(encode);
-        let next = next_cursor.as_ref().map(|cursor| {
-            let kept = query.pairs().filter(|(name, _)| *name != "cursor");
-            let kept = kept.map(|(name, value)| format!("{name}={}&", escape(value))).collect::<String>();
-            format!("{path}?{kept}cursor={cursor}")
-        });
-        Self { items, next, next_cursor }
-    }
+/// A page of the list at `path`; `after` says where the next one begins, if there is one.
+pub fn page<T: ToSchema>(path: &str, query: &Query, items: Vec<T>, after: Option<&str>) -> Page<T> {
+    let next_cursor = after.map(encode);
+    let next = next_cursor.as_ref().map(|cursor| {
+        let kept = query.pairs().filter(|(name, _)| *name != "cursor");
+        let kept = kept.map(|(name, value)| format!("{name}={}&", escape(value))).collect::<String>();
+        format!("{path}?{kept}cursor={cursor}")
+    });
+    Page { items, next, next_cursor }
+}
 
-    /// The header that leads to the next page, too.
-    fn link(&self) -> Option<(HeaderName, HeaderValue)> {
-        let value = HeaderValue::try_from(format!("<{}>; rel=\"next\"", self.next.as_ref()?));
-        Some((LINK, value.ok()?))
-    }
+/// The header that leads to the next page, too.
+fn link(next: &str) -> Option<(HeaderName, HeaderValue)> {
+    Some((LINK, HeaderValue::try_from(format!("<{next}>; rel=\"next\"")).ok()?))
 }
 
 /// Hexadecimal: opaque enough to keep people from making their own, and lawful in a URL.

@@ -91,13 +91,13 @@ impl<T: Named, S: Send + Sync> FromRequestParts<S> for At<T> {
 
 impl Named for BuildingId {
     fn named(of: &dyn Fn(&str) -> Option<String>) -> Result<Self, ApiError> {
-        uuid_named(of).map(Self).ok_or_else(|| ApiError::not_found("building with such an id"))
+        of("id").and_then(|text| Self::parse(&text)).ok_or_else(|| ApiError::not_found("building with such an id"))
     }
 }
 
 impl Named for AssessmentId {
     fn named(of: &dyn Fn(&str) -> Option<String>) -> Result<Self, ApiError> {
-        uuid_named(of).map(Self).ok_or_else(|| ApiError::not_found("assessment with such an id"))
+        of("id").and_then(|text| Self::parse(&text)).ok_or_else(|| ApiError::not_found("assessment with such an id"))
     }
 }
 
@@ -119,13 +119,6 @@ impl Named for OpeningAt {
     fn named(of: &dyn Fn(&str) -> Option<String>) -> Result<Self, ApiError> {
         Ok(Self(BuildingId::named(of)?, key_named(of, "opening")?))
     }
-}
-
-/// Only the form that the service itself writes: one record has one address.
-fn uuid_named(of: &dyn Fn(&str) -> Option<String>) -> Option<uuid::Uuid> {
-    let text = of("id")?;
-    let id = uuid::Uuid::parse_str(&text).ok()?;
-    (id.to_string() == text).then_some(id)
 }
 
 fn key_named(of: &dyn Fn(&str) -> Option<String>, part: &str) -> Result<Key, ApiError> {

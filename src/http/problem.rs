@@ -4,6 +4,7 @@
 //! response; [`complete`] writes the body at the edge, where the path and the request's id are
 //! known, and turns any other error response that a layer made into a problem too.
 
+use std::fmt;
 use std::sync::Arc;
 
 use axum::body::Body;
@@ -15,7 +16,7 @@ use axum::response::{IntoResponse, Response};
 
 use super::layers::request_id;
 use crate::compute::NoAnswer;
-use crate::wire::problem::{Fault, Problem, Slug};
+use crate::wire::problem::{Problem, ProblemItem, Slug};
 
 /// Media type of every error.
 pub const PROBLEM_JSON: &str = "application/problem+json";
@@ -28,7 +29,7 @@ const RETRY_AFTER_S: &str = "2";
 pub struct ApiError {
     slug: Slug,
     detail: String,
-    faults: Vec<Fault>,
+    faults: Vec<ProblemItem>,
     headers: Vec<(HeaderName, HeaderValue)>,
 }
 
@@ -40,7 +41,7 @@ impl ApiError {
 
     /// With its single faults.
     #[must_use]
-    pub fn with_faults(mut self, faults: Vec<Fault>) -> Self {
+    pub fn with_faults(mut self, faults: Vec<ProblemItem>) -> Self {
         self.faults = faults;
         self
     }
@@ -101,17 +102,23 @@ impl ApiError {
             Some(id) => format!("{}#{id}", uri.path()),
             None => uri.path().to_owned(),
         };
-        let problem = Problem {
-            r#type: format!("/problems/{}", self.slug.word()),
-            title: self.slug.title().to_owned(),
-            status: self.slug.status(),
-            detail: self.detail,
-            instance: Some(instance),
-            errors: self.faults,
-        };
+        let problem = Problem::new(self.slug, self.detail, instance).with_errors(self.faults);
         serde_json::to_vec(&problem).expect("a problem is made of strings and numbers")
     }
 }
+
+/// In words, for whoever is not answered over HTTP.
+impl fmt::Display for ApiError {
+    fn fmt(&self, f: &mut fmt::Formatter<'_>) -> fmt::Result {
+        f.write_str(&self.detail)?;
+        for fault in &self.faults {
+            write!(f, " {}: {}", fault.pointer.as_deref().unwrap_or_default(), fault.detail)?;
+        }
+        Ok(())
+    }
+}
+
+impl std::error::Error for ApiError {}
 
 impl From<NoAnswer> for ApiError {
     fn from(none: NoAnswer) -> Self {
@@ -176,30 +183,4 @@ pub async fn not_this_method(request: Request) -> Response {
         return StatusCode::NO_CONTENT.into_response();
     }
     ApiError::method_not_allowed().into_response()
-}
-
-/// A fault of a header.
-pub fn header(name: &str, code: &str, detail: impl Into<String>) -> Fault {
-    Fault { header: Some(name.to_owned()), ..fault(code, detail) }
-}
-
-/// A fault of a parameter behind the question mark.
-pub fn parameter(name: &str, code: &str, detail: impl Into<String>) -> Fault {
-    Fault { parameter: Some(name.to_owned()), ..fault(code, detail) }
-}
-
-/// A fault of a member of the body.
-pub fn member(pointer: &str, code: &str, detail: impl Into<String>) -> Fault {
-    Fault { pointer: Some(pointer.to_owned()), ..fault(code, detail) }
-}
-
-fn fault(code: &str, detail: impl Into<String>) -> Fault {
-    Fault {
-        pointer: None,
-        parameter: None,
-        header: None,
-        code: code.to_owned(),
-        detail: detail.into(),
-        suggestion: None,
-    }
 }

@@ -1,10 +1,12 @@
 //! What the store refuses, as problems.
 
 use super::conditional::stale;
-use super::problem::{ApiError, header, member};
+use super::conditional::gone;
+use super::forms::fault;
+use super::problem::ApiError;
 use crate::domain::Invalid;
 use crate::store::{Conflict, StoreError};
-use crate::wire::problem::{Fault, Slug};
+use crate::wire::problem::Slug;
 
 impl From<StoreError> for ApiError {
     fn from(error: StoreError) -> Self {
@@ -12,13 +14,7 @@ impl From<StoreError> for ApiError {
             StoreError::NotFound(missing) => Self::not_found(format!("such {missing}")),
             StoreError::Conflict(conflict) => conflicting(&conflict),
             StoreError::Stale { current: Some(current) } => stale(current),
-            StoreError::Stale { current: None } => {
-                Self::new(Slug::PreconditionFailed, "It is not there any more.").with_faults(vec![header(
-                    "If-Match",
-                    "stale",
-                    "what it names is gone",
-                )])
-            }
+            StoreError::Stale { current: None } => gone(),
             StoreError::Busy => Self::overloaded("Too many changes are waiting already; ask again shortly."),
             StoreError::Closed => Self::overloaded("The service is stopping."),
             StoreError::Open { .. } | StoreError::Database(_) | StoreError::Corrupt(_) => Self::internal(&error),
@@ -27,32 +23,25 @@ impl From<StoreError> for ApiError {
 }
 
 fn conflicting(conflict: &Conflict) -> ApiError {
-    let detail = sentence(&conflict.to_string());
+    let words = conflict.to_string();
     let faults = match conflict {
-        Conflict::ReferenceTaken { .. } => vec![member("/reference", "taken", detail.clone())],
-        Conflict::KeyTaken { .. } => vec![member("", "duplicate", detail.clone())],
+        Conflict::ReferenceTaken { .. } => vec![fault("reference", "taken", words.as_str())],
+        Conflict::KeyTaken { .. } => vec![fault("", "duplicate", words.as_str())],
         Conflict::IdTaken { .. } => Vec::new(),
         Conflict::RoomJoined { openings, .. } => {
-            openings.iter().map(|key| member("", "joined", format!("opening `{key}` joins it"))).collect()
+            openings.iter().map(|key| fault("", "joined", format!("opening `{key}` joins it"))).collect()
         }
     };
-    ApiError::new(Slug::Conflict, detail).with_faults(faults)
+    ApiError::new(Slug::Conflict, sentence(&words)).with_faults(faults.into_iter().map(Into::into).collect())
 }
 
 /// Every fault of a body that was read: 422.
 pub fn invalid(faults: Vec<Invalid>) -> ApiError {
-    let faults: Vec<Fault> = faults.into_iter().map(fault).collect();
     let detail = match faults.as_slice() {
-        [one] => format!("The body has a fault: {}.", one.detail),
-        many => format!("The body has {} faults; nothing was saved.", many.len()),
+        [one] => format!("The body has a fault: {}. Nothing was saved.", one.detail),
+        many => format!("The body has {} faults. Nothing was saved.", many.len()),
     };
-    ApiError::new(Slug::Invalid, detail).with_faults(faults)
-}
-
-/// One fault.
-pub fn fault(invalid: Invalid) -> Fault {
-    let Invalid { pointer, code, detail, suggestion } = invalid;
-    Fault { suggestion, ..member(pointer.as_str(), code, detail) }
+    ApiError::new(Slug::Invalid, detail).with_faults(faults.into_iter().map(Into::into).collect())
 }
 
 fn sentence(text: &str) -> String {

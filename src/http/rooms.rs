@@ -12,8 +12,10 @@ use super::change::{MayBeNew, judge};
 use super::headers::{ChangeHeaders, PutHeaders, ReadHeaders};
 use super::params::{At, RoomAt, RoomPath};
 use super::problem::ApiError;
+use super::refusal::invalid;
+use super::forms::Patch;
 use super::{examples, forms};
-use crate::domain::Caller;
+use crate::domain::{Building as Record, Caller};
 use crate::domain::ids::BuildingId;
 use crate::store::{Part, SavedBuilding, StoreError, Missing};
 use crate::wire::{Room, RoomInput};
@@ -44,7 +46,7 @@ pub async fn get_room(
     if let Some(answer) = ask.not_modified(saved.revision) {
         return Ok(answer);
     }
-    versioned(saved.revision, &forms::room(&saved.value))
+    versioned(saved.revision, &Room::of(&saved.value))
 }
 
 /// Put a room under a key that the caller chose.
@@ -72,9 +74,11 @@ pub async fn put_room(
     let part = Part::Room(key.clone());
     let change = judge(&app, &caller, (id, &part, MayBeNew::Yes), &ask, Some((body, Takes::Json))).await?;
     let room = forms::read_room(&change.bytes, &key, app.catalogue)?;
-    let check = move |building: &_| forms::check_with_room(building, &key);
+    // Putting it once more where it is already tells the faults as this body sees them.
+    let again = room.clone();
+    let check = move |building: &Record| building.with_room(again).map(drop).map_err(invalid);
     let saved = app.store.put_room(&caller, id, room, change.condition, change.effects, check).await?;
-    versioned(saved.revision, &forms::room(&saved.value))
+    versioned(saved.revision, &Room::of(&saved.value))
 }
 
 /// Change members of a room.
@@ -104,13 +108,13 @@ pub async fn patch_room(
 ) -> Result<Response, ApiError> {
     let part = Part::Room(key.clone());
     let change = judge(&app, &caller, (id, &part, MayBeNew::No), &ask, Some((body, Takes::MergePatch))).await?;
-    let patch = forms::read_patch(&change.bytes)?;
+    let patch = Patch::read(&change.bytes)?;
     let (catalogue, of) = (app.catalogue, key.clone());
-    let edit = move |building: &_| forms::patched_room(building, &of, &patch, catalogue);
+    let edit = move |building: &_| patch.on_room(building, &of, catalogue);
     let saved: SavedBuilding =
         app.store.edit(&caller, id, part, change.condition, change.effects, edit).await?;
     let room = saved.room(&key).ok_or(StoreError::NotFound(Missing::Room))?;
-    versioned(room.revision, &forms::room(&room.value))
+    versioned(room.revision, &Room::of(&room.value))
 }
 
 /// Delete a room.

@@ -4,6 +4,7 @@ use serde::Serialize;
 use utoipa::ToSchema;
 
 use crate::store;
+use crate::wire::{Links, LocationEcho};
 
 /// The worst rating of one kind, and the room that has it.
 #[derive(Debug, Serialize, ToSchema)]
@@ -18,7 +19,7 @@ pub struct WorstRating {
 #[derive(Debug, Serialize, ToSchema)]
 pub struct Worst {
     /// Id of the assessment.
-    #[schema(format = Uuid)]
+    #[schema(format = "uuid")]
     pub assessment_id: String,
     /// Which level of computation gave the ratings.
     pub level: String,
@@ -40,31 +41,11 @@ pub struct Worst {
     pub entry: Option<WorstRating>,
 }
 
-/// Where a building stands.
-#[derive(Debug, Serialize, ToSchema)]
-pub struct SummaryLocation {
-    /// Longitude, WGS 84.
-    pub longitude_deg: f64,
-    /// Latitude, WGS 84.
-    pub latitude_deg: f64,
-}
-
-/// Where to go from a building in a list.
-#[derive(Debug, Serialize, ToSchema)]
-pub struct BuildingSummaryLinks {
-    /// The building, whole.
-    #[serde(rename = "self")]
-    pub this: String,
-    /// Its latest assessment; null before the first.
-    #[schema(required)]
-    pub latest_assessment: Option<String>,
-}
-
 /// A building in a list.
 #[derive(Debug, Serialize, ToSchema)]
 pub struct BuildingSummary {
     /// Its id.
-    #[schema(format = Uuid)]
+    #[schema(format = "uuid")]
     pub id: String,
     /// The bureau's own number.
     #[schema(required)]
@@ -73,7 +54,7 @@ pub struct BuildingSummary {
     pub name: String,
     /// Where it stands.
     #[schema(required)]
-    pub location: Option<SummaryLocation>,
+    pub location: Option<LocationEcho>,
     /// Occupancy group of the building code, as printed.
     #[schema(required)]
     pub occupancy_group: Option<String>,
@@ -88,7 +69,7 @@ pub struct BuildingSummary {
     #[schema(required)]
     pub worst: Option<Worst>,
     /// Where to go from here.
-    pub links: BuildingSummaryLinks,
+    pub links: Links,
 }
 
 /// Where to go from an assessment in a list.
@@ -105,10 +86,10 @@ pub struct AssessmentSummaryLinks {
 #[derive(Debug, Serialize, ToSchema)]
 pub struct AssessmentSummary {
     /// Its id.
-    #[schema(format = Uuid)]
+    #[schema(format = "uuid")]
     pub id: String,
     /// Id of the building.
-    #[schema(format = Uuid)]
+    #[schema(format = "uuid")]
     pub building_id: String,
     /// The revision that was assessed.
     pub building_revision: u64,
@@ -161,24 +142,17 @@ impl From<store::Worst> for Worst {
 
 impl From<store::Summary> for BuildingSummary {
     fn from(summary: store::Summary) -> Self {
-        let links = BuildingSummaryLinks {
-            this: format!("/v1/buildings/{}", summary.id),
-            latest_assessment: summary.worst.as_ref().map(|worst| format!("/v1/assessments/{}", worst.assessment)),
-        };
         Self {
             id: summary.id.to_string(),
             reference: summary.reference,
             name: summary.name,
-            location: summary.location.map(|at| SummaryLocation {
-                longitude_deg: at.longitude_deg.get(),
-                latitude_deg: at.latitude_deg.get(),
-            }),
+            location: summary.location.map(Into::into),
             occupancy_group: summary.occupancy_group,
             rooms: summary.rooms,
             revision: summary.revision,
             updated_at: summary.updated_at.to_string(),
+            links: Links::of(summary.id, summary.worst.is_some()),
             worst: summary.worst.map(Into::into),
-            links,
         }
     }
 }
