@@ -6,7 +6,6 @@ use super::{Failure, documents};
 use crate::assessment;
 use crate::catalogue::Catalogue;
 use crate::config::Assess;
-use crate::domain::time::Timestamp;
 use crate::domain::{Assumptions, Building};
 use crate::report;
 use crate::wire::{self, AssessInput, BuildingInput, Refused};
@@ -26,7 +25,7 @@ pub fn run(flags: &Assess) -> Result<(), Failure> {
         assessment_id: None,
         building_id: None,
         building_revision: None,
-        created_at: Timestamp(jiff::Timestamp::now().as_microsecond()),
+        created_at: None,
     };
     let report = report::building_report(&findings, &head);
     if flags.json {

@@ -86,6 +86,7 @@ macro_rules! kinds {
             const LIMITS_BECAUSE: &'static str = $because;
         }
         $(#[$meta])*
+        #[doc = concat!("\n\nFrom ", stringify!($min), " to ", stringify!($max), " ", $unit, ": ", $because, ". The limits are ours.")]
         pub type $alias = Quantity<$kind>;
     )*};
 }

@@ -67,7 +67,7 @@ const fn added(measures: &'static str, units: &'static [Unit]) -> Family {
     Family { measures, units, compound: true }
 }
 
-const BTU_J: f64 = 1055.055_852_62;
+const BTU_J: f64 = 1_055.055_852_62;
 const FT2_M2: f64 = 0.092_903_04;
 const LB_KG: f64 = 0.453_592_37;
 /// Heat of ordinary combustibles, per pound, in the reckoning of surveys.
@@ -259,10 +259,14 @@ impl<'a> Reading<'a> {
                 return Err(self.fault(unit_at, "a smaller unit must follow a larger one".to_owned()));
             }
             let number = if negative { -number } else { number };
+            let first = last.is_none();
             total = Some(Sum::add(total, number - unit.zero, unit));
             last = Some(unit);
             self.skip_spaces();
             if self.rest().is_empty() {
+                if first && std::ptr::eq(unit, wanted) {
+                    return Ok(number);
+                }
                 break;
             }
             if !family.compound {
@@ -393,9 +397,8 @@ impl<'a> Reading<'a> {
 /// tells mega from milli.
 fn begins(rest: &str, spelling: &str) -> bool {
     let Some((head, tail)) = rest.split_at_checked(spelling.len()) else { return false };
-    let same = head.eq_ignore_ascii_case(spelling)
-        && (!spelling.starts_with('M') || head.starts_with('M'))
-        && (!spelling.starts_with('m') || spelling.len() == 1 || head.starts_with('m'));
+    let mega = spelling.starts_with('M');
+    let same = head.eq_ignore_ascii_case(spelling) && (!mega || head.starts_with('M'));
     let word = spelling.ends_with(|c: char| c.is_alphanumeric());
     let goes_on = tail.starts_with(|c: char| {
         c.is_alphabetic() || "/²³^".contains(c) || (spelling.is_empty() && !c.is_whitespace())
@@ -421,9 +424,9 @@ impl Sum {
     }
 
     fn of(self, wanted: &Unit) -> f64 {
-        if wanted.times == 1.0 && wanted.per == self.per {
-            return self.over;
-        }
         self.over * wanted.per / (self.per * wanted.times) + wanted.zero
     }
 }
+
+#[cfg(test)]
+mod tests;

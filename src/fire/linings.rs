@@ -61,14 +61,23 @@ pub fn penetration_time_s(surface: &Surface) -> f64 {
     surface.density_kg_m3 * surface.specific_heat_j_kgk / surface.conductivity_w_mk * half_m * half_m
 }
 
+/// Most heat that the gas gives to a lining which has warmed through, per area and kelvin, in kW/(m² K).
+///
+/// `k/d` of a metal sheet is a thousand times that of a board, but the gas beside it passes on no more
+/// than its own film does. Without the cap a steel-lined room would seem unable to flash over.
+///
+/// Source: [`PEATROSS_BEYLER_1994`](crate::fire::sources::PEATROSS_BEYLER_1994).
+pub const FILM_LIMIT_KW_M2K: f64 = 0.03;
+
 /// Effective conductance of a lining a time after the fire began, in kW/(m² K).
 ///
 /// ```text
 /// h_k = √(k ρ c / t)   t < t_p
-/// h_k = k / d          t ≥ t_p
+/// h_k = k / d          t ≥ t_p, at most 0.03
 /// ```
 ///
-/// Symbols as [`penetration_time_s`]; `t` is `time_s`. At `t_p` it falls by half at one blow, as
+/// Symbols as [`penetration_time_s`]; `t` is `time_s`. The cap is [`FILM_LIMIT_KW_M2K`]: it holds for
+/// metal sheet and thin glass only. At `t_p` it falls by half at one blow, as
 /// printed, so that a temperature computed with it jumps by up to 26 %: joining the two smoothly would be
 /// another correlation. Time zero gives infinity.
 ///
@@ -87,7 +96,7 @@ pub fn conductance_kw_m2k(surface: &Surface, time_s: f64) -> f64 {
     if time_s < penetration_time_s(surface) {
         (surface.inertia_kw2_s_m4k2() / time_s).sqrt()
     } else {
-        surface.steady_conductance_kw_m2k()
+        surface.steady_conductance_kw_m2k().min(FILM_LIMIT_KW_M2K)
     }
 }
 
@@ -116,10 +125,10 @@ pub fn total_area_m2(surfaces: &[Surface]) -> f64 {
 /// Conductance of a closed or fan-driven room by Deal and Beyler, times area and summed, in kW/K.
 ///
 /// ```text
-/// h = 0.4 max( √(k ρ c / t), k/d )
+/// h = 0.4 max( √(k ρ c / t), k/d )     once t ≥ t_p at most 0.03
 /// ```
 ///
-/// Symbols as [`penetration_time_s`]. Range: up to about 2000 s.
+/// Symbols as [`penetration_time_s`]; the cap is [`FILM_LIMIT_KW_M2K`]. Range: up to about 2000 s.
 ///
 /// Source: [`DEAL_BEYLER_1990`](crate::fire::sources::DEAL_BEYLER_1990).
 ///
@@ -136,7 +145,9 @@ pub fn deal_beyler_conductance_kw_k(surfaces: &[Surface], time_s: f64) -> f64 {
         .iter()
         .map(|s| {
             let transient = (s.inertia_kw2_s_m4k2() / time_s).sqrt();
-            0.4 * transient.max(s.steady_conductance_kw_m2k()) * s.area_m2
+            let lining = 0.4 * transient.max(s.steady_conductance_kw_m2k());
+            let warmed_through = time_s >= penetration_time_s(s);
+            if warmed_through { lining.min(FILM_LIMIT_KW_M2K) * s.area_m2 } else { lining * s.area_m2 }
         })
         .sum()
 }
@@ -215,6 +226,21 @@ mod tests {
         // By hand: (10·0.010692 + 30·0.054160)/40 = 0.043293.
         assert_relative_eq!(mean, 0.043_293, max_relative = 1e-4);
         assert_eq!(mean_conductance_kw_m2k(&[], 600.0), 0.0);
+    }
+
+    #[test]
+    fn a_steel_sheet_takes_no_more_heat_than_the_gas_gives() {
+        let sheet = Surface {
+            area_m2: 10.0,
+            conductivity_w_mk: 45.0,
+            density_kg_m3: 7850.0,
+            specific_heat_j_kgk: 480.0,
+            thickness_m: 0.001,
+        };
+
+        // By hand: k/d = 45 kW/(m² K), capped at 0.03; ten square metres of it.
+        assert_relative_eq!(conductance_kw_m2k(&sheet, 300.0), 0.03);
+        assert_relative_eq!(deal_beyler_conductance_kw_k(&[sheet], 300.0), 0.3);
     }
 
     #[test]

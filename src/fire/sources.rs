@@ -138,6 +138,14 @@ pub const DEAL_BEYLER_1990: Source = Source {
     provenance: Provenance::Memory,
 };
 
+/// Cap on the conductance of thin metal.
+pub const PEATROSS_BEYLER_1994: Source = Source {
+    key: "peatross_beyler_1994",
+    citation: "Peatross, M. J. and Beyler, C. L.: Thermal environment prediction in steel-bounded preflashover compartment fires, Fire Safety Science 4 (1994) 205-216",
+    locator: "heat transfer from gas to a steel boundary, 30 W/(m² K) at first",
+    provenance: Provenance::Memory,
+};
+
 /// Closed room.
 pub const BEYLER_1991: Source = Source {
     key: "beyler_1991",
@@ -410,6 +418,7 @@ pub const ALL: &[&Source] = &[
     &FSRI_2018,
     &FOOTE_1986,
     &DEAL_BEYLER_1990,
+    &PEATROSS_BEYLER_1994,
     &BEYLER_1991,
     &HESKESTAD_1983,
     &HESKESTAD_1984,

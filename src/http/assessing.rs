@@ -98,7 +98,7 @@ fn written(order: &Order, found: &BuildingFindings) -> Result<Made, ApiError> {
             assessment_id: record.map(|record| record.id),
             building_id: record.map(|record| record.building),
             building_revision: record.map(|record| record.revision),
-            created_at: order.at,
+            created_at: Some(order.at),
         },
     );
     let json = |error| ApiError::internal(&error);

@@ -60,9 +60,9 @@ pub async fn assess(State(app): State<App>, ask: Ask, body: Unread) -> Result<Re
             ("Location" = String, description = "Where it is."),
             ("ETag" = String, description = "Its id: it never changes."),
         ),
-        links((
-            "GetAssessment" = (operation_id = "get_assessment", parameters(("id" = "$response.body#/assessment_id"))),
-        )),
+        links(
+            ("GetAssessment" = (operation_id = "get_assessment", parameters(("id" = "$response.body#/assessment_id")))),
+        ),
     )),
 )]
 pub async fn create_assessment(

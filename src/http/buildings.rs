@@ -67,10 +67,10 @@ pub async fn list_buildings(caller: Caller, State(app): State<App>, ask: Ask) ->
                 ("Location" = String, description = "Where it is."),
                 ("ETag" = String, description = "Its revision, for If-Match."),
             ),
-            links((
-                "GetBuilding" = (operation_id = "get_building", parameters(("id" = "$response.body#/id"))),
-                "AssessIt" = (operation_id = "create_assessment", parameters(("id" = "$response.body#/id"))),
-            )),
+            links(
+                ("GetBuilding" = (operation_id = "get_building", parameters(("id" = "$response.body#/id")))),
+                ("AssessIt" = (operation_id = "create_assessment", parameters(("id" = "$response.body#/id")))),
+            ),
         ),
         (status = 409, description = "Another building has the reference."),
     ),

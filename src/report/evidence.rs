@@ -5,7 +5,7 @@ use std::borrow::Cow;
 use serde::Serialize;
 use utoipa::ToSchema;
 
-use super::number::Exact;
+use super::number::{Exact, Number};
 use super::text::cautions;
 use super::words::ProvenanceWord;
 use crate::assessment::findings::{self, AssumedValue};
@@ -42,13 +42,26 @@ pub enum Value {
     Flag(bool),
 }
 
+/// A number of the catalogue is echoed exactly. One that was worked out from it (half a diagonal,
+/// a leakage area) is a finding like any other, and shows by its many digits.
+fn assumed_number(number: f64) -> Option<Value> {
+    const LONGEST_OF_THE_CATALOGUE: usize = 6;
+    let as_it_came = format!("{number:e}");
+    let digits = as_it_came.split('e').next().map_or(0, |m| m.chars().filter(char::is_ascii_digit).count());
+    if digits <= LONGEST_OF_THE_CATALOGUE {
+        Exact::of(number).map(Value::Number)
+    } else {
+        Number::of(number).and_then(|rounded| Exact::of(rounded.get())).map(Value::Number)
+    }
+}
+
 impl From<&findings::Assumed> for Assumption {
     fn from(assumed: &findings::Assumed) -> Self {
         Self {
             room: assumed.room.as_ref().map(Key::to_string),
             field: assumed.field.clone(),
             value: match &assumed.value {
-                AssumedValue::Number(number) => Exact::of(*number).map(Value::Number),
+                AssumedValue::Number(number) => assumed_number(*number),
                 AssumedValue::Text(text) => Some(Value::Text(text.clone())),
                 AssumedValue::Flag(flag) => Some(Value::Flag(*flag)),
             },
@@ -142,4 +155,18 @@ pub struct Rule {
 /// The rules, in order.
 pub(super) fn rules() -> Vec<Rule> {
     rules::CLAUSES.iter().map(|clause| Rule { number: clause.number, text: clause.text }).collect()
+}
+
+#[cfg(test)]
+mod tests {
+    use super::*;
+
+    #[test]
+    fn what_the_catalogue_says_is_echoed_and_what_was_worked_out_is_rounded() {
+        for (number, expected) in [(0.0127, 0.0127), (17.8645, 17.8645), (0.024_515_999_999_999_996, 0.02452)]
+        {
+            assert_eq!(assumed_number(number), Exact::of(expected).map(Value::Number));
+        }
+        assert_eq!(assumed_number(f64::INFINITY), None);
+    }
 }

@@ -7,7 +7,7 @@ use utoipa::ToSchema;
 
 use super::figure::{Figure, Range, each, number, range};
 use super::number::{Exact, Number};
-use super::words::{FlashoverWord, LimitWord, PlaceWord, ScenarioWord};
+use super::words::{BackdraftWord, FlashoverWord, LimitWord, PlaceWord, ScenarioWord};
 use crate::assessment::findings;
 use crate::domain::Key;
 
@@ -117,12 +117,46 @@ pub struct ScenarioScreen {
     pub time_s: Option<Range>,
     /// What each opening counts as.
     pub openings: Vec<OpeningState>,
+    /// The unburned gas, where the room can starve in this scenario.
+    #[schema(required)]
+    pub starved: Option<Starved>,
     /// Why it was not judged, or how.
     #[schema(required)]
     pub reason: Option<Cow<'static, str>>,
     /// The same as a stable word for programs.
     #[schema(required)]
     pub reason_key: Option<&'static str>,
+}
+
+/// The unburned gas of a scenario in which the room starves.
+#[derive(Debug, Clone, PartialEq, Serialize, ToSchema)]
+pub struct Starved {
+    /// Backdraft rating of this scenario.
+    pub rating: BackdraftWord,
+    /// Heat of combustion of unburned gas per kilogram of layer gas.
+    #[schema(required)]
+    pub excess_fuel_mj_kg: Option<Range>,
+    /// From where on a mixture with air can carry a flame.
+    #[schema(required)]
+    pub threshold_mj_kg: Option<Number>,
+    /// Temperature of the layer when the flame dies.
+    #[schema(required)]
+    pub layer_temperature_c: Option<Range>,
+    /// When the flame dies, on the fire clock.
+    #[schema(required)]
+    pub flame_out_s: Option<Range>,
+}
+
+impl From<&findings::StarvedFinding> for Starved {
+    fn from(starved: &findings::StarvedFinding) -> Self {
+        Self {
+            rating: starved.rating.into(),
+            excess_fuel_mj_kg: range(Some(starved.excess_fuel_mj_kg)),
+            threshold_mj_kg: Number::of(starved.threshold_mj_kg),
+            layer_temperature_c: range(Some(starved.layer_temperature_c)),
+            flame_out_s: range(Some(starved.flame_out_s)),
+        }
+    }
 }
 
 /// What an opening counts as in a scenario.
@@ -153,6 +187,7 @@ impl From<&findings::ScenarioFinding> for ScenarioScreen {
             limited_by: screen.limited_by.map(Into::into),
             time_s: range(screen.time_s),
             openings: each(&screen.openings),
+            starved: screen.starved.as_ref().map(Into::into),
             reason: screen.reason.as_ref().map(|reason| reason.text.clone()),
             reason_key: screen.reason.as_ref().map(|reason| reason.key),
         }

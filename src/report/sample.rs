@@ -143,6 +143,13 @@ pub fn room(name: &str) -> RoomFindings {
                 counted_area_m2: 1.8,
                 because: "stands open: someone fled",
             }],
+            starved: Some(StarvedFinding {
+                rating: BackdraftRating::CannotBeExcluded,
+                excess_fuel_mj_kg: Band { low: 2.1, typical: 3.456_78, high: 5.0 },
+                threshold_mj_kg: 3.000_01,
+                layer_temperature_c: Band { low: 300.0, typical: 412.3456, high: 500.0 },
+                flame_out_s: BAND,
+            }),
             reason: None,
         }],
         growth_strip: vec![GrowthFinding {

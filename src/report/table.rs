@@ -83,7 +83,8 @@ fn yes_no(answer: Option<bool>) -> &'static str {
 }
 
 fn legend(out: &mut String, report: &BuildingReport) {
-    let text = "Times are minutes and seconds from established burning: typical (earliest-latest).";
+    let text = "Times are minutes and seconds from established burning: typical (earliest-latest); \
+                \"from\" where it may stay out.";
     paragraph(out, text, "", "");
     if report.rooms.iter().any(|room| room.body.flashover.provisional) {
         paragraph(out, "?  rests on inputs that are assumed, not recorded.", "", "");
@@ -117,7 +118,8 @@ fn wanted(out: &mut String, report: &BuildingReport) {
 
 fn cautions(out: &mut String, report: &BuildingReport) {
     out.push_str("Cautions\n");
-    for caution in &report.cautions {
+    // What each rating is conditional on stands above the rows already.
+    for caution in report.cautions.iter().filter(|caution| caution.key != "conditional") {
         paragraph(out, &caution.text, "  - ", "    ");
     }
     let lines = by_room(

@@ -11,9 +11,9 @@ use crate::domain::Building;
 use crate::domain::ids::{AgencyId, BuildingId};
 
 /// Most buildings kept.
-const BUILDINGS: usize = 256;
+pub(super) const BUILDINGS: usize = 256;
 /// Most rooms, openings and fuel packages kept, over all buildings: some 1 kB each.
-const PARTS: usize = 8000;
+pub(super) const PARTS: usize = 8000;
 
 /// A building and its parts' tags at one revision.
 #[derive(Debug, Clone)]

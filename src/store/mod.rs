@@ -2,7 +2,7 @@
 //!
 //! [`Store`] is the one handle. Every method takes the [`Caller`] whose agency
 //! it acts for, and is one transaction: changes go through the one
-//! [writer](writer), reads through connections that can do nothing else. Ids
+//! writer, reads through connections that can do nothing else. Ids
 //! and moments are passed in. A change that was answered with `Ok` is on disk.
 //!
 //! | to | call |
@@ -57,7 +57,6 @@ pub use records::{
     Part, PartRevisions, Rated, RoomFinding, Saved, SavedBuilding, Spread, Summary, Worst, WorstRating,
 };
 
-#[expect(unused_imports, reason = "named in the text above")]
 use crate::domain::Caller;
 
 /// The records. Cheap to clone; all clones share one writer.
@@ -84,7 +83,7 @@ impl Store {
 
     /// Whether records can be read and changes are taken: an empty transaction goes the way of every other.
     pub async fn ready(&self) -> Result<(), StoreError> {
-        drop(self.readers.acquire().await?);
+        self.is_empty(&Caller::local()).await?;
         self.writer.write(|_| Box::pin(async { Ok(()) })).await
     }
 

@@ -1,6 +1,6 @@
 //! The form of the assumptions of an assessment.
 
-use super::list::List;
+use super::list::{List, Words};
 use super::object::{Maybe, default_of, doc_of, name_of, object};
 use super::scalar::{Bare, OneWord, Whole};
 use crate::domain::Key;
@@ -26,7 +26,7 @@ object! {
         /// How deep the computation goes.
         level: Maybe<OneWord<Level>> = None,
         /// Only these scenarios; null: all.
-        scenarios: Maybe<List<OneWord<Scenario>, 6>> = None,
+        scenarios: Maybe<Words<Scenario, 1>> = None,
         /// Horizon; null: 60 min open and 120 min shut.
         horizon_s: Maybe<Span> = None,
         /// Fractile of the fire load; null: 0.8.

@@ -31,6 +31,10 @@ pub trait Form {
     /// The member that tells the elements of a list apart, of forms that stand in lists.
     const IDENTITY: Option<&'static str> = None;
 
+    /// Whether the document may print the value that an absent member takes: not if it hangs on
+    /// other members.
+    const DEFAULT_STATED: bool = true;
+
     /// Reads a value. `None` means that a fault has been recorded.
     fn read(json: &Json, at: &Pointer, reader: &mut Reader<'_>) -> Option<Self::Value>;
 

@@ -209,7 +209,7 @@ macro_rules! request_of_form {
             }
 
             fn schemas(into: &mut Components) {
-                <$form as Form>::components(Way::Request, into);
+                add_components(into, |into| <$form as Form>::components(Way::Request, into));
             }
         }
     )*};
@@ -219,6 +219,14 @@ request_of_form! {
     RoomInput = Room,
     OpeningInput = Opening,
     AssumptionsInput = Assumptions,
+}
+
+/// Adds components that are made apart: one that stands in `into` already may stand there
+/// without those that it refers to.
+pub(super) fn add_components(into: &mut Components, make: impl FnOnce(&mut Components)) {
+    let mut components = Components::new();
+    make(&mut components);
+    into.append(&mut components);
 }
 
 /// The component of this name among those that are made.
@@ -241,7 +249,7 @@ impl ToSchema for BuildingInput {
     }
 
     fn schemas(into: &mut Components) {
-        building::request_components(into);
+        add_components(into, building::request_components);
     }
 }
 
@@ -270,8 +278,8 @@ impl ToSchema for AssessInput {
     }
 
     fn schemas(into: &mut Components) {
-        building::request_components(into);
-        <Assumptions as Form>::components(Way::Request, into);
+        add_components(into, building::request_components);
+        add_components(into, |into| <Assumptions as Form>::components(Way::Request, into));
     }
 }
 
@@ -287,6 +295,6 @@ impl ToSchema for AssessmentRequest {
     }
 
     fn schemas(into: &mut Components) {
-        <Assumptions as Form>::components(Way::Request, into);
+        add_components(into, |into| <Assumptions as Form>::components(Way::Request, into));
     }
 }

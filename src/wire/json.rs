@@ -249,3 +249,6 @@ impl<'de> Visitor<'de> for Node<'_> {
         Ok(Json::Object(read))
     }
 }
+
+#[cfg(test)]
+mod tests;

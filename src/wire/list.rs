@@ -10,8 +10,9 @@ use utoipa::openapi::schema::{Array, Schema};
 use super::form::{Components, Form, Way, Written};
 use super::json::Json;
 use super::reader::Reader;
-use crate::domain::Pointer;
+use super::scalar::OneWord;
 use crate::domain::check::NameOutline;
+use crate::domain::{Pointer, Word};
 
 /// A list of at most `MAX` elements.
 pub struct List<F, const MAX: usize>(PhantomData<F>);
@@ -71,6 +72,54 @@ fn note_name<F: Form>(element: &Json, list: &Pointer, place: &Pointer, reader: &
         _ => return,
     };
     reader.outline.names.push(NameOutline { list: list.clone(), name, at: place.member(member) });
+}
+
+/// Words out of a closed list, at least `MIN`, none twice.
+pub struct Words<W, const MIN: usize>(PhantomData<W>);
+
+impl<W: Word, const MIN: usize> Form for Words<W, MIN> {
+    type Value = Vec<W>;
+
+    fn read(json: &Json, at: &Pointer, reader: &mut Reader<'_>) -> Option<Vec<W>> {
+        let Json::Array(elements) = json else {
+            reader.wrong_type(at, json, "an array");
+            return None;
+        };
+        if elements.len() < MIN {
+            reader.fault(at, "too_short", format!("must name {MIN} of the list at least"));
+            return None;
+        }
+        let mut whole = true;
+        let mut values = Vec::new();
+        for (index, element) in elements.iter().enumerate() {
+            let place = at.element(index);
+            match OneWord::<W>::read(element, &place, reader) {
+                Some(value) if values.contains(&value) => {
+                    let word = value.word();
+                    reader.fault(&place, "duplicate", format!("`{word}` stands twice in this list"));
+                    whole = false;
+                }
+                Some(value) => values.push(value),
+                None => whole = false,
+            }
+            if reader.is_full() {
+                break;
+            }
+        }
+        whole.then_some(values)
+    }
+
+    fn write<S: Serializer>(value: &Vec<W>, serializer: S) -> Result<S::Ok, S::Error> {
+        serializer.collect_seq(value.iter().map(|value| value.word()))
+    }
+
+    fn schema(way: Way) -> RefOr<Schema> {
+        let mut list = Array::new(OneWord::<W>::schema(way));
+        list.min_items = (MIN > 0).then_some(MIN);
+        list.max_items = Some(W::EVERY.len());
+        list.unique_items = true;
+        list.into()
+    }
 }
 
 /// A pair of equals: the two spaces of an opening.

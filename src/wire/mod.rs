@@ -27,9 +27,7 @@ pub use input::{
     Refused, RoomInput, read, read_json, read_part, read_part_value, read_value,
 };
 pub use named::WrittenProperties;
-pub use output::{
-    AssumptionsEcho, Building, BuildingSummary, Links, LocationEcho, Meta, Opening, Page, Room, Worst,
-};
+pub use output::{AssumptionsEcho, Building, Links, LocationEcho, Meta, Opening, Page, Room};
 pub use patch::merge_patch;
 pub use problem::{Problem, ProblemItem, Slug};
 

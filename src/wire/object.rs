@@ -70,7 +70,8 @@ pub(super) fn property<F: Form>(
     let schema = match (way, default) {
         (Way::Request, Some(default)) => {
             let written = serde_json::to_value(Written::<F>(&default())).unwrap_or_default();
-            with_default(nullable(schema), written)
+            let schema = nullable(schema);
+            if F::DEFAULT_STATED { with_default(schema, written) } else { schema }
         }
         _ => {
             object.required.push(name.to_owned());
@@ -102,22 +103,22 @@ pub(super) fn ignored_properties(mut object: Object, names: &[&str]) -> Object {
 }
 
 fn described(schema: RefOr<Schema>, doc: &str) -> RefOr<Schema> {
-    let doc = Some(doc.to_owned());
+    let doc = doc.to_owned();
     match schema {
         RefOr::Ref(mut reference) => {
-            reference.description = doc.unwrap_or_default();
+            reference.description = doc;
             reference.into()
         }
         RefOr::T(Schema::Object(mut object)) => {
-            object.description = doc;
+            object.description = Some(doc);
             object.into()
         }
         RefOr::T(Schema::OneOf(mut choice)) => {
-            choice.description = doc;
+            choice.description = Some(doc);
             RefOr::T(Schema::OneOf(choice))
         }
         RefOr::T(Schema::Array(mut array)) => {
-            array.description = doc;
+            array.description = Some(doc);
             array.into()
         }
         other => other,

@@ -36,8 +36,9 @@ parts! {
         height_m: OpeningSide,
         /// Lower edge above the floor of the first of `connects`.
         sill_m: Sill = zero!(Sill),
-        /// Share of the area that stands open as found.
-        open_fraction: Fraction = zero!(Fraction),
+        /// Share of the area that stands open as found. Absent: 1 of a gap or vent, which nobody can
+        /// shut, and 0 of all others.
+        open_fraction: OpenShare = zero!(Fraction),
         /// A hold-open keeps it open until detection releases it.
         held_open: bool = false,
         /// Shuts itself.
@@ -58,6 +59,38 @@ parts! {
         glazing: Maybe<OneWord<Glazing>> = None,
         /// How inputs are known, by the name of the member; one that is not named is estimated.
         basis: BasisMap<OfOpening> = super::basis::nothing(),
+    }
+}
+
+/// The share that stands open: a fraction, whose default hangs on the kind.
+pub(super) struct OpenShare;
+
+impl OpenShare {
+    fn of_kind(kind: OpeningKind) -> Fraction {
+        match kind {
+            OpeningKind::Gap | OpeningKind::Vent => {
+                Fraction::new(1.0).expect("one lies within the limits of a share")
+            }
+            _ => zero!(Fraction),
+        }
+    }
+}
+
+impl Form for OpenShare {
+    type Value = Fraction;
+
+    const DEFAULT_STATED: bool = false;
+
+    fn read(json: &Json, at: &Pointer, reader: &mut Reader<'_>) -> Option<Fraction> {
+        <Fraction as Form>::read(json, at, reader)
+    }
+
+    fn write<S: Serializer>(value: &Fraction, serializer: S) -> Result<S::Ok, S::Error> {
+        <Fraction as Form>::write(value, serializer)
+    }
+
+    fn schema(way: Way) -> RefOr<Schema> {
+        <Fraction as Form>::schema(way)
     }
 }
 
@@ -128,7 +161,10 @@ impl Form for Opening {
     const IDENTITY: Option<&'static str> = Some("key");
 
     fn read(json: &Json, at: &Pointer, reader: &mut Reader<'_>) -> Option<Self> {
-        let parts = OpeningParts::read(json, at, reader)?;
+        let mut parts = OpeningParts::read(json, at, reader)?;
+        if matches!(json.member("open_fraction"), None | Some(Json::Null)) {
+            parts.open_fraction = parts.kind.map(OpenShare::of_kind);
+        }
         reader.outline.openings.push(parts.outline(at));
         parts.whole()
     }

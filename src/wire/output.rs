@@ -10,7 +10,7 @@ use utoipa::{PartialSchema, ToSchema};
 
 use super::building::{self, BuildingParts};
 use super::form::{Components, Form, Way, Written};
-use super::input::component_of;
+use super::input::{add_components, component_of};
 use super::stored::SCHEMA;
 use crate::domain::time::Timestamp;
 use crate::domain::{self, Assumptions, BuildingId};
@@ -134,7 +134,7 @@ impl ToSchema for Building {
     }
 
     fn schemas(into: &mut Components) {
-        BuildingParts::components_of_members(Way::Answer, into);
+        add_components(into, |into| BuildingParts::components_of_members(Way::Answer, into));
         into.push((Links::name().into_owned(), Links::schema()));
     }
 }
@@ -176,7 +176,7 @@ macro_rules! answer_of_form {
             }
 
             fn schemas(into: &mut Components) {
-                <$domain as Form>::components(Way::Answer, into);
+                add_components(into, |into| <$domain as Form>::components(Way::Answer, into));
             }
         }
     )*};
@@ -191,52 +191,9 @@ answer_of_form! {
     AssumptionsEcho = Assumptions, "Assumptions";
 }
 
-/// The worst ratings that the latest assessment gave to a room of a building.
-#[derive(Debug, Clone, PartialEq, Eq, Serialize, ToSchema)]
-pub struct Worst {
-    /// Flashover.
-    pub flashover: String,
-    /// Backdraft.
-    pub backdraft: String,
-    /// Entry.
-    pub entry: String,
-    /// The assessment is of an older revision, or by an older engine or catalogue.
-    pub stale: bool,
-}
-
 /// A position, WGS 84.
 #[derive(Debug, Clone, Copy, PartialEq)]
 pub struct LocationEcho(domain::building::Location);
-
-/// A building in a list.
-#[derive(Debug, Clone, PartialEq, Serialize, ToSchema)]
-pub struct BuildingSummary {
-    /// Id, given by the service.
-    pub id: String,
-    /// The bureau's own number.
-    #[schema(required)]
-    pub reference: Option<String>,
-    /// Name.
-    pub name: String,
-    /// Position.
-    #[schema(required)]
-    pub location: Option<LocationEcho>,
-    /// Occupancy group of the building code, as printed there.
-    #[schema(required)]
-    pub occupancy_group: Option<String>,
-    /// How many rooms it has.
-    pub rooms: u64,
-    /// Revision.
-    pub revision: u64,
-    /// When this revision was saved, RFC 3339 in UTC.
-    #[schema(format = DateTime)]
-    pub updated_at: String,
-    /// Worst ratings of the latest assessment; null: not assessed yet.
-    #[schema(required)]
-    pub worst: Option<Worst>,
-    /// Links.
-    pub links: Links,
-}
 
 impl From<domain::building::Location> for LocationEcho {
     fn from(location: domain::building::Location) -> Self {

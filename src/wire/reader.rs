@@ -111,7 +111,8 @@ impl<'c> Reader<'c> {
         }
     }
 
-    /// The faults, those of one place together and in the order of the document's members.
+    /// The faults: those of single members in the order of our definitions, then those between
+    /// members.
     pub fn into_faults(self) -> Vec<Invalid> {
         let mut faults = self.faults;
         if self.left_out > 0 {

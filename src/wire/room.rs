@@ -8,7 +8,7 @@ use utoipa::openapi::schema::Schema;
 use super::basis::{BasisMap, OfRoom};
 use super::form::{Components, Form, Way};
 use super::json::Json;
-use super::list::List;
+use super::list::{List, Words};
 use super::named::NameOr;
 use super::object::{self, Maybe, default_of, doc_of, name_of, object, parts};
 use super::reader::Reader;
@@ -185,7 +185,7 @@ parts! {
         /// Racks or piles.
         storage: Maybe<Storage> = None,
         /// Hazards that the methods do not compute.
-        hazards: List<OneWord<Hazard>, 12> = vec![Hazard::NotRecorded],
+        hazards: Words<Hazard, 0> = vec![Hazard::NotRecorded],
         /// Detectors.
         detectors: List<Detector, 100> = Vec::new(),
         /// Sprinkler heads.

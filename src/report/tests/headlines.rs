@@ -51,7 +51,7 @@ fn not_indicated_never_stands_without_its_condition() {
 
     assert_eq!(
         headline::room(&room),
-        "Flashover not indicated, but only while the fire load stays below 420 MJ/m²; now 100."
+        "Flashover not indicated, but only while the fire load stays below 420 MJ/m² (now 100)."
     );
 
     room.flashover.holds_while.clear();
@@ -113,6 +113,7 @@ fn flashover_without_a_time_says_how_far_it_goes() {
         ),
         ("within_scatter", "Flashover possible with the door open: the fire comes close to what it takes."),
         ("hazard_gas_cylinders", "Flashover cannot be excluded, whatever the figures say."),
+        ("oxygen_budget", "Flashover possible with the door open, before the air inside is used up."),
         ("anything_else", "Flashover possible with the door open, at a time that cannot be told."),
     ] {
         let mut room = with(FlashoverRating::Possible, BackdraftRating::NotIndicated);

@@ -1,11 +1,14 @@
 //! Claims about whole reports.
 
 mod contract;
+mod demo;
 mod headlines;
 mod printed;
 mod schema;
 
 use serde_json::Value;
+
+use super::number::SIGNIFICANT_DIGITS;
 
 /// Words that must not be used of a rating, nor anywhere near one.
 const BANNED: [&str; 8] = ["safe", "safely", "no risk", "low risk", "clear", "pass", "passes", "green"];
@@ -28,6 +31,29 @@ fn texts(value: &Value, path: &str, each: &mut impl FnMut(&str, &str)) {
         Value::Object(members) => {
             members.iter().for_each(|(name, value)| texts(value, &format!("{path}/{name}"), each));
         }
+        _ => {}
+    }
+}
+
+/// Members that echo what was given; a version's or a digit's number is no finding either.
+const ECHOED: [&str; 5] =
+    ["/height_m", "/available_l_min", "/fractile", "/building_revision", "/assumptions/value"];
+
+/// Every number that has more digits than a finding may have, with its path.
+fn not_rounded(value: &Value, path: &str, each: &mut impl FnMut(&str, f64)) {
+    match value {
+        Value::Number(number) => {
+            let number = number.as_f64().unwrap();
+            let rounded = format!("{number:.*e}", SIGNIFICANT_DIGITS - 1).parse::<f64>().unwrap();
+            if number != rounded && !ECHOED.iter().any(|member| path.ends_with(member)) {
+                each(path, number);
+            }
+        }
+        Value::Array(list) => list.iter().for_each(|value| not_rounded(value, path, each)),
+        Value::Object(members) => members
+            .iter()
+            .filter(|(name, _)| *name != "requested")
+            .for_each(|(name, value)| not_rounded(value, &format!("{path}/{name}"), each)),
         _ => {}
     }
 }

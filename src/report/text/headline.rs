@@ -86,6 +86,10 @@ fn flashover(finding: &FlashoverFinding) -> String {
         FlashoverRating::NotIndicated => return not_indicated(finding.holds_while.first()),
         FlashoverRating::NotAssessed => {
             return match &finding.reason {
+                Some(reason) if reason.key == "horizontal_openings_only" => {
+                    "Not assessed, count it with the worst: it is open only through floor, ceiling or roof"
+                        .to_owned()
+                }
                 Some(reason) => {
                     format!("Not assessed, count it with the worst: {}", clause(in_words(reason)))
                 }
@@ -110,9 +114,7 @@ fn flashover(finding: &FlashoverFinding) -> String {
             format!("{verb}{case}, if fuel, growth and lining are at their worst")
         }
         Some("within_scatter") => format!("{verb}{case}: the fire comes close to what it takes"),
-        Some("oxygen_budget") => {
-            format!("{verb}{case} as far as the air inside lasts, at a time that cannot be told")
-        }
+        Some("oxygen_budget") => format!("{verb}{case}, before the air inside is used up"),
         _ => format!("{verb}{case}, at a time that cannot be told"),
     }
 }
@@ -127,7 +129,11 @@ fn in_words(reason: &Reason) -> &str {
 fn not_indicated(holds: Option<&HoldsWhile>) -> String {
     match holds {
         Some(holds) if holds.value.is_some() => {
-            format!("Flashover not indicated, but only while {}", clause(strip_lead(&holds.words)))
+            let words = clause(strip_lead(&holds.words));
+            match words.split_once("; now ") {
+                Some((bound, now)) => format!("Flashover not indicated, but only while {bound} (now {now})"),
+                None => format!("Flashover not indicated, but only while {words}"),
+            }
         }
         _ => "Flashover not indicated in the cases computed, as the room is recorded".to_owned(),
     }

@@ -2,9 +2,11 @@
 
 mod agencies;
 mod assessments;
+mod caching;
 mod conditions;
 mod files;
 mod lists;
+mod projections;
 mod saving;
 mod statements;
 mod writing;

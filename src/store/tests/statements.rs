@@ -10,9 +10,9 @@ fn all() -> Vec<&'static str> {
         findings::ALL,
         heads::ALL,
         parts::ALL,
-        projections::fuel_packages::ALL,
-        projections::openings::ALL,
-        projections::rooms::ALL,
+        crate::store::projections::fuel_packages::ALL,
+        crate::store::projections::openings::ALL,
+        crate::store::projections::rooms::ALL,
         revisions::ALL,
     ]
     .concat()

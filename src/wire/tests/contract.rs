@@ -57,7 +57,7 @@ pub fn example() -> Value {
     serde_json::from_str(EXAMPLE).unwrap()
 }
 
-fn meta() -> Meta {
+pub fn meta() -> Meta {
     let id = BuildingId::parse("0193f2a0-7c00-7000-8000-00000000abcd").unwrap();
     let at = Timestamp::parse("2026-12-01T09:15:00.123Z").unwrap();
     Meta {
