@@ -13,6 +13,8 @@ mod assessments;
 mod body;
 mod buildings;
 mod caller;
+mod catalogue;
+mod catalogue_rows;
 mod change;
 mod conditional;
 mod docs;

@@ -7,7 +7,7 @@ use utoipa_axum::routes;
 
 use super::app::App;
 use super::{
-    assessments, buildings, docs, document, layers, methods, metrics, openings, pages, probes, problem, rooms,
+    assessments, buildings, catalogue, docs, document, layers, methods, metrics, openings, pages, probes, problem, rooms,
 };
 
 /// The operations of the interface. What is registered here is in the OpenAPI document too.
@@ -32,6 +32,13 @@ pub(super) fn operations() -> OpenApiRouter<App> {
         .routes(routes!(assessments::get_assessment))
         .routes(routes!(assessments::get_room_report))
         .routes(routes!(assessments::assess))
+        .routes(routes!(catalogue::list_uses))
+        .routes(routes!(catalogue::list_items))
+        .routes(routes!(catalogue::list_fuels))
+        .routes(routes!(catalogue::list_materials))
+        .routes(routes!(catalogue::list_leakage_classes))
+        .routes(routes!(catalogue::list_detectors))
+        .routes(routes!(catalogue::list_sprinklers))
         .routes(routes!(methods::list_methods))
 }
 
