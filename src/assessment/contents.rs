@@ -15,6 +15,8 @@ use crate::fire::{DesignFire, design_fire, growth, spread};
 
 /// Radiative share where the fuel is not known: 0.35, common practice.
 const RADIATIVE_SHARE: f64 = 0.35;
+/// Net heat of combustion where the fuel is not known: 20 MJ/kg of mixed contents, common practice.
+const CONTENTS_KJ_KG: f64 = 20_000.0;
 /// Clear distance between packages where none was measured. Ours.
 const SPACING_M: f64 = 0.5;
 /// Share of typical growth at the slow corner; its inverse at the fast one. Half a growth class. Ours.
@@ -87,6 +89,8 @@ pub(super) struct Contents {
     pub heat_release_per_area_kw_m2: f64,
     pub floor_area_m2: f64,
     pub radiative_share: f64,
+    /// Of what the contents burn as.
+    pub heat_of_combustion_kj_kg: f64,
     pub packages: Vec<Package>,
     pub pile: Option<Pile>,
     pub origin: Option<usize>,
@@ -144,6 +148,7 @@ impl Contents {
             heat_release_per_area_kw_m2: use_of.heat_release_per_area_kw_m2,
             floor_area_m2: geometry.floor_area_m2,
             radiative_share,
+            heat_of_combustion_kj_kg: fuel.map_or(CONTENTS_KJ_KG, |fuel| fuel.heat_of_combustion_mj_kg * 1e3),
             packages,
             pile,
             origin,

@@ -135,7 +135,7 @@ pub(super) fn limited_by(limit: Limit) -> LimitedBy {
 }
 
 fn tells_why_no_time(reason: &Reason) -> bool {
-    matches!(reason.key, "horizontal_openings_only" | "large_space")
+    matches!(reason.key, "horizontal_openings_only" | "large_space") || reason.key.starts_with("hazard_")
 }
 
 fn no_time(found: &Screened, rating: FlashoverRating) -> Reason {
@@ -281,7 +281,7 @@ fn figures(inputs: &Inputs<'_>, found: &Screened, cap: Cap) -> Vec<Figure> {
     let input = ScreenInput {
         enclosure: enclosure(&found.state, &surfaces),
         surfaces: &surfaces,
-        fire: fire.capped_kw(air_kw),
+        fire: found.state.admits(fire),
         position_factor: CORNER.typical,
         ambient_temperature_k: inputs.ambient_k,
     };

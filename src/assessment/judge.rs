@@ -66,14 +66,14 @@ pub(super) fn judge(inputs: &Inputs<'_>, state: &State, fire: DesignFire, surfac
 fn judge_open(state: &State, fire: DesignFire, surfaces: &[Surface; 3]) -> Judged {
     let fuel_kw = fire.reached_kw();
     let air_kw = state.air_limit_kw(fire.growth_kw_s2);
-    let phases = fire.capped_kw(air_kw).phases();
+    let phases = state.admits(fire).phases();
     let required_kw = required_span_kw(enclosure(state, surfaces), surfaces, phases.decay_start_s);
     Judged {
         available_kw: phases.reached_kw,
         required_kw: Some(required_kw),
         to_highest: ratio(phases.reached_kw, required_kw.1),
         to_lowest: ratio(phases.reached_kw, required_kw.0),
-        limit: if air_kw < fuel_kw { Limit::Air } else { Limit::Fuel },
+        limit: if air_kw < fuel_kw || phases.reached_kw < fuel_kw { Limit::Air } else { Limit::Fuel },
         burn: None,
     }
 }
@@ -151,9 +151,12 @@ pub(super) fn moments(
     place_factor: f64,
 ) -> Moments {
     if !state.is_open() {
-        return Moments::default();
+        return Moments {
+            layer_600_c_s: shut_reaches_600_c_s(inputs, state, &fire, surfaces),
+            ..Moments::default()
+        };
     }
-    let fire = fire.capped_kw(state.air_limit_kw(fire.growth_kw_s2));
+    let fire = state.admits(fire);
     let phases = fire.phases();
     let growing = GrowingVented { fire, opening: state.wall, surfaces, position_factor: place_factor };
     // A search that does not settle counts as "never": the rating does not rest on it.
@@ -165,6 +168,32 @@ pub(super) fn moments(
         floor_20_kw_m2_s: time_to_rise_s(floor_flux_rise_k(inputs, state)).map(|at_s| clock.at_s(at_s)),
         by_heat_s: fire.time_to_kw_s(required_kw).map(|at_s| clock.at_s(at_s)),
     }
+}
+
+/// When the gas of a shut room is at 600 °C, on the fire clock; hardly any shut room gets there.
+fn shut_reaches_600_c_s(
+    inputs: &Inputs<'_>,
+    state: &State,
+    fire: &DesignFire,
+    surfaces: &[Surface; 3],
+) -> Option<f64> {
+    let room = shut_room(inputs, state.leak_m2, surfaces);
+    let until = |horizon_s: f64| burn_shut(fire, &room, horizon_s).state;
+    let whole = until(inputs.horizon.shut_s);
+    if whole.peak_temperature_k < LIMIT_600_C_GAS_K {
+        return None;
+    }
+    // The peak until a time only grows with the time: halving finds the first at which it is there.
+    let (mut from_s, mut to_s) = (0.0, whole.time_s);
+    while to_s - from_s > 0.5 {
+        let middle_s = 0.5 * (from_s + to_s);
+        if until(middle_s).peak_temperature_k < LIMIT_600_C_GAS_K {
+            from_s = middle_s
+        } else {
+            to_s = middle_s
+        }
+    }
+    Some(FireClock::of(fire).at_s(to_s))
 }
 
 /// Rise of the layer at which it sends 20 kW/m² to the middle of the floor.
