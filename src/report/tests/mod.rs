@@ -5,6 +5,7 @@ mod demo;
 mod headlines;
 mod printed;
 mod schema;
+mod whole;
 
 use serde_json::Value;
 
