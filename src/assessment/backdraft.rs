@@ -6,7 +6,7 @@ use super::findings::{
     BackdraftFinding, BackdraftOutcome, BackdraftRating, Band, Figure, LimitedBy, Reason, StarvedFinding,
 };
 use super::inputs::Inputs;
-use super::judge::{FireClock, Limit, shut_room};
+use super::judge::{FireClock, Limit, aftergas, excess_in, shut_room};
 use super::linings::taking_heat;
 use super::methods::figure;
 use super::openings::{State, way_out};
@@ -17,7 +17,7 @@ use crate::domain::assumptions::Scenario;
 use crate::fire::constants::{
     HEAT_PER_AIR_KJ_KG, HEAT_PER_OXYGEN_KJ_KG, ICE_POINT_K, OXYGEN_IN_AIR_MASS_FRACTION, air_density_kg_m3,
 };
-use crate::fire::excess_fuel::{AftergasShare, ExcessInput, Outcome, screen, screen_limits, threshold_kj_kg};
+use crate::fire::excess_fuel::{Outcome, screen_limits, threshold_kj_kg};
 use crate::fire::flashover::LIMIT_600_C_GAS_K;
 use crate::fire::hot_layer::{GrowingVented, mccaffrey_time_to_rise_s};
 use crate::fire::linings::Surface;
@@ -98,12 +98,15 @@ fn starve_shut(inputs: &Inputs<'_>, found: &Screened, cap: Cap) -> Starved {
     let worst = (cap.on(contents.worst_fire()), taking_heat(surfaces, heat.low));
     let mildest = (cap.on(contents.mildest_fire()), taking_heat(surfaces, heat.high));
     let typical = (cap.on(contents.typical_fire()), surfaces);
+    let once = |(fire, surfaces): &(DesignFire, [Surface; 3]), leak_m2: f64| {
+        excess_in(inputs, *fire, surfaces, leak_m2)
+    };
     let corners = [
-        screen_once(inputs, &typical, state.leak_m2),
-        screen_once(inputs, &worst, state.leak_m2 * leaks.low),
-        screen_once(inputs, &worst, state.leak_m2 * leaks.high),
-        screen_once(inputs, &mildest, state.leak_m2 * leaks.low),
-        screen_once(inputs, &mildest, state.leak_m2 * leaks.high),
+        found.typical.excess.unwrap_or_else(|| once(&typical, state.leak_m2)),
+        once(&worst, state.leak_m2 * leaks.low),
+        once(&worst, state.leak_m2 * leaks.high),
+        once(&mildest, state.leak_m2 * leaks.low),
+        once(&mildest, state.leak_m2 * leaks.high),
     ];
     let fires = [typical.0, worst.0, worst.0, mildest.0, mildest.0];
     let middle = corners[0];
@@ -179,29 +182,6 @@ fn starve_open(inputs: &Inputs<'_>, found: &Screened, cap: Cap) -> Option<Starve
             .when(true, "the room stands open: a steady balance instead of the shut room"),
         starved: true,
         shut: false,
-    })
-}
-
-/// What hot fuel and linings give off after the flame is out.
-pub(super) fn aftergas(inputs: &Inputs<'_>) -> AftergasShare {
-    if inputs.lined.combustible {
-        AftergasShare::COMBUSTIBLE_LINING
-    } else {
-        AftergasShare::NONCOMBUSTIBLE_LINING
-    }
-}
-
-/// The screen of `fire` for one fire, its linings and a leakage.
-pub(super) fn screen_once(
-    inputs: &Inputs<'_>,
-    (fire, surfaces): &(DesignFire, [Surface; 3]),
-    leak_m2: f64,
-) -> crate::fire::excess_fuel::ExcessFuel {
-    screen(&ExcessInput {
-        fire: *fire,
-        room: shut_room(inputs, leak_m2, surfaces),
-        aftergas: aftergas(inputs),
-        horizon_s: inputs.horizon.shut_s,
     })
 }
 

@@ -1,9 +1,9 @@
 //! The nearest value of an input that would change a rating `not_indicated`: searched for, not told.
 
-use super::backdraft::{Starved, screen_once};
+use super::backdraft::Starved;
 use super::findings::{Direction, HoldsWhile};
 use super::inputs::Inputs;
-use super::judge::judge;
+use super::judge::{excess_in, judge};
 use super::linings::taking_heat;
 use super::openings::{CRACK_SHARE_M2_M3, State};
 use super::rules::NOT_INDICATED_RATIO;
@@ -141,7 +141,7 @@ pub(super) fn backdraft(inputs: &Inputs<'_>, worst: &Starved, cap: Cap) -> Vec<H
     let leak_m2 = stand.state(inputs.plan, inputs.number, inputs.envelope_leak_m2, inputs.ambient_k).leak_m2;
     let flips = |load_mj_m2: f64, leak_m2: f64| {
         let fire = cap.on(contents.fire(load_mj_m2, contents.growth.fast_kw_s2));
-        let found = screen_once(inputs, &(fire, surfaces), leak_m2);
+        let found = excess_in(inputs, fire, &surfaces, leak_m2);
         found.high_kj_kg >= found.threshold_kj_kg
     };
     let mut found = Vec::with_capacity(2);

@@ -3,6 +3,7 @@
 use super::inputs::Inputs;
 use super::openings::State;
 use crate::fire::DesignFire;
+use crate::fire::excess_fuel::{self, AftergasShare, ExcessFuel, ExcessInput};
 use crate::fire::flashover::{self, Enclosure, LIMIT_20_KW_M2_FLOOR, LIMIT_600_C_GAS_K};
 use crate::fire::hot_layer::{GrowingVented, Position, mccaffrey_time_to_rise_s, measured_position_factor};
 use crate::fire::linings::{Surface, total_area_m2, total_conductance_kw_k};
@@ -20,8 +21,15 @@ pub(super) struct Judged {
     pub to_highest: f64,
     pub to_lowest: f64,
     pub limit: Limit,
+    /// How the fire of a shut room ended, and what gas it left.
+    pub excess: Option<ExcessFuel>,
+}
+
+impl Judged {
     /// How the fire of a shut room ended.
-    pub burn: Option<ShutBurn>,
+    pub fn burn(&self) -> Option<ShutBurn> {
+        self.excess.map(|excess| excess.burn)
+    }
 }
 
 /// What holds the fire down.
@@ -58,8 +66,31 @@ pub(super) fn judge(inputs: &Inputs<'_>, state: &State, fire: DesignFire, surfac
     if state.is_open() {
         judge_open(state, fire, surfaces)
     } else {
-        let room = shut_room(inputs, state.leak_m2, surfaces);
-        judge_burn(&fire, burn_shut(&fire, &room, inputs.horizon.shut_s), inputs.ambient_k)
+        judge_excess(&fire, excess_in(inputs, fire, surfaces, state.leak_m2), inputs.ambient_k)
+    }
+}
+
+/// The screen for unburned gas of a shut room.
+pub(super) fn excess_in(
+    inputs: &Inputs<'_>,
+    fire: DesignFire,
+    surfaces: &[Surface; 3],
+    leak_m2: f64,
+) -> ExcessFuel {
+    excess_fuel::screen(&ExcessInput {
+        fire,
+        room: shut_room(inputs, leak_m2, surfaces),
+        aftergas: aftergas(inputs),
+        horizon_s: inputs.horizon.shut_s,
+    })
+}
+
+/// What hot fuel and linings give off after the flame is out.
+pub(super) fn aftergas(inputs: &Inputs<'_>) -> AftergasShare {
+    if inputs.lined.combustible {
+        AftergasShare::COMBUSTIBLE_LINING
+    } else {
+        AftergasShare::NONCOMBUSTIBLE_LINING
     }
 }
 
@@ -74,20 +105,21 @@ fn judge_open(state: &State, fire: DesignFire, surfaces: &[Surface; 3]) -> Judge
         to_highest: ratio(phases.reached_kw, required_kw.1),
         to_lowest: ratio(phases.reached_kw, required_kw.0),
         limit: if air_kw < fuel_kw || phases.reached_kw < fuel_kw { Limit::Air } else { Limit::Fuel },
-        burn: None,
+        excess: None,
     }
 }
 
 /// Judges a shut room by how its fire ended.
-pub(super) fn judge_burn(fire: &DesignFire, burn: ShutBurn, ambient_k: f64) -> Judged {
-    let share = ((burn.state.peak_temperature_k - ambient_k) / (LIMIT_600_C_GAS_K - ambient_k)).max(0.0);
+fn judge_excess(fire: &DesignFire, excess: ExcessFuel, ambient_k: f64) -> Judged {
+    let state = excess.burn.state;
+    let share = ((state.peak_temperature_k - ambient_k) / (LIMIT_600_C_GAS_K - ambient_k)).max(0.0);
     Judged {
-        available_kw: fire.heat_release_kw(burn.state.time_s),
+        available_kw: fire.heat_release_kw(state.time_s),
         required_kw: None,
         to_highest: share,
         to_lowest: share,
-        limit: if burn.starved { Limit::Oxygen } else { Limit::Fuel },
-        burn: Some(burn),
+        limit: if excess.burn.starved { Limit::Oxygen } else { Limit::Fuel },
+        excess: Some(excess),
     }
 }
 

@@ -5,8 +5,7 @@
 //! glass is wall until its criterion. Openings in ceilings and roofs stand apart: the
 //! correlations know wall openings only.
 
-use std::collections::hash_map::Entry;
-use std::collections::{HashMap, HashSet, VecDeque};
+use std::collections::VecDeque;
 
 use super::findings::OpeningState;
 use super::plan::{Hole, Plan};
@@ -234,9 +233,9 @@ impl Wall {
 /// None where no doors lead out.
 fn way_to_outside(plan: &Plan<'_>, origin: usize, door: usize) -> Vec<usize> {
     let Some(behind) = plan.openings[door].behind(origin) else { return Vec::new() };
-    // Each room reached with the door and the room it was reached from.
-    let mut reached_by: HashMap<usize, Option<(usize, usize)>> =
-        HashMap::from([(origin, None), (behind, None)]);
+    // For each room reached, the door and the room it was reached from.
+    let mut reached_by: Vec<Option<(usize, usize)>> = vec![None; plan.rooms.len()];
+    reached_by[behind] = Some((door, origin));
     let mut waiting = VecDeque::from([behind]);
     while let Some(room) = waiting.pop_front() {
         for &number in plan.of_room[room].iter().filter(|&&number| plan.openings[number].is_door()) {
@@ -244,15 +243,15 @@ fn way_to_outside(plan: &Plan<'_>, origin: usize, door: usize) -> Vec<usize> {
                 None => {
                     let mut way = vec![number];
                     let mut at = room;
-                    while let Some(&Some((through, from))) = reached_by.get(&at) {
+                    while let Some((through, from)) = reached_by[at].filter(|&(_, from)| from != origin) {
                         way.push(through);
                         at = from;
                     }
                     return way;
                 }
                 Some(next) => {
-                    if let Entry::Vacant(unseen) = reached_by.entry(next) {
-                        unseen.insert(Some((number, room)));
+                    if next != origin && reached_by[next].is_none() {
+                        reached_by[next] = Some((number, room));
                         waiting.push_back(next);
                     }
                 }
@@ -268,9 +267,14 @@ fn air_behind(plan: &Plan<'_>, origin: usize, first: &[usize], way: &[usize]) ->
     if first.is_empty() {
         return (0.0, 0.0);
     }
-    let mut reached: HashSet<usize> = first.iter().copied().collect();
-    reached.insert(origin);
-    let mut waiting: Vec<usize> = reached.iter().copied().filter(|&room| room != origin).collect();
+    let mut reached = vec![false; plan.rooms.len()];
+    reached[origin] = true;
+    let mut waiting = Vec::with_capacity(first.len());
+    for &room in first {
+        if !std::mem::replace(&mut reached[room], true) {
+            waiting.push(room);
+        }
+    }
     let mut inside = Vec::new();
     let mut outside_m2 = Vec::new();
     while let Some(room) = waiting.pop() {
@@ -285,7 +289,7 @@ fn air_behind(plan: &Plan<'_>, origin: usize, first: &[usize], way: &[usize]) ->
             match hole.behind(room) {
                 None => outside_m2.push(open_m2),
                 Some(next) => {
-                    if reached.insert(next) {
+                    if !std::mem::replace(&mut reached[next], true) {
                         waiting.push(next);
                     }
                 }

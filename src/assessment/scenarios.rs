@@ -134,7 +134,7 @@ fn screen_state(inputs: &Inputs<'_>, stand: Stand, state: State, cap: Cap) -> Sc
     let typical = judge(inputs, &state, typical_fire, &surfaces);
     // A flame that died of lack of oxygen while the fire still grew would have died so with more fuel too.
     let growing_when_out =
-        typical.burn.is_some_and(|b| b.starved && b.state.time_s <= typical_fire.phases().growth_end_s);
+        typical.burn().is_some_and(|b| b.starved && b.state.time_s <= typical_fire.phases().growth_end_s);
     let p95 = if growing_when_out { typical } else { judge(inputs, &state, p95_fire, &surfaces) };
     let only_above = !state.is_open() && state.horizontal_m2 > 0.001 * inputs.geometry.volume_m3;
     let (rating, reason) = if only_above {
@@ -189,7 +189,7 @@ pub(super) fn spread_of_leaks(inputs: &Inputs<'_>) -> Band {
 
 /// Gas temperature that a scenario reaches with typical inputs, K.
 pub(super) fn hottest_k(inputs: &Inputs<'_>, screened: &Screened, surfaces: &[Surface; 3], cap: Cap) -> f64 {
-    if let Some(burn) = screened.typical.burn {
+    if let Some(burn) = screened.typical.burn() {
         return burn.state.peak_temperature_k;
     }
     let fire = cap.on(inputs.contents.typical_fire());
@@ -244,7 +244,7 @@ fn glass_falls_s(
     let fire = cap.on(inputs.contents.typical_fire());
     let clock = super::judge::FireClock::of(&fire);
     // In a shut room the gas is hottest about when the flame dies.
-    if let Some(burn) = as_found.typical.burn {
+    if let Some(burn) = as_found.typical.burn() {
         return clock.at_s(burn.state.time_s);
     }
     let growing = GrowingVented {

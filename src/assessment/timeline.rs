@@ -134,7 +134,7 @@ impl List {
                 }
             }
         }
-        if found.typical.burn.is_some() {
+        if found.typical.excess.is_some() {
             return;
         }
         let fire = found.state.admits(cap.on(inputs.contents.typical_fire()));
