@@ -111,12 +111,18 @@ async fn add(app: &App, caller: &Caller, entry: &Entry) -> Result<usize, Failure
     let id = BuildingId::parse(&entry.id).ok_or("its id is no id")?;
     let rooms = building.rooms.len();
 
-    let saved = app.store.create_building(caller, id, building, Effects { at: moment(&entry.created_at)? }).await?;
+    let saved =
+        app.store.create_building(caller, id, building, Effects { at: moment(&entry.created_at)? }).await?;
 
     let at = moment(&entry.assessed_at)?;
     let assessment = AssessmentId::parse(&entry.assessment_id).ok_or("its assessment's id is no id")?;
     let record = Record { id: assessment, building: id, revision: saved.head.revision };
-    let order = Order { building: Arc::clone(&saved.building), assumptions: Assumptions::default(), record: Some(record), at };
+    let order = Order {
+        building: Arc::clone(&saved.building),
+        assumptions: Assumptions::default(),
+        record: Some(record),
+        at,
+    };
     let made = make(app, order).await.map_err(|error| format!("cannot be assessed: {error}"))?;
     let kept = made.kept.ok_or("its assessment was not kept")?;
     app.store.insert_assessment(caller, kept, Effects { at }).await?;
@@ -160,7 +166,8 @@ mod tests {
         for entry in district().list {
             let (_, text) = BUILDINGS.iter().find(|(name, _)| *name == entry.file).unwrap();
             let read = wire::read::<BuildingInput>(text.as_bytes(), Catalogue::embedded());
-            let building = read.unwrap_or_else(|refused| panic!("{}", documents::faults(&entry.file, &refused)));
+            let building =
+                read.unwrap_or_else(|refused| panic!("{}", documents::faults(&entry.file, &refused)));
             assert_eq!(building.reference.as_deref(), Some(entry.reference.as_str()), "{}", entry.file);
             rooms += building.rooms.len();
         }
@@ -176,7 +183,9 @@ mod tests {
             let assessment = AssessmentId::parse(&entry.assessment_id).unwrap();
             assert_eq!((id.0.get_version_num(), assessment.0.get_version_num()), (7, 7));
             assert!(moment(&entry.created_at).unwrap() < moment(&entry.assessed_at).unwrap());
-            assert!(seen.insert(entry.id) && seen.insert(entry.assessment_id) && seen.insert(entry.reference));
+            assert!(
+                seen.insert(entry.id) && seen.insert(entry.assessment_id) && seen.insert(entry.reference)
+            );
         }
     }
 }

@@ -26,7 +26,8 @@ async fn write_all(store: &Store, to: &mut impl Write) -> Result<u64, Failure> {
     let mut written = 0;
     let mut after = None;
     loop {
-        let page = store.list_buildings(&caller, &ListBuildings { reference: None, after, limit: PAGE }).await?;
+        let page =
+            store.list_buildings(&caller, &ListBuildings { reference: None, after, limit: PAGE }).await?;
         for summary in &page.items {
             let saved = store.get_building(&caller, summary.id).await?;
             serde_json::to_writer(&mut *to, &crate::http::building_document(&saved))?;

@@ -33,7 +33,11 @@ pub fn run(flags: &Import) -> Result<(), Failure> {
         }
         store.close().await?;
         println!("{added} added, {replaced} replaced, {refused} refused");
-        if refused > 0 { Err(format!("{refused} of {} documents were refused", documents.len()).into()) } else { Ok(()) }
+        if refused > 0 {
+            Err(format!("{refused} of {} documents were refused", documents.len()).into())
+        } else {
+            Ok(())
+        }
     })
 }
 

@@ -5,9 +5,9 @@
 //! whoever finds a lane full is told so at once. Work whose asker has gone away is told to stop.
 
 mod queue;
-mod watch;
 #[cfg(test)]
 mod tests;
+mod watch;
 
 use std::num::NonZeroUsize;
 use std::panic::{AssertUnwindSafe, catch_unwind};
@@ -104,8 +104,7 @@ impl Compute {
 
     /// This many threads, and this many pieces of work waiting in each lane.
     pub fn with(threads: NonZeroUsize, waiting_per_lane: usize) -> std::io::Result<Self> {
-        let shared =
-            Arc::new(Shared { queue: Queue::new(waiting_per_lane), running: AtomicUsize::new(0) });
+        let shared = Arc::new(Shared { queue: Queue::new(waiting_per_lane), running: AtomicUsize::new(0) });
         // The owner stands first: if a thread cannot be started, those that were are told to end.
         let owner = Owner { shared: Arc::clone(&shared), threads: threads.get() };
         for number in 0..threads.get() {

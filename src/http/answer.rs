@@ -1,7 +1,7 @@
 //! Answers that succeed.
 
-use axum::http::header::{CACHE_CONTROL, CONTENT_TYPE, ETAG, HeaderName, HeaderValue, LOCATION};
 use axum::http::StatusCode;
+use axum::http::header::{CACHE_CONTROL, CONTENT_TYPE, ETAG, HeaderName, HeaderValue, LOCATION};
 use axum::response::{IntoResponse, Response};
 use serde::Serialize;
 
@@ -38,7 +38,10 @@ pub fn created(location: &str, mut made: Response) -> Result<Response, ApiError>
 }
 
 /// The same answer with more headers.
-pub fn with(mut response: Response, headers: impl IntoIterator<Item = (HeaderName, HeaderValue)>) -> Response {
+pub fn with(
+    mut response: Response,
+    headers: impl IntoIterator<Item = (HeaderName, HeaderValue)>,
+) -> Response {
     response.headers_mut().extend(headers);
     response
 }

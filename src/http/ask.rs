@@ -36,13 +36,16 @@ impl Ask {
     /// Refuses a caller who wants no JSON: 406.
     pub fn accepts_json(&self) -> Result<(), ApiError> {
         let accepted = self.headers.get_all(ACCEPT);
-        if media::accepts(accepted.iter().map(|line| line.to_str().unwrap_or_default()), "application", "json")
-        {
+        if media::accepts(
+            accepted.iter().map(|line| line.to_str().unwrap_or_default()),
+            "application",
+            "json",
+        ) {
             return Ok(());
         }
-        Err(ApiError::new(Slug::NotAcceptable, "This address answers in application/json.").with_faults(vec![
-            ProblemItem::header("Accept", "not_acceptable", "it leaves out application/json", None),
-        ]))
+        Err(ApiError::new(Slug::NotAcceptable, "This address answers in application/json.").with_faults(
+            vec![ProblemItem::header("Accept", "not_acceptable", "it leaves out application/json", None)],
+        ))
     }
 
     /// The conditions of the request.

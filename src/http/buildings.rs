@@ -9,16 +9,16 @@ use super::app::App;
 use super::ask::Ask;
 use super::body::{Takes, Unread};
 use super::change::{MayBeNew, judge};
+use super::forms::Patch;
 use super::headers::{ChangeHeaders, ReadHeaders};
 use super::paging::{self, PageQuery};
 use super::params::{At, BuildingPath};
 use super::problem::ApiError;
-use super::forms::Patch;
+use super::summary::BuildingSummary;
 use super::{examples, forms};
 use crate::domain::Caller;
 use crate::domain::ids::BuildingId;
 use crate::store::{Effects, ListBuildings, Part};
-use super::summary::BuildingSummary;
 use crate::wire::{Building, BuildingInput, Page};
 
 /// List the buildings of the inventory.

@@ -8,12 +8,10 @@ use super::body::{Takes, Unread};
 use super::problem::ApiError;
 use crate::domain::Caller;
 use crate::domain::ids::BuildingId;
-use crate::store::{Condition, Effects, Missing, Part, SavedBuilding, StoreError};
+use crate::store::{Condition, Effects, Missing, Part, StoreError};
 
 /// A change that may be made, as far as can be told without reading its body.
 pub struct Change {
-    /// The building as it was when the request was judged.
-    pub before: SavedBuilding,
     /// What the store is to judge again when it makes the change.
     pub condition: Condition,
     /// The body.
@@ -55,7 +53,7 @@ pub async fn judge(
         None => conditions.for_put(tag)?,
     };
     ask.query(&[])?;
-    Ok(Change { before, condition, bytes, effects: Effects { at: app.clock.now() } })
+    Ok(Change { condition, bytes, effects: Effects { at: app.clock.now() } })
 }
 
 fn missing(part: &Part) -> Missing {

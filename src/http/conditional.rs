@@ -66,10 +66,7 @@ pub struct Conditions {
 impl Conditions {
     /// Reads both headers.
     pub fn of(headers: &HeaderMap) -> Self {
-        Self {
-            if_match: Tags::read(headers, &IF_MATCH),
-            if_none_match: Tags::read(headers, &IF_NONE_MATCH),
-        }
+        Self { if_match: Tags::read(headers, &IF_MATCH), if_none_match: Tags::read(headers, &IF_NONE_MATCH) }
     }
 
     /// Whether the caller has this version already.
@@ -111,8 +108,12 @@ fn required(wanted: HeaderName) -> ApiError {
     } else {
         ("If-None-Match", "It does not exist yet: to create it send `If-None-Match: *`.")
     };
-    ApiError::new(Slug::PreconditionRequired, detail)
-        .with_faults(vec![ProblemItem::header(name, "missing", "the header is missing", None)])
+    ApiError::new(Slug::PreconditionRequired, detail).with_faults(vec![ProblemItem::header(
+        name,
+        "missing",
+        "the header is missing",
+        None,
+    )])
 }
 
 /// Somebody else changed it first.
@@ -129,8 +130,12 @@ pub fn stale(current: u64) -> ApiError {
 /// There is nothing there to match.
 pub fn gone() -> ApiError {
     let detail = "It does not exist, so If-Match cannot hold; a new one is put with `If-None-Match: *`.";
-    ApiError::new(Slug::PreconditionFailed, detail)
-        .with_faults(vec![ProblemItem::header("If-Match", "stale", "there is nothing to match", None)])
+    ApiError::new(Slug::PreconditionFailed, detail).with_faults(vec![ProblemItem::header(
+        "If-Match",
+        "stale",
+        "there is nothing to match",
+        None,
+    )])
 }
 
 fn exists(current: u64) -> ApiError {

@@ -35,18 +35,13 @@ pub async fn get_docs(params: RawPathParams) -> Result<Response, ApiError> {
     let mut response = file.bytes.into_owned().into_response();
     let headers = response.headers_mut();
     let content_type = HeaderValue::try_from(file.content_type);
-    headers.insert(
-        CONTENT_TYPE,
-        content_type.unwrap_or(HeaderValue::from_static("application/octet-stream")),
-    );
+    headers
+        .insert(CONTENT_TYPE, content_type.unwrap_or(HeaderValue::from_static("application/octet-stream")));
     if file.gzpipped {
         headers.insert(CONTENT_ENCODING, HeaderValue::from_static("gzip"));
     }
     headers.insert(CONTENT_SECURITY_POLICY, HeaderValue::from_static(POLICY));
     headers.insert(CACHE_CONTROL, HeaderValue::from_static("no-cache"));
-    headers.insert(
-        HeaderName::from_static("x-content-type-options"),
-        HeaderValue::from_static("nosniff"),
-    );
+    headers.insert(HeaderName::from_static("x-content-type-options"), HeaderValue::from_static("nosniff"));
     Ok(response)
 }

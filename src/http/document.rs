@@ -119,16 +119,36 @@ enum Shape {
 
 impl Refusal {
     const ALL: &[Self] = &[
-        Self::of(400, "BadRequest", Shape::Every, "A parameter is wrong, or the body is no JSON that can be read."),
+        Self::of(
+            400,
+            "BadRequest",
+            Shape::Every,
+            "A parameter is wrong, or the body is no JSON that can be read.",
+        ),
         Self::of(404, "NotFound", Shape::WithPathParameter, "There is no such record."),
         Self::of(406, "NotAcceptable", Shape::Every, "The header `Accept` leaves out application/json."),
         Self::of(409, "Conflict", Shape::Said, "The records as they are forbid it."),
-        Self::of(412, "PreconditionFailed", Shape::Change, "The record is not in the state that the condition names.")
-            .with("ETag", "The tag it has now, where it exists."),
+        Self::of(
+            412,
+            "PreconditionFailed",
+            Shape::Change,
+            "The record is not in the state that the condition names.",
+        )
+        .with("ETag", "The tag it has now, where it exists."),
         Self::of(413, "TooLarge", Shape::WithBody, "The body is larger than 4 MiB."),
         Self::of(415, "UnsupportedMediaType", Shape::WithBody, "The body is of a form not taken here."),
-        Self::of(422, "Invalid", Shape::WithBody, "Every fault of the body, each with its place. Nothing was saved."),
-        Self::of(428, "PreconditionRequired", Shape::Change, "The change does not say which version it was made from."),
+        Self::of(
+            422,
+            "Invalid",
+            Shape::WithBody,
+            "Every fault of the body, each with its place. Nothing was saved.",
+        ),
+        Self::of(
+            428,
+            "PreconditionRequired",
+            Shape::Change,
+            "The change does not say which version it was made from.",
+        ),
         Self::of(500, "Internal", Shape::Every, "The service failed; its log says why."),
         Self::of(503, "Overloaded", Shape::Every, "The service has more to do than it can take.")
             .with("Retry-After", "Seconds after which it is worth asking again."),

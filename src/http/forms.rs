@@ -72,7 +72,12 @@ impl Patch {
     }
 
     /// The building with the room of this key as it shall be.
-    pub fn on_room(&self, building: &Building, key: &Key, catalogue: &Catalogue) -> Result<Building, ApiError> {
+    pub fn on_room(
+        &self,
+        building: &Building,
+        key: &Key,
+        catalogue: &Catalogue,
+    ) -> Result<Building, ApiError> {
         let room = building.room(key).ok_or_else(|| ApiError::not_found("such room"))?;
         let mut value = serde_json::to_value(wire::Room::of(room)).map_err(unwritable)?;
         wire::merge_patch(&mut value, &self.0);
@@ -81,7 +86,12 @@ impl Patch {
     }
 
     /// The building with the opening of this key as it shall be.
-    pub fn on_opening(&self, building: &Building, key: &Key, catalogue: &Catalogue) -> Result<Building, ApiError> {
+    pub fn on_opening(
+        &self,
+        building: &Building,
+        key: &Key,
+        catalogue: &Catalogue,
+    ) -> Result<Building, ApiError> {
         let opening = building.opening(key).ok_or_else(|| ApiError::not_found("such opening"))?;
         let mut value = serde_json::to_value(wire::Opening::of(opening)).map_err(unwritable)?;
         wire::merge_patch(&mut value, &self.0);

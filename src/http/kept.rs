@@ -1,9 +1,7 @@
 //! What the store keeps of an assessment beside its report: the head, and a row for each room.
 
 use super::assessing::Record;
-use crate::assessment::findings::{
-    BackdraftRating, Band, BuildingFindings, FlashoverRating, RoomFindings,
-};
+use crate::assessment::findings::{BackdraftRating, Band, BuildingFindings, FlashoverRating, RoomFindings};
 use crate::domain::time::Timestamp;
 use crate::domain::word::Word as _;
 use crate::store::{AssessmentMeta, NewAssessment, Rated, RoomFinding, Spread};

@@ -91,13 +91,17 @@ impl<T: Named, S: Send + Sync> FromRequestParts<S> for At<T> {
 
 impl Named for BuildingId {
     fn named(of: &dyn Fn(&str) -> Option<String>) -> Result<Self, ApiError> {
-        of("id").and_then(|text| Self::parse(&text)).ok_or_else(|| ApiError::not_found("building with such an id"))
+        of("id")
+            .and_then(|text| Self::parse(&text))
+            .ok_or_else(|| ApiError::not_found("building with such an id"))
     }
 }
 
 impl Named for AssessmentId {
     fn named(of: &dyn Fn(&str) -> Option<String>) -> Result<Self, ApiError> {
-        of("id").and_then(|text| Self::parse(&text)).ok_or_else(|| ApiError::not_found("assessment with such an id"))
+        of("id")
+            .and_then(|text| Self::parse(&text))
+            .ok_or_else(|| ApiError::not_found("assessment with such an id"))
     }
 }
 

@@ -123,7 +123,9 @@ impl std::error::Error for ApiError {}
 impl From<NoAnswer> for ApiError {
     fn from(none: NoAnswer) -> Self {
         match none {
-            NoAnswer::Full => Self::overloaded("Too many assessments are waiting already; ask again shortly."),
+            NoAnswer::Full => {
+                Self::overloaded("Too many assessments are waiting already; ask again shortly.")
+            }
             NoAnswer::BrokeOff => Self::internal(&none),
         }
     }

@@ -1,7 +1,7 @@
 //! What the store refuses, as problems.
 
-use super::conditional::stale;
 use super::conditional::gone;
+use super::conditional::stale;
 use super::forms::fault;
 use super::problem::ApiError;
 use crate::domain::Invalid;
@@ -17,7 +17,9 @@ impl From<StoreError> for ApiError {
             StoreError::Stale { current: None } => gone(),
             StoreError::Busy => Self::overloaded("Too many changes are waiting already; ask again shortly."),
             StoreError::Closed => Self::overloaded("The service is stopping."),
-            StoreError::Open { .. } | StoreError::Database(_) | StoreError::Corrupt(_) => Self::internal(&error),
+            StoreError::Open { .. } | StoreError::Database(_) | StoreError::Corrupt(_) => {
+                Self::internal(&error)
+            }
         }
     }
 }

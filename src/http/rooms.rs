@@ -9,15 +9,15 @@ use super::app::App;
 use super::ask::Ask;
 use super::body::{Takes, Unread};
 use super::change::{MayBeNew, judge};
+use super::forms::Patch;
 use super::headers::{ChangeHeaders, PutHeaders, ReadHeaders};
 use super::params::{At, RoomAt, RoomPath};
 use super::problem::ApiError;
 use super::refusal::invalid;
-use super::forms::Patch;
 use super::{examples, forms};
-use crate::domain::{Building as Record, Caller};
 use crate::domain::ids::BuildingId;
-use crate::store::{Part, SavedBuilding, StoreError, Missing};
+use crate::domain::{Building as Record, Caller};
+use crate::store::{Missing, Part, SavedBuilding, StoreError};
 use crate::wire::{Room, RoomInput};
 
 /// Read a room.
@@ -107,7 +107,8 @@ pub async fn patch_room(
     body: Unread,
 ) -> Result<Response, ApiError> {
     let part = Part::Room(key.clone());
-    let change = judge(&app, &caller, (id, &part, MayBeNew::No), &ask, Some((body, Takes::MergePatch))).await?;
+    let change =
+        judge(&app, &caller, (id, &part, MayBeNew::No), &ask, Some((body, Takes::MergePatch))).await?;
     let patch = Patch::read(&change.bytes)?;
     let (catalogue, of) = (app.catalogue, key.clone());
     let edit = move |building: &_| patch.on_room(building, &of, catalogue);

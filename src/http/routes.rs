@@ -7,7 +7,8 @@ use utoipa_axum::routes;
 
 use super::app::App;
 use super::{
-    assessments, buildings, catalogue, docs, document, layers, methods, metrics, openings, pages, probes, problem, rooms,
+    assessments, buildings, catalogue, docs, document, layers, methods, metrics, openings, pages, probes,
+    problem, rooms,
 };
 
 /// The operations of the interface. What is registered here is in the OpenAPI document too.

@@ -71,7 +71,10 @@ fn a_document_with_faults_is_refused_with_every_fault_and_its_place() {
     let said = text(&out.stderr);
     assert_eq!(out.status.code(), Some(1));
     assert!(out.stdout.is_empty());
-    assert!(said.contains("/rooms/0/length_m") && said.contains("/rooms/0/use") && said.contains("office"), "{said}");
+    assert!(
+        said.contains("/rooms/0/length_m") && said.contains("/rooms/0/use") && said.contains("office"),
+        "{said}"
+    );
 }
 
 #[test]
@@ -90,8 +93,16 @@ fn what_is_exported_is_imported_again_and_replaced_by_reference() {
     assert!(first.status.success(), "{}", text(&first.stderr));
     let count = text(&exported.stdout).lines().count();
     assert!(count >= 15);
-    assert!(text(&second.stdout).contains(&format!("{count} added, 0 replaced, 0 refused")), "{}", text(&second.stdout));
-    assert!(text(&again.stdout).contains(&format!("0 added, {count} replaced, 0 refused")), "{}", text(&again.stdout));
+    assert!(
+        text(&second.stdout).contains(&format!("{count} added, 0 replaced, 0 refused")),
+        "{}",
+        text(&second.stdout)
+    );
+    assert!(
+        text(&again.stdout).contains(&format!("0 added, {count} replaced, 0 refused")),
+        "{}",
+        text(&again.stdout)
+    );
     assert_eq!(bare(&exported.stdout), bare(&run(&["export", "--database", &url("b.db")]).stdout));
 }
 

@@ -78,7 +78,8 @@ async fn the_same_inputs_give_the_same_findings() {
 async fn nothing_is_kept_of_a_building_that_is_only_sent() {
     let app = TestApp::new().await;
 
-    let reply = app.post("/v1/assess", json!({ "building": full(), "assumptions": { "level": "screening" } })).await;
+    let reply =
+        app.post("/v1/assess", json!({ "building": full(), "assumptions": { "level": "screening" } })).await;
     let report = reply.expect(200);
 
     assert_eq!((&report["assessment_id"], &report["building_id"]), (&Value::Null, &Value::Null));
@@ -111,7 +112,9 @@ async fn a_room_report_comes_out_of_the_stored_document() {
 
     assert_eq!((&report["key"], &report["assessment_id"]), (&json!("shop"), &whole["assessment_id"]));
     assert_eq!(report["flashover"], whole["rooms"][1]["flashover"]);
-    for member in ["backdraft", "entry", "timeline", "assumptions", "methods", "cautions", "headline", "series"] {
+    for member in
+        ["backdraft", "entry", "timeline", "assumptions", "methods", "cautions", "headline", "series"]
+    {
         assert!(report.get(member).is_some(), "{member}");
     }
     app.get(&format!("{path}/rooms/cellar")).await.problem(404, "not-found");
@@ -182,7 +185,9 @@ async fn a_level_that_is_not_there_yet_is_refused_and_not_replaced() {
         for reply in [kept, sent] {
             let problem = reply.problem(422, "invalid");
             assert_eq!(reply.pointers(), ["/assumptions/level"]);
-            assert!(problem["errors"][0]["detail"].as_str().unwrap().contains("not available in this version"));
+            assert!(
+                problem["errors"][0]["detail"].as_str().unwrap().contains("not available in this version")
+            );
             assert_eq!(problem["errors"][0]["suggestion"], "screening");
         }
     }

@@ -18,7 +18,8 @@ async fn sent(app: &TestApp, path: &str, wrapped: bool, building: &Value) -> Rep
 #[tokio::test]
 async fn each_fault_is_pointed_at() {
     let app = TestApp::new().await;
-    let stored = json!({ "commodity": "cardboard_cartons", "height_m": 9, "footprint_m2": 99, "racks": true });
+    let stored =
+        json!({ "commodity": "cardboard_cartons", "height_m": 9, "footprint_m2": 99, "racks": true });
     for (what, pointer, value, faults) in [
         ("no length", "/rooms/0/length_m", json!(0), vec!["/rooms/0/length_m"]),
         ("a negative length", "/rooms/0/length_m", json!(-3.66), vec!["/rooms/0/length_m"]),
@@ -41,19 +42,59 @@ async fn each_fault_is_pointed_at() {
         ("a door wider than its wall", "/openings/0/width_m", json!(3.7), vec!["/openings/0/width_m"]),
         ("a door above the ceiling", "/openings/0/height_m", json!(2.5), vec!["/openings/0/height_m"]),
         ("a sill that lifts it above", "/openings/0/sill_m", json!(0.5), vec!["/openings/0/height_m"]),
-        ("a room joined to itself", "/openings/0/connects", json!(["store", "store"]), vec!["/openings/0/connects"]),
-        ("outside to outside", "/openings/0/connects", json!(["outside", "outside"]), vec!["/openings/0/connects"]),
-        ("a room joined to none", "/openings/0/connects", json!(["store", "cellar"]), vec!["/openings/0/connects/1"]),
+        (
+            "a room joined to itself",
+            "/openings/0/connects",
+            json!(["store", "store"]),
+            vec!["/openings/0/connects"],
+        ),
+        (
+            "outside to outside",
+            "/openings/0/connects",
+            json!(["outside", "outside"]),
+            vec!["/openings/0/connects"],
+        ),
+        (
+            "a room joined to none",
+            "/openings/0/connects",
+            json!(["store", "cellar"]),
+            vec!["/openings/0/connects/1"],
+        ),
         ("one end only", "/openings/0/connects", json!(["store"]), vec!["/openings/0/connects"]),
-        ("three ends", "/openings/0/connects", json!(["store", "outside", "store"]), vec!["/openings/0/connects"]),
+        (
+            "three ends",
+            "/openings/0/connects",
+            json!(["store", "outside", "store"]),
+            vec!["/openings/0/connects"],
+        ),
         ("two rooms of one key", "/rooms/-", room("store"), vec!["/rooms/1/key"]),
         ("two openings of one key", "/openings/-", door("d", "store", "outside"), vec!["/openings/1/key"]),
         ("more open than open", "/openings/0/open_fraction", json!(1.01), vec!["/openings/0/open_fraction"]),
-        ("an unknown material", "/rooms/0/linings", json!({ "walls": { "material": "gypsum_bord" } }), vec!["/rooms/0/linings/walls/material"]),
-        ("an unknown hazard", "/rooms/0/hazards", json!(["gas_cylinders", "ghosts"]), vec!["/rooms/0/hazards/1"]),
+        (
+            "an unknown material",
+            "/rooms/0/linings",
+            json!({ "walls": { "material": "gypsum_bord" } }),
+            vec!["/rooms/0/linings/walls/material"],
+        ),
+        (
+            "an unknown hazard",
+            "/rooms/0/hazards",
+            json!(["gas_cylinders", "ghosts"]),
+            vec!["/rooms/0/hazards/1"],
+        ),
         ("a day that is none", "/inspected_on", json!("2026-02-30"), vec!["/inspected_on"]),
-        ("a place off the globe", "/location", json!({ "longitude_deg": 181, "latitude_deg": 91 }), vec!["/location/longitude_deg", "/location/latitude_deg"]),
-        ("goods that do not fit", "/rooms/0/storage", stored, vec!["/rooms/0/storage/height_m", "/rooms/0/storage/footprint_m2"]),
+        (
+            "a place off the globe",
+            "/location",
+            json!({ "longitude_deg": 181, "latitude_deg": 91 }),
+            vec!["/location/longitude_deg", "/location/latitude_deg"],
+        ),
+        (
+            "goods that do not fit",
+            "/rooms/0/storage",
+            stored,
+            vec!["/rooms/0/storage/height_m", "/rooms/0/storage/footprint_m2"],
+        ),
         ("a room that is a number", "/rooms/0", json!(3), vec!["/rooms/0"]),
         ("rooms by key", "/rooms", json!({ "store": {} }), vec!["/rooms"]),
     ] {
@@ -75,7 +116,10 @@ async fn each_fault_is_pointed_at() {
             wanted.sort_unstable();
             assert_eq!(found, wanted, "{what}: {problem}");
             for error in problem["errors"].as_array().unwrap() {
-                assert!(!error["detail"].as_str().unwrap().is_empty() && !error["code"].as_str().unwrap().is_empty());
+                assert!(
+                    !error["detail"].as_str().unwrap().is_empty()
+                        && !error["code"].as_str().unwrap().is_empty()
+                );
             }
         }
     }
@@ -188,7 +232,8 @@ async fn what_is_no_object_is_422_at_the_root() {
 async fn limits_of_number_hold_on_both_sides() {
     let app = TestApp::new().await;
     let rooms = |count: usize| (0..count).map(|n| room(&format!("r{n}"))).collect::<Vec<_>>();
-    let doors = |count: usize| (0..count).map(|n| door(&format!("d{n}"), "r0", "outside")).collect::<Vec<_>>();
+    let doors =
+        |count: usize| (0..count).map(|n| door(&format!("d{n}"), "r0", "outside")).collect::<Vec<_>>();
 
     let most = json!({ "name": "most", "rooms": rooms(500), "openings": doors(2000) });
     let reply = app.post("/v1/buildings", most).await;
@@ -198,8 +243,9 @@ async fn limits_of_number_hold_on_both_sides() {
     let reply = app.post("/v1/buildings", json!({ "name": "rooms", "rooms": rooms(501) })).await;
     reply.problem(422, "invalid");
     assert_eq!(reply.pointers(), ["/rooms"]);
-    let reply =
-        app.post("/v1/buildings", json!({ "name": "doors", "rooms": rooms(1), "openings": doors(2001) })).await;
+    let reply = app
+        .post("/v1/buildings", json!({ "name": "doors", "rooms": rooms(1), "openings": doors(2001) }))
+        .await;
     reply.problem(422, "invalid");
     assert_eq!(reply.pointers(), ["/openings"]);
     app.create(&format!("{path}/rooms/one-more"), room("one-more")).await.problem(422, "invalid");
@@ -300,7 +346,8 @@ async fn any_value_of_the_wrong_type_anywhere_is_told_and_never_a_500() {
             let found = reply.pointers();
             assert!(!found.is_empty(), "{pointer} = {value}: {}", reply.text());
             let near = |found: &String| found.starts_with(&pointer) || pointer.starts_with(found.as_str());
-            let elsewhere = ["/rooms/0/key", "/rooms/0/length_m", "/rooms/0/width_m", "/rooms/0/height_m", "/rooms"];
+            let elsewhere =
+                ["/rooms/0/key", "/rooms/0/length_m", "/rooms/0/width_m", "/rooms/0/height_m", "/rooms"];
             assert!(
                 found.iter().any(near) || elsewhere.contains(&pointer.as_str()),
                 "{pointer} = {value} is not pointed at: {}",
@@ -320,7 +367,9 @@ async fn a_refused_change_leaves_everything_as_it_was() {
 
     let bad = set(full(), "/rooms/0/height_m", json!(-1));
     app.put(&path, "*", bad).await.problem(422, "invalid");
-    app.patch(&path, "*", json!({ "name": "changed", "water": { "available_l_min": -1 } })).await.problem(422, "invalid");
+    app.patch(&path, "*", json!({ "name": "changed", "water": { "available_l_min": -1 } }))
+        .await
+        .problem(422, "invalid");
     app.patch(&path, "*", json!([])).await.problem(422, "invalid");
     app.raw(Method::PUT, &path, &[("If-Match", "*")], b"{").await.problem(400, "unreadable");
     let twice = br#"{"name": "a", "name": "b"}"#;
@@ -341,7 +390,12 @@ async fn the_form_of_a_body_is_judged_before_its_meaning() {
         (Method::POST, "/v1/buildings", "", ("accept-post", "application/json")),
         (Method::POST, "/v1/assess", "application/xml", ("accept-post", "application/json")),
         (Method::PUT, &path, "application/jsonp", ("accept-post", "application/json")),
-        (Method::PATCH, &path, "application/json-patch+json", ("accept-patch", "application/merge-patch+json")),
+        (
+            Method::PATCH,
+            &path,
+            "application/json-patch+json",
+            ("accept-patch", "application/merge-patch+json"),
+        ),
     ] {
         let headers = [("Content-Type", content_type), ("If-Match", "*")];
         let request = with_headers(request(method.clone(), path), &headers).body(Body::from("{")).unwrap();

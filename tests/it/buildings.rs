@@ -183,7 +183,15 @@ async fn items_of_the_list_are_summaries() {
     members.sort_unstable();
     // As the wire contract lists them.
     let mut wanted = vec![
-        "id", "reference", "name", "location", "occupancy_group", "rooms", "revision", "updated_at", "worst",
+        "id",
+        "reference",
+        "name",
+        "location",
+        "occupancy_group",
+        "rooms",
+        "revision",
+        "updated_at",
+        "worst",
         "links",
     ];
     wanted.sort_unstable();
@@ -212,7 +220,10 @@ async fn a_list_is_walked_page_by_page_by_either_link() {
         match &next {
             Some(next) => {
                 assert_eq!(link, format!("<{next}>; rel=\"next\""));
-                assert_eq!(*next, format!("/v1/buildings?limit=2&cursor={}", page["next_cursor"].as_str().unwrap()));
+                assert_eq!(
+                    *next,
+                    format!("/v1/buildings?limit=2&cursor={}", page["next_cursor"].as_str().unwrap())
+                );
             }
             None => assert_eq!(link, ""),
         }
@@ -318,7 +329,8 @@ async fn json_of_any_charset_label_is_read() {
     let app = TestApp::new().await;
     let headers = [("Content-Type", "Application/JSON; charset=latin1")];
 
-    let request = crate::support::with_headers(crate::support::request(Method::POST, "/v1/buildings"), &headers);
+    let request =
+        crate::support::with_headers(crate::support::request(Method::POST, "/v1/buildings"), &headers);
     let reply = app.send(request.body(axum::body::Body::from(fixtures::small().to_string())).unwrap()).await;
 
     assert_eq!(reply.status, 201, "{}", reply.text());

@@ -26,7 +26,10 @@ async fn every_row_has_its_source() {
         assert_eq!((&list["next"], &list["next_cursor"]), (&Value::Null, &Value::Null));
         for row in items {
             for member in ["key", "title", "source", "provenance"] {
-                assert!(row[member].as_str().is_some_and(|text| !text.is_empty()), "{subject} {member}: {row}");
+                assert!(
+                    row[member].as_str().is_some_and(|text| !text.is_empty()),
+                    "{subject} {member}: {row}"
+                );
             }
             assert!(row["properties"].is_object() && row["note"].is_string(), "{row}");
             assert!(["seen", "memory"].contains(&row["provenance"].as_str().unwrap()));

@@ -75,7 +75,9 @@ async fn if_match_takes_a_list_a_weakened_tag_and_a_star() {
     let app = TestApp::new().await;
     let path = entered(&app).await;
 
-    for (revision, tags) in ["\"1\"", "W/\"2\"", "\"9\", \"3\"", "*", "\"5-gzip\"", "\"x,y\",\"6\""].iter().enumerate() {
+    for (revision, tags) in
+        ["\"1\"", "W/\"2\"", "\"9\", \"3\"", "*", "\"5-gzip\"", "\"x,y\",\"6\""].iter().enumerate()
+    {
         let reply = app.patch(&path, tags, json!({ "notes": tags })).await;
 
         assert_eq!((reply.status, reply.etag()), (200, format!("\"{}\"", revision + 2).as_str()), "{tags}");
@@ -140,7 +142,8 @@ async fn of_eight_with_one_tag_exactly_one_wins() {
         let barrier = std::sync::Arc::new(tokio::sync::Barrier::new(8));
         let mut threads = Vec::new();
         for number in 0..8 {
-            let (url, barrier, tag, method) = (format!("{base}{path}"), barrier.clone(), tag.clone(), method.clone());
+            let (url, barrier, tag, method) =
+                (format!("{base}{path}"), barrier.clone(), tag.clone(), method.clone());
             threads.push(tokio::spawn(async move {
                 let name = format!("writer {number}");
                 let body = match method {

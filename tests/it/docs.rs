@@ -25,7 +25,8 @@ async fn the_documents_page_needs_nothing_from_outside() {
     assert!(script.text().contains(r#""validatorUrl": "none""#), "{}", script.text());
 
     let mut files = 0;
-    for part in page.text().split(['"', '\'']).filter(|part| part.ends_with(".js") || part.ends_with(".css")) {
+    for part in page.text().split(['"', '\'']).filter(|part| part.ends_with(".js") || part.ends_with(".css"))
+    {
         assert!(!part.contains("//"), "{part} is elsewhere");
         let file = app.get(&format!("/docs/{}", part.trim_start_matches("./"))).await;
         assert_eq!(file.status, 200, "{part}");

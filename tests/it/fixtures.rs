@@ -33,7 +33,10 @@ pub fn door(key: &str, from: &str, to: &str) -> Value {
 
 /// Every member filled in, as the wire contract prints it.
 pub fn full() -> Value {
-    json!({
+    serde_json::from_str(FULL).unwrap()
+}
+
+const FULL: &str = r#"{
         "reference": "417-B", "name": "Harbour Row 12",
         "address": { "line": "Harbour Row 12", "place": "Eastmere", "postcode": "" },
         "location": { "longitude_deg": 0.1, "latitude_deg": 51.2 },
@@ -67,8 +70,7 @@ pub fn full() -> Value {
             "entry": true, "side": "A", "azimuth_deg": 180, "glazing": null, "basis": { "width_m": "measured" }
         }],
         "boundaries": []
-    })
-}
+    }"#;
 
 /// Sets the member at a JSON Pointer; the last name may be new, `-` appends.
 #[track_caller]

@@ -43,8 +43,22 @@ async fn rows(app: &TestApp) -> Vec<Row> {
         row("patch_room", Method::PATCH, "{building}/rooms/store", ANY, Some(json!({ "name": "n" })), 200),
         row("delete_room", Method::DELETE, "{building}/rooms/attic", ANY, None, 204),
         get("get_opening", "{building}/openings/d"),
-        row("put_opening", Method::PUT, "{building}/openings/w", NEW, Some(door("w", "shop", "outside")), 200),
-        row("patch_opening", Method::PATCH, "{building}/openings/d", ANY, Some(json!({ "entry": true })), 200),
+        row(
+            "put_opening",
+            Method::PUT,
+            "{building}/openings/w",
+            NEW,
+            Some(door("w", "shop", "outside")),
+            200,
+        ),
+        row(
+            "patch_opening",
+            Method::PATCH,
+            "{building}/openings/d",
+            ANY,
+            Some(json!({ "entry": true })),
+            200,
+        ),
         row("delete_opening", Method::DELETE, "{building}/openings/w", ANY, None, 204),
         row("create_assessment", Method::POST, "{building}/assessments", &[], Some(json!({})), 201),
         get("list_assessments", "{building}/assessments"),
@@ -69,10 +83,17 @@ impl Row {
         self.send_with(app, "", &[], None).await
     }
 
-    async fn send_with(&self, app: &TestApp, query: &str, more: &[(&str, &str)], body: Option<&[u8]>) -> Reply {
+    async fn send_with(
+        &self,
+        app: &TestApp,
+        query: &str,
+        more: &[(&str, &str)],
+        body: Option<&[u8]>,
+    ) -> Reply {
         let plain = self.body.as_ref().map(|body| body.to_string().into_bytes());
         let body = body.map(<[u8]>::to_vec).or(plain).unwrap_or_default();
-        let mut request = with_headers(request(self.method.clone(), &format!("{}{query}", self.path)), self.headers);
+        let mut request =
+            with_headers(request(self.method.clone(), &format!("{}{query}", self.path)), self.headers);
         if self.body.is_some() && !more.iter().any(|(name, _)| *name == "Content-Type") {
             request = request.header("Content-Type", "application/json");
         }
@@ -88,7 +109,10 @@ async fn document() -> Value {
 fn operations(document: &Value) -> Vec<(&str, &str, &Value)> {
     let paths = document["paths"].as_object().unwrap();
     let methods = paths.iter().flat_map(|(path, item)| {
-        item.as_object().unwrap().iter().map(move |(method, operation)| (path.as_str(), method.as_str(), operation))
+        item.as_object()
+            .unwrap()
+            .iter()
+            .map(move |(method, operation)| (path.as_str(), method.as_str(), operation))
     });
     methods.collect()
 }
@@ -114,8 +138,10 @@ async fn every_operation_answers_as_the_document_says() {
         assert_eq!(reply.header("content-type"), described.map_or("", String::as_str), "{}", row.id);
         exercised.insert(row.id);
     }
-    let all: BTreeSet<_> =
-        operations(&document).iter().map(|(_, _, operation)| operation["operationId"].as_str().unwrap()).collect();
+    let all: BTreeSet<_> = operations(&document)
+        .iter()
+        .map(|(_, _, operation)| operation["operationId"].as_str().unwrap())
+        .collect();
     assert_eq!(exercised, all, "the table and the document have the same operations");
 }
 
@@ -136,7 +162,9 @@ async fn every_operation_refuses_bad_requests_with_a_problem() {
         if row.body.is_some() {
             let text = [("Content-Type", "text/plain")];
             row.send_with(&app, "", &text, None).await.problem(415, "unsupported-media-type");
-            for broken in [b"{".as_slice(), b"\xff", br#"{"a": 1, "a": 2}"#, b"{\"name\": NaN}", deep.as_bytes()] {
+            for broken in
+                [b"{".as_slice(), b"\xff", br#"{"a": 1, "a": 2}"#, b"{\"name\": NaN}", deep.as_bytes()]
+            {
                 let reply = row.send_with(&app, "", &[], Some(broken)).await;
                 assert_eq!(reply.problem(400, "unreadable")["status"], 400, "{id}");
             }
@@ -157,7 +185,8 @@ async fn every_address_with_an_id_is_404_for_another_or_a_broken_one() {
     for mut row in rows(&app).await {
         let Some(at) = row.path.find("019ac000") else { continue };
         let sound = row.path.clone();
-        for id in ["019ac000-0000-7000-8000-00000000ffff", "019AC000-0000-7000-8000-000000000001", "x", "%FF"] {
+        for id in ["019ac000-0000-7000-8000-00000000ffff", "019AC000-0000-7000-8000-000000000001", "x", "%FF"]
+        {
             row.path = format!("{}{id}{}", &sound[..at], &sound[at + 36..]);
             row.send(&app).await.problem(404, "not-found");
         }
@@ -210,11 +239,18 @@ async fn every_operation_is_described_in_full() {
                 Some(pointer) => document.pointer(pointer).unwrap(),
                 None => response,
             };
-            assert!(response["description"].as_str().is_some_and(|text| !text.is_empty()), "{named} {status}");
+            assert!(
+                response["description"].as_str().is_some_and(|text| !text.is_empty()),
+                "{named} {status}"
+            );
             if status.starts_with('4') || status.starts_with('5') {
                 refusals += 1;
                 let content = response["content"].as_object().unwrap();
-                assert_eq!(content.keys().collect::<Vec<_>>(), ["application/problem+json"], "{named} {status}");
+                assert_eq!(
+                    content.keys().collect::<Vec<_>>(),
+                    ["application/problem+json"],
+                    "{named} {status}"
+                );
             }
         }
         assert!(refusals >= 3, "{named} can fail in more ways than {refusals}");
@@ -231,7 +267,8 @@ async fn the_examples_of_the_document_are_accepted() {
     let document = document().await;
     let example = |id: &str| -> Value {
         let described = operations(&document);
-        let (_, _, operation) = described.iter().find(|(_, _, operation)| operation["operationId"] == id).unwrap();
+        let (_, _, operation) =
+            described.iter().find(|(_, _, operation)| operation["operationId"] == id).unwrap();
         let content = operation["requestBody"]["content"].as_object().unwrap();
         content.values().next().unwrap()["example"].clone()
     };
