@@ -7,14 +7,15 @@ use std::sync::OnceLock;
 
 use serde_json::Value;
 
-use super::super::table::COLUMNS;
-use super::super::{BuildingReport, Head, building_report, room_report, room_report_bytes, table};
-use super::{banned, not_rounded, texts};
-use crate::assessment::assess;
-use crate::catalogue::Catalogue;
-use crate::domain::{Assumptions, Building};
-use crate::fire::methods;
-use crate::wire::{BuildingInput, read};
+use sootline::assessment::assess;
+use sootline::catalogue::Catalogue;
+use sootline::domain::{Assumptions, Building};
+use sootline::fire::methods;
+use sootline::report::table::COLUMNS;
+use sootline::report::{BuildingReport, Head, building_report, room_report, room_report_bytes, table};
+use sootline::wire::{BuildingInput, read};
+
+use super::reading::{banned, not_rounded, texts};
 
 /// Publications, and what the bureau itself wrote (a kitchen has its `pass`), are quoted as they are.
 const QUOTED: [&str; 7] = ["/source", "/name", "/key", "/opening", "/openings_tried", "/room", "/subject"];
