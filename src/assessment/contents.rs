@@ -110,7 +110,8 @@ impl Contents {
         let found = find(&room.room_use, |key| catalogue.use_of(key))
             .ok_or_else(|| format!("use {:?}", room.room_use))?;
         let use_of = found.properties;
-        let fuel: Option<&FuelProperties> = find(&use_of.fuel, |key| catalogue.fuel(key)).map(|found| found.properties);
+        let fuel: Option<&FuelProperties> =
+            find(&use_of.fuel, |key| catalogue.fuel(key)).map(|found| found.properties);
         let load = load_of(room, &found, assumptions, account);
         account.from_row(
             "use.heat_release_per_area_kw_m2",

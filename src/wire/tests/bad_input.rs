@@ -376,10 +376,7 @@ fn properties_may_stand_in_place_of_a_name_and_are_held_to_their_limits() {
         told(&faults_of::<BuildingInput>(&with("/rooms/0/use", changed)))
     };
     assert_eq!(with_fuel("oxygen", json!(0.8)), []);
-    assert_eq!(
-        with_fuel("oxygen", json!(-1)),
-        [("/rooms/0/use/fuel/oxygen".to_owned(), "out_of_range")]
-    );
+    assert_eq!(with_fuel("oxygen", json!(-1)), [("/rooms/0/use/fuel/oxygen".to_owned(), "out_of_range")]);
     assert_eq!(
         with_fuel("chemical_heat_mj_kg", json!(19)),
         [("/rooms/0/use/fuel/chemical_heat_mj_kg".to_owned(), "contradiction")]
