@@ -45,7 +45,7 @@ impl Account {
     }
 
     /// Enters a number that a row of the catalogue gave.
-    pub fn from_row<T>(
+    pub fn row<T>(
         &mut self,
         field: impl Into<Cow<'static, str>>,
         value: f64,

@@ -6,24 +6,24 @@ use super::findings::{
     BackdraftFinding, BackdraftOutcome, BackdraftRating, Band, Figure, LimitedBy, Reason, StarvedFinding,
 };
 use super::inputs::Inputs;
-use super::judge::{FireClock, Limit, shut_room};
+use super::judge::{FireClock, Limit, aftergas, excess_in, shut_room};
 use super::linings::taking_heat;
 use super::methods::figure;
 use super::openings::{State, way_out};
-use super::scenarios::{Cap, Screened, spread_of_leaks, spread_of_linings};
+use super::scenarios::{Cap, Screened, hottest_k, spread_of_leaks, spread_of_linings};
 use super::{hazards, holds_while, not_covered, rules};
 use crate::domain::Key;
 use crate::domain::assumptions::Scenario;
-use crate::fire::DesignFire;
 use crate::fire::constants::{
-    HEAT_PER_OXYGEN_KJ_KG, ICE_POINT_K, OXYGEN_IN_AIR_MASS_FRACTION, air_density_kg_m3,
+    HEAT_PER_AIR_KJ_KG, HEAT_PER_OXYGEN_KJ_KG, ICE_POINT_K, OXYGEN_IN_AIR_MASS_FRACTION, air_density_kg_m3,
 };
-use crate::fire::excess_fuel::{AftergasShare, ExcessInput, Outcome, screen, screen_limits, threshold_kj_kg};
+use crate::fire::excess_fuel::{Outcome, screen_limits, threshold_kj_kg};
 use crate::fire::flashover::LIMIT_600_C_GAS_K;
 use crate::fire::hot_layer::{GrowingVented, mccaffrey_time_to_rise_s};
 use crate::fire::linings::Surface;
 use crate::fire::oxygen::{LimitingOxygen, extinction_mass_fraction, usable_heat_kj};
 use crate::fire::ventilation::kawagoe_inflow_kg_s;
+use crate::fire::{DesignFire, Exceeded};
 
 /// Unburned gas of one scenario.
 #[derive(Debug, Clone, Copy, PartialEq)]
@@ -36,9 +36,11 @@ pub(super) struct Starved {
     pub threshold_kj_kg: f64,
     pub layer_k: Band,
     pub flame_out_s: Band,
-    pub exceeded: crate::fire::Exceeded,
-    /// The flame went out for lack of oxygen.
+    pub exceeded: Exceeded,
+    /// The flame went out, or was cut down, for lack of oxygen.
     pub starved: bool,
+    /// The room is shut.
+    pub shut: bool,
 }
 
 impl Starved {
@@ -47,6 +49,11 @@ impl Starved {
             Outcome::NotIndicated => BackdraftRating::NotIndicated,
             Outcome::CannotBeExcluded => BackdraftRating::CannotBeExcluded,
         }
+    }
+
+    /// Whether the flame dies for lack of oxygen, and is not only cut down.
+    pub fn dies(&self) -> bool {
+        self.starved && self.shut
     }
 
     /// What the scenario's finding says.
@@ -70,7 +77,8 @@ pub(super) fn starve_all(inputs: &Inputs<'_>, screened: &[Screened], cap: Cap) -
                 let same = starved.iter().find(|(state, _)| *state == found.state);
                 match same {
                     Some((_, other)) => Some(Starved { scenario: found.scenario, ..*other }),
-                    None => starve_shut(inputs, found, cap),
+                    None if found.state.is_open() => starve_open(inputs, found, cap),
+                    None => Some(starve_shut(inputs, found, cap)),
                 }
             }
             Scenario::ShutLate => starve_shut_late(inputs, found, cap),
@@ -81,29 +89,24 @@ pub(super) fn starve_all(inputs: &Inputs<'_>, screened: &[Screened], cap: Cap) -
     starved.into_iter().map(|(_, one)| one).collect()
 }
 
-/// The fire of a room that starves from the beginning: shut, or open so little that its air runs short and it does not
-/// flash over. What little stands open counts as cracks.
-fn starve_shut(inputs: &Inputs<'_>, found: &Screened, cap: Cap) -> Option<Starved> {
-    let mut state = found.state;
-    if state.is_open() {
-        let short_of_air = found.typical.limit == Limit::Air;
-        if !short_of_air || found.typical.to_highest >= rules::LIKELY_RATIO {
-            return None;
-        }
-        state.leak_m2 += state.wall.area_m2;
-    }
+/// The fire of a shut room, which starves from the beginning.
+fn starve_shut(inputs: &Inputs<'_>, found: &Screened, cap: Cap) -> Starved {
+    let state = found.state;
     let contents = &inputs.contents;
     let surfaces = inputs.lined.around(0.0);
     let (heat, leaks) = (spread_of_linings(inputs), spread_of_leaks(inputs));
     let worst = (cap.on(contents.worst_fire()), taking_heat(surfaces, heat.low));
     let mildest = (cap.on(contents.mildest_fire()), taking_heat(surfaces, heat.high));
     let typical = (cap.on(contents.typical_fire()), surfaces);
+    let once = |(fire, surfaces): &(DesignFire, [Surface; 3]), leak_m2: f64| {
+        excess_in(inputs, *fire, surfaces, leak_m2)
+    };
     let corners = [
-        screen_once(inputs, &typical, state.leak_m2),
-        screen_once(inputs, &worst, state.leak_m2 * leaks.low),
-        screen_once(inputs, &worst, state.leak_m2 * leaks.high),
-        screen_once(inputs, &mildest, state.leak_m2 * leaks.low),
-        screen_once(inputs, &mildest, state.leak_m2 * leaks.high),
+        found.typical.excess.unwrap_or_else(|| once(&typical, state.leak_m2)),
+        once(&worst, state.leak_m2 * leaks.low),
+        once(&worst, state.leak_m2 * leaks.high),
+        once(&mildest, state.leak_m2 * leaks.low),
+        once(&mildest, state.leak_m2 * leaks.high),
     ];
     let fires = [typical.0, worst.0, worst.0, mildest.0, mildest.0];
     let middle = corners[0];
@@ -122,7 +125,7 @@ fn starve_shut(inputs: &Inputs<'_>, found: &Screened, cap: Cap) -> Option<Starve
         high: corners.iter().map(|c| c.high_kj_kg).fold(middle.typical_kj_kg, f64::max),
     };
     let room = shut_room(inputs, state.leak_m2, &surfaces);
-    Some(Starved {
+    Starved {
         scenario: found.scenario,
         outcome: if worst_ratio < 1.0 { Outcome::NotIndicated } else { Outcome::CannotBeExcluded },
         to_threshold: worst_ratio,
@@ -132,29 +135,53 @@ fn starve_shut(inputs: &Inputs<'_>, found: &Screened, cap: Cap) -> Option<Starve
         flame_out_s: over(&out_s, out_s(0)),
         exceeded: screen_limits(&room, middle.layer_temperature_k),
         starved: middle.burn.starved,
-    })
-}
-
-/// What hot fuel and linings give off after the flame is out.
-pub(super) fn aftergas(inputs: &Inputs<'_>) -> AftergasShare {
-    if inputs.lined.combustible {
-        AftergasShare::COMBUSTIBLE_LINING
-    } else {
-        AftergasShare::NONCOMBUSTIBLE_LINING
+        shut: true,
     }
 }
 
-/// The screen of `fire` for one fire, its linings and a leakage.
-pub(super) fn screen_once(
-    inputs: &Inputs<'_>,
-    (fire, surfaces): &(DesignFire, [Surface; 3]),
-    leak_m2: f64,
-) -> crate::fire::excess_fuel::ExcessFuel {
-    screen(&ExcessInput {
-        fire: *fire,
-        room: shut_room(inputs, leak_m2, surfaces),
-        aftergas: aftergas(inputs),
-        horizon_s: inputs.horizon.shut_s,
+/// The fire of a room that stands open so little, or to so little air, that it runs short and does not flash over.
+///
+/// A steady balance: what the fuel gives off beyond what the air burns, per kg of air drawn in and of that fuel gas.
+/// The fuel is taken to give off as much as with all the air it wants, which a starved fire does not: an upper bound.
+fn starve_open(inputs: &Inputs<'_>, found: &Screened, cap: Cap) -> Option<Starved> {
+    let short_of_air = found.typical.limit == Limit::Air;
+    if !short_of_air || found.typical.to_highest >= rules::LIKELY_RATIO {
+        return None;
+    }
+    let contents = &inputs.contents;
+    let surfaces = inputs.lined.around(found.state.wall.area_m2);
+    let excess = |fire: DesignFire| {
+        let allowed_kw = found.state.air_limit_kw(fire.growth_kw_s2);
+        let unburned_kw = (fire.reached_kw() - allowed_kw).max(0.0);
+        let fuel_gas_kg_s = unburned_kw / contents.heat_of_combustion_kj_kg;
+        unburned_kw / (allowed_kw / HEAT_PER_AIR_KJ_KG + fuel_gas_kg_s).max(f64::MIN_POSITIVE)
+    };
+    let short_s = |fire: DesignFire| {
+        let admitted = found.state.admits(fire);
+        FireClock::of(&admitted).at_s(admitted.phases().growth_end_s)
+    };
+    let [mildest, typical, worst] =
+        [contents.mildest_fire(), contents.typical_fire(), contents.worst_fire()].map(|fire| cap.on(fire));
+    let over = |of: &dyn Fn(DesignFire) -> f64| {
+        let (low, middle, high) = (of(mildest), of(typical), of(worst));
+        Band { low: low.min(middle).min(high), typical: middle, high: low.max(middle).max(high) }
+    };
+    let excess_kj_kg = over(&excess);
+    let layer_k = hottest_k(inputs, found, &surfaces, cap);
+    let threshold_kj_kg = threshold_kj_kg(layer_k);
+    let to_threshold = excess_kj_kg.high / threshold_kj_kg;
+    Some(Starved {
+        scenario: found.scenario,
+        outcome: if to_threshold < 1.0 { Outcome::NotIndicated } else { Outcome::CannotBeExcluded },
+        to_threshold,
+        excess_kj_kg,
+        threshold_kj_kg,
+        layer_k: Band { low: layer_k, typical: layer_k, high: layer_k },
+        flame_out_s: over(&short_s),
+        exceeded: Exceeded::none()
+            .when(true, "the room stands open: a steady balance instead of the shut room"),
+        starved: true,
+        shut: false,
     })
 }
 
@@ -172,7 +199,7 @@ fn starve_shut_late(inputs: &Inputs<'_>, found: &Screened, cap: Cap) -> Option<S
     }
     let surfaces = inputs.lined.around(found.state.wall.area_m2);
     let fire = cap.on(inputs.contents.typical_fire());
-    let open = fire.capped_kw(found.state.air_limit_kw(fire.growth_kw_s2));
+    let open = found.state.admits(fire);
     let clock = FireClock::of(&open);
     let growing = GrowingVented {
         fire: open,
@@ -209,7 +236,11 @@ fn shut_at(
         heat_release_kw * (heat_release_kw / fire.growth_kw_s2.max(f64::MIN_POSITIVE)).sqrt() / 3.0;
     let left_kj = (fire.energy_kj - released_kj - burns_on_kj).max(0.0);
     let share = aftergas(inputs);
-    let after = |share: f64| (share * (released_kj.min(grown_kj) + burns_on_kj)).min(left_kj) / gas_kg;
+    // The fuel gas is itself part of the layer: no layer holds more per kilogram than fuel does.
+    let after = |share: f64| {
+        let unburned_kj = (share * (released_kj.min(grown_kj) + burns_on_kj)).min(left_kj);
+        unburned_kj / (gas_kg + unburned_kj / inputs.contents.heat_of_combustion_kj_kg)
+    };
     let excess_kj_kg = Band { low: after(share.low), typical: after(share.typical), high: after(share.high) };
     let threshold_kj_kg = threshold_kj_kg(layer_k);
     let to_threshold = excess_kj_kg.high / threshold_kj_kg;
@@ -225,6 +256,7 @@ fn shut_at(
         flame_out_s: Band { low: out_s, typical: out_s, high: out_s },
         exceeded: screen_limits(&shut_room(inputs, found.state.leak_m2, &surfaces), layer_k),
         starved: true,
+        shut: true,
     }
 }
 

@@ -15,6 +15,8 @@ use crate::fire::{DesignFire, design_fire, growth, spread};
 
 /// Radiative share where the fuel is not known: 0.35, common practice.
 const RADIATIVE_SHARE: f64 = 0.35;
+/// Net heat of combustion where the fuel is not known: 20 MJ/kg of mixed contents, common practice.
+const CONTENTS_KJ_KG: f64 = 20_000.0;
 /// Clear distance between packages where none was measured. Ours.
 const SPACING_M: f64 = 0.5;
 /// Share of typical growth at the slow corner; its inverse at the fast one. Half a growth class. Ours.
@@ -87,6 +89,8 @@ pub(super) struct Contents {
     pub heat_release_per_area_kw_m2: f64,
     pub floor_area_m2: f64,
     pub radiative_share: f64,
+    /// Of what the contents burn as.
+    pub heat_of_combustion_kj_kg: f64,
     pub packages: Vec<Package>,
     pub pile: Option<Pile>,
     pub origin: Option<usize>,
@@ -112,7 +116,7 @@ impl Contents {
         let use_of = found.properties;
         let fuel: Option<&FuelProperties> = catalogue.fuel(&use_of.fuel).map(|row| &row.properties);
         let load = load_of(room, &found, assumptions, account);
-        account.from_row(
+        account.row(
             "use.heat_release_per_area_kw_m2",
             use_of.heat_release_per_area_kw_m2,
             &found,
@@ -144,6 +148,7 @@ impl Contents {
             heat_release_per_area_kw_m2: use_of.heat_release_per_area_kw_m2,
             floor_area_m2: geometry.floor_area_m2,
             radiative_share,
+            heat_of_combustion_kj_kg: fuel.map_or(CONTENTS_KJ_KG, |fuel| fuel.heat_of_combustion_mj_kg * 1e3),
             packages,
             pile,
             origin,
@@ -216,7 +221,7 @@ fn load_of(
         };
     }
     let typical_mj_m2 = fractile_of(found.properties, fractile);
-    account.from_row("fuel_load_mj_m2", typical_mj_m2, found, "fire_load_p80_mj_m2");
+    account.row("fuel_load_mj_m2", typical_mj_m2, found, "fire_load_p80_mj_m2");
     Load {
         p50_mj_m2: usual_mj_m2.min(typical_mj_m2),
         typical_mj_m2,
@@ -254,11 +259,11 @@ fn packages_of(room: &Room, catalogue: &Catalogue, account: &mut Account) -> Res
         let item = found.properties;
         if found.row.is_some() {
             let field = |member: &str| format!("fuel_packages.{}.{member}", package.key);
-            account.from_row(field("peak_kw"), item.peak_kw, &found, "peak_kw");
-            account.from_row(field("growth_kw_s2"), item.growth_kw_s2, &found, "growth_kw_s2");
-            account.from_row(field("energy_mj"), item.energy_mj, &found, "energy_mj");
+            account.row(field("peak_kw"), item.peak_kw, &found, "peak_kw");
+            account.row(field("growth_kw_s2"), item.growth_kw_s2, &found, "growth_kw_s2");
+            account.row(field("energy_mj"), item.energy_mj, &found, "energy_mj");
             if package.mass_kg.is_none() {
-                account.from_row(field("mass_kg"), item.mass_kg, &found, "mass_kg");
+                account.row(field("mass_kg"), item.mass_kg, &found, "mass_kg");
             }
         }
         let heavier = package.mass_kg.map_or(1.0, |mass| mass.get() / item.mass_kg);
@@ -287,8 +292,8 @@ fn pile_of(storage: &Storage, catalogue: &Catalogue, account: &mut Account) -> R
     let found = find(&storage.commodity, |key| catalogue.item(key))
         .ok_or_else(|| format!("commodity {:?}", storage.commodity))?;
     let item: &ItemProperties = found.properties;
-    account.from_row("storage.commodity.peak_kw", item.peak_kw, &found, "peak_kw");
-    account.from_row("storage.commodity.growth_kw_s2", item.growth_kw_s2, &found, "growth_kw_s2");
+    account.row("storage.commodity.peak_kw", item.peak_kw, &found, "peak_kw");
+    account.row("storage.commodity.growth_kw_s2", item.growth_kw_s2, &found, "growth_kw_s2");
     let footprint_m2 = storage.footprint_m2.get();
     let height_m = storage.height_m.get();
     let times = footprint_m2 / item.burning_area_m2 * height_m / item.height_m;
@@ -347,7 +352,7 @@ fn growth_of(
         }
     }
     if from == "use" {
-        account.from_row("growth_kw_s2", of_use, found, "growth_kw_s2");
+        account.row("growth_kw_s2", of_use, found, "growth_kw_s2");
     }
     let foam = room.hazards.contains(&Hazard::ExposedFoam);
     let of_foam = foam.then(|| coefficient_kw_s2(GrowthClass::UltraFast));

@@ -511,7 +511,7 @@ pub struct StarvedFinding {
     pub threshold_mj_kg: f64,
     /// Layer temperature when the flame dies, °C.
     pub layer_temperature_c: Band,
-    /// When the flame dies, on the fire clock.
+    /// When the flame dies, or is cut down to what the air of a room that stands open allows, on the fire clock.
     pub flame_out_s: Band,
 }
 

@@ -135,7 +135,7 @@ pub(super) fn limited_by(limit: Limit) -> LimitedBy {
 }
 
 fn tells_why_no_time(reason: &Reason) -> bool {
-    matches!(reason.key, "horizontal_openings_only" | "large_space")
+    matches!(reason.key, "horizontal_openings_only" | "large_space") || reason.key.starts_with("hazard_")
 }
 
 fn no_time(found: &Screened, rating: FlashoverRating) -> Reason {
@@ -260,7 +260,7 @@ fn figures(inputs: &Inputs<'_>, found: &Screened, cap: Cap) -> Vec<Figure> {
         figure("t_squared_growth", "growth_kw_s2", fire.growth_kw_s2, &growth_limits, by_fuel, scenario),
         figure("design_fire_decay", "fuel_limit_kw", fire.reached_kw(), &none, by_fuel, scenario),
     ];
-    if let Some(burn) = found.typical.burn {
+    if let Some(burn) = found.typical.burn() {
         let room = super::judge::shut_room(inputs, found.state.leak_m2, &surfaces);
         let limits = burn_shut_limits(&room);
         let air_kg = inputs.geometry.volume_m3 * air_density_kg_m3(inputs.ambient_k);
@@ -281,7 +281,7 @@ fn figures(inputs: &Inputs<'_>, found: &Screened, cap: Cap) -> Vec<Figure> {
     let input = ScreenInput {
         enclosure: enclosure(&found.state, &surfaces),
         surfaces: &surfaces,
-        fire: fire.capped_kw(air_kw),
+        fire: found.state.admits(fire),
         position_factor: CORNER.typical,
         ambient_temperature_k: inputs.ambient_k,
     };

@@ -1,11 +1,11 @@
 //! The nearest value of an input that would change a rating `not_indicated`: searched for, not told.
 
-use super::backdraft::{Starved, screen_once};
+use super::backdraft::Starved;
 use super::findings::{Direction, HoldsWhile};
 use super::inputs::Inputs;
-use super::judge::judge;
+use super::judge::{excess_in, judge};
 use super::linings::taking_heat;
-use super::openings::State;
+use super::openings::{CRACK_SHARE_M2_M3, State};
 use super::rules::NOT_INDICATED_RATIO;
 use super::scenarios::{Cap, Screened, spread_of_linings};
 use crate::domain::assumptions::Scenario;
@@ -50,64 +50,86 @@ impl Steps {
 /// What would make flashover possible: more fire load, faster growth, another opening, better insulation.
 pub(super) fn flashover(inputs: &Inputs<'_>, screened: &[Screened], cap: Cap) -> Vec<HoldsWhile> {
     let contents = &inputs.contents;
-    let Some(nearest) = screened.iter().max_by(|a, b| a.p95.to_lowest.total_cmp(&b.p95.to_lowest)) else {
-        return Vec::new();
-    };
-    let open = nearest.state.is_open();
-    let steps = if open { FINE } else { COARSE };
+    // Open states flip long before shut ones do; only where there is none do those count.
+    let mut states: Vec<State> = Vec::with_capacity(screened.len());
+    let any_open = screened.iter().any(|found| found.state.is_open());
+    for found in screened.iter().filter(|found| found.state.is_open() == any_open) {
+        if !states.contains(&found.state) {
+            states.push(found.state);
+        }
+    }
+    let steps = if any_open { FINE } else { COARSE };
     let load = contents.load;
     let alpha = contents.growth.typical_kw_s2;
-    let flips = |state: &State, p95_mj_m2: f64, growth_kw_s2: f64, heat_share: f64| {
+    let flips_in = |state: &State, p95_mj_m2: f64, growth_kw_s2: f64, heat_share: f64| {
         let surfaces = taking_heat(inputs.lined.around(state.wall.area_m2), heat_share);
         let fire = cap.on(contents.fire(p95_mj_m2, growth_kw_s2));
         judge(inputs, state, fire, &surfaces).to_lowest >= NOT_INDICATED_RATIO
+    };
+    let flips = |p95_mj_m2: f64, growth_kw_s2: f64, heat_share: f64| {
+        states.iter().any(|state| flips_in(state, p95_mj_m2, growth_kw_s2, heat_share))
     };
     let mut found = Vec::with_capacity(5);
 
     let now = load.typical_mj_m2;
     if now > 0.0 {
-        let value =
-            steps.search(now, 100_000.0, |x| flips(&nearest.state, load.p95_mj_m2 * x / now, alpha, 1.0));
+        let value = steps.search(now, 100_000.0, |x| flips(load.p95_mj_m2 * x / now, alpha, 1.0));
         found.extend(value.map(|value| flip("fuel_load_mj_m2", now, value, "the fire load", "MJ/m²")));
     }
-    let value = steps.search(alpha, 20.0, |x| flips(&nearest.state, load.p95_mj_m2, x, 1.0));
+    let value = steps.search(alpha, 20.0, |x| flips(load.p95_mj_m2, x, 1.0));
     found.extend(value.map(|value| flip("growth_kw_s2", alpha, value, "growth", "kW/s²")));
-    found.extend(opening_flip(inputs, &nearest.state, |state| flips(state, load.p95_mj_m2, alpha, 1.0)));
-    if open {
+    // The scenario that stands most open to outside is the one whose opening is varied.
+    let most_open = states
+        .iter()
+        .copied()
+        .reduce(|most, next| if next.outside.area_m2 > most.outside.area_m2 { next } else { most });
+    found.extend(
+        most_open.and_then(|state| {
+            opening_flip(inputs, &state, |state| flips_in(state, load.p95_mj_m2, alpha, 1.0))
+        }),
+    );
+    if any_open {
         let now = inputs.lined.surfaces[0].conductivity_w_mk;
-        let value = FINE.search(now, 0.05 * now, |x| flips(&nearest.state, load.p95_mj_m2, alpha, x / now));
+        let value = FINE.search(now, 0.05 * now, |x| flips(load.p95_mj_m2, alpha, x / now));
         found.extend(value.map(|value| {
             flip("linings.walls.conductivity_w_mk", now, value, "the conductivity of the linings", "W/(m K)")
         }));
-    } else if nearest.state.leak_m2 > 0.0 {
-        let now = nearest.state.leak_m2;
-        let value = COARSE.search(now, 0.001 * inputs.geometry.volume_m3, |x| {
-            flips(&State { leak_m2: x, ..nearest.state }, load.p95_mj_m2, alpha, 1.0)
+    } else if let Some(state) = states.first().filter(|state| state.leak_m2 > 0.0) {
+        let now = state.leak_m2;
+        let value = COARSE.search(now, CRACK_SHARE_M2_M3 * inputs.geometry.volume_m3, |x| {
+            flips_in(&State { leak_m2: x, ..*state }, load.p95_mj_m2, alpha, 1.0)
         });
         found.extend(value.map(|value| flip("leakage_area_m2", now, value, "the leakage", "m²")));
     }
     nearest_first(found)
 }
 
-/// The open area at which it flips: more or less than now; in a shut room, of an opening 2 m high.
+/// The area open to outside at which it flips: more than now, or less; where nothing stands open to outside,
+/// of an opening 2 m high. Air behind inner doors is left out: it is not what an opening to outside adds.
 fn opening_flip(inputs: &Inputs<'_>, state: &State, flips: impl Fn(&State) -> bool) -> Option<HoldsWhile> {
     const DOOR_HEIGHT_M: f64 = 2.0;
-    const LEAST_M2: f64 = 0.02;
 
+    let now = state.outside.area_m2;
     let height_m =
-        if state.is_open() { state.wall.height_m } else { DOOR_HEIGHT_M.min(0.9 * inputs.geometry.height_m) };
+        if now > 0.0 { state.outside.height_m } else { DOOR_HEIGHT_M.min(0.9 * inputs.geometry.height_m) };
     let with = |area_m2: f64| {
         let wall = WallOpening { area_m2, height_m };
         State { wall, outside: wall, behind_m3: 0.0, behind_outside_m2: 0.0, ..*state }
     };
-    let now = state.wall.area_m2;
+    // Smaller openings count as cracks.
+    let least_m2 = CRACK_SHARE_M2_M3 * inputs.geometry.volume_m3;
     let most_m2 = 0.5 * inputs.geometry.wall_area_m2();
-    let up = FINE.search(now.max(LEAST_M2), most_m2, |x| flips(&with(x)));
-    let down = (now > LEAST_M2).then(|| FINE.search(now, LEAST_M2, |x| flips(&with(x)))).flatten();
-    let far =
-        |value: Option<f64>| value.map_or(f64::INFINITY, |value| (value / now.max(LEAST_M2)).ln().abs());
-    let value = if far(down) < far(up) { down } else { up }?;
-    Some(flip("openings.open_area_m2", now, value, "the open area", "m²"))
+    let value = if now > least_m2 {
+        let up = FINE.search(now, most_m2, |x| flips(&with(x)));
+        let down = FINE.search(now, least_m2, |x| flips(&with(x)));
+        let far = |value: Option<f64>| value.map_or(f64::INFINITY, |value| (value / now).ln().abs());
+        if far(down) < far(up) { down } else { up }
+    } else if flips(&with(least_m2)) {
+        Some(least_m2)
+    } else {
+        FINE.search(least_m2, most_m2, |x| flips(&with(x)))
+    }?;
+    Some(flip("openings.open_area_m2", now, value, "the area open to outside", "m²"))
 }
 
 /// What would make the backdraft screen fail: more or less leakage, more fire load.
@@ -119,7 +141,7 @@ pub(super) fn backdraft(inputs: &Inputs<'_>, worst: &Starved, cap: Cap) -> Vec<H
     let leak_m2 = stand.state(inputs.plan, inputs.number, inputs.envelope_leak_m2, inputs.ambient_k).leak_m2;
     let flips = |load_mj_m2: f64, leak_m2: f64| {
         let fire = cap.on(contents.fire(load_mj_m2, contents.growth.fast_kw_s2));
-        let found = screen_once(inputs, &(fire, surfaces), leak_m2);
+        let found = excess_in(inputs, fire, &surfaces, leak_m2);
         found.high_kj_kg >= found.threshold_kj_kg
     };
     let mut found = Vec::with_capacity(2);
@@ -167,11 +189,12 @@ fn short(value: f64) -> String {
     }
 }
 
-/// By the factor between the value and that of now; an input that is zero now comes last.
+/// By the factor between the value and that of now; an opening that is not there yet comes first: it takes
+/// the least to make one.
 fn nearest_first(mut found: Vec<HoldsWhile>) -> Vec<HoldsWhile> {
     let far = |holds: &HoldsWhile| match holds.value {
         Some(value) if holds.now > 0.0 => (value / holds.now).ln().abs(),
-        _ => f64::INFINITY,
+        _ => 0.0,
     };
     found.sort_by(|a, b| far(a).total_cmp(&far(b)));
     if found.is_empty() {

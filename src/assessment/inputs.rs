@@ -146,7 +146,7 @@ fn envelope_leak_m2(
         let area_m2 = surface_area_m2(geometry.wall_area_m2(), leaks.wall_m2_m2)
             + surface_area_m2(geometry.floor_area_m2, leaks.floor_m2_m2)
             + surface_area_m2(geometry.floor_area_m2, leaks.ceiling_m2_m2);
-        account.from_row("leakage_area_m2", area_m2, &found, "wall_m2_m2");
+        account.row("leakage_area_m2", area_m2, &found, "wall_m2_m2");
         (area_m2, found.row.is_some())
     };
     if !entered {

@@ -3,6 +3,7 @@
 use super::inputs::Inputs;
 use super::openings::State;
 use crate::fire::DesignFire;
+use crate::fire::excess_fuel::{self, AftergasShare, ExcessFuel, ExcessInput};
 use crate::fire::flashover::{self, Enclosure, LIMIT_20_KW_M2_FLOOR, LIMIT_600_C_GAS_K};
 use crate::fire::hot_layer::{GrowingVented, Position, mccaffrey_time_to_rise_s, measured_position_factor};
 use crate::fire::linings::{Surface, total_area_m2, total_conductance_kw_k};
@@ -20,8 +21,15 @@ pub(super) struct Judged {
     pub to_highest: f64,
     pub to_lowest: f64,
     pub limit: Limit,
+    /// How the fire of a shut room ended, and what gas it left.
+    pub excess: Option<ExcessFuel>,
+}
+
+impl Judged {
     /// How the fire of a shut room ended.
-    pub burn: Option<ShutBurn>,
+    pub fn burn(&self) -> Option<ShutBurn> {
+        self.excess.map(|excess| excess.burn)
+    }
 }
 
 /// What holds the fire down.
@@ -58,36 +66,60 @@ pub(super) fn judge(inputs: &Inputs<'_>, state: &State, fire: DesignFire, surfac
     if state.is_open() {
         judge_open(state, fire, surfaces)
     } else {
-        let room = shut_room(inputs, state.leak_m2, surfaces);
-        judge_burn(&fire, burn_shut(&fire, &room, inputs.horizon.shut_s), inputs.ambient_k)
+        judge_excess(&fire, excess_in(inputs, fire, surfaces, state.leak_m2), inputs.ambient_k)
+    }
+}
+
+/// The screen for unburned gas of a shut room.
+pub(super) fn excess_in(
+    inputs: &Inputs<'_>,
+    fire: DesignFire,
+    surfaces: &[Surface; 3],
+    leak_m2: f64,
+) -> ExcessFuel {
+    excess_fuel::screen(&ExcessInput {
+        fire,
+        room: shut_room(inputs, leak_m2, surfaces),
+        aftergas: aftergas(inputs),
+        horizon_s: inputs.horizon.shut_s,
+    })
+}
+
+/// What hot fuel and linings give off after the flame is out.
+pub(super) fn aftergas(inputs: &Inputs<'_>) -> AftergasShare {
+    if inputs.lined.combustible {
+        AftergasShare::COMBUSTIBLE_LINING
+    } else {
+        AftergasShare::NONCOMBUSTIBLE_LINING
     }
 }
 
 fn judge_open(state: &State, fire: DesignFire, surfaces: &[Surface; 3]) -> Judged {
     let fuel_kw = fire.reached_kw();
     let air_kw = state.air_limit_kw(fire.growth_kw_s2);
-    let phases = fire.capped_kw(air_kw).phases();
+    let phases = state.admits(fire).phases();
     let required_kw = required_span_kw(enclosure(state, surfaces), surfaces, phases.decay_start_s);
     Judged {
         available_kw: phases.reached_kw,
         required_kw: Some(required_kw),
         to_highest: ratio(phases.reached_kw, required_kw.1),
         to_lowest: ratio(phases.reached_kw, required_kw.0),
-        limit: if air_kw < fuel_kw { Limit::Air } else { Limit::Fuel },
-        burn: None,
+        limit: if air_kw < fuel_kw || phases.reached_kw < fuel_kw { Limit::Air } else { Limit::Fuel },
+        excess: None,
     }
 }
 
 /// Judges a shut room by how its fire ended.
-pub(super) fn judge_burn(fire: &DesignFire, burn: ShutBurn, ambient_k: f64) -> Judged {
-    let share = ((burn.state.peak_temperature_k - ambient_k) / (LIMIT_600_C_GAS_K - ambient_k)).max(0.0);
+fn judge_excess(fire: &DesignFire, excess: ExcessFuel, ambient_k: f64) -> Judged {
+    let state = excess.burn.state;
+    let share = ((state.peak_temperature_k - ambient_k) / (LIMIT_600_C_GAS_K - ambient_k)).max(0.0);
     Judged {
-        available_kw: fire.heat_release_kw(burn.state.time_s),
+        available_kw: fire.heat_release_kw(state.time_s),
         required_kw: None,
         to_highest: share,
         to_lowest: share,
-        limit: if burn.starved { Limit::Oxygen } else { Limit::Fuel },
-        burn: Some(burn),
+        limit: if excess.burn.starved { Limit::Oxygen } else { Limit::Fuel },
+        excess: Some(excess),
     }
 }
 
@@ -151,9 +183,12 @@ pub(super) fn moments(
     place_factor: f64,
 ) -> Moments {
     if !state.is_open() {
-        return Moments::default();
+        return Moments {
+            layer_600_c_s: shut_reaches_600_c_s(inputs, state, &fire, surfaces),
+            ..Moments::default()
+        };
     }
-    let fire = fire.capped_kw(state.air_limit_kw(fire.growth_kw_s2));
+    let fire = state.admits(fire);
     let phases = fire.phases();
     let growing = GrowingVented { fire, opening: state.wall, surfaces, position_factor: place_factor };
     // A search that does not settle counts as "never": the rating does not rest on it.
@@ -165,6 +200,32 @@ pub(super) fn moments(
         floor_20_kw_m2_s: time_to_rise_s(floor_flux_rise_k(inputs, state)).map(|at_s| clock.at_s(at_s)),
         by_heat_s: fire.time_to_kw_s(required_kw).map(|at_s| clock.at_s(at_s)),
     }
+}
+
+/// When the gas of a shut room is at 600 °C, on the fire clock; hardly any shut room gets there.
+fn shut_reaches_600_c_s(
+    inputs: &Inputs<'_>,
+    state: &State,
+    fire: &DesignFire,
+    surfaces: &[Surface; 3],
+) -> Option<f64> {
+    let room = shut_room(inputs, state.leak_m2, surfaces);
+    let until = |horizon_s: f64| burn_shut(fire, &room, horizon_s).state;
+    let whole = until(inputs.horizon.shut_s);
+    if whole.peak_temperature_k < LIMIT_600_C_GAS_K {
+        return None;
+    }
+    // The peak until a time only grows with the time: halving finds the first at which it is there.
+    let (mut from_s, mut to_s) = (0.0, whole.time_s);
+    while to_s - from_s > 0.5 {
+        let middle_s = 0.5 * (from_s + to_s);
+        if until(middle_s).peak_temperature_k < LIMIT_600_C_GAS_K {
+            from_s = middle_s
+        } else {
+            to_s = middle_s
+        }
+    }
+    Some(FireClock::of(fire).at_s(to_s))
 }
 
 /// Rise of the layer at which it sends 20 kW/m² to the middle of the floor.

@@ -169,13 +169,13 @@ fn resolve<'c>(
     let thickness_m = match lining.and_then(|lining| lining.thickness_m) {
         Some(recorded) => recorded.get(),
         None => {
-            account.from_row(thickness, properties.thickness_m, &found, "thickness_m");
+            account.row(thickness, properties.thickness_m, &found, "thickness_m");
             properties.thickness_m
         }
     };
-    account.from_row(conductivity, properties.conductivity_w_mk, &found, "conductivity_w_mk");
-    account.from_row(density, properties.density_kg_m3, &found, "density_kg_m3");
-    account.from_row(specific_heat, properties.specific_heat_j_kgk, &found, "specific_heat_j_kgk");
+    account.row(conductivity, properties.conductivity_w_mk, &found, "conductivity_w_mk");
+    account.row(density, properties.density_kg_m3, &found, "density_kg_m3");
+    account.row(specific_heat, properties.specific_heat_j_kgk, &found, "specific_heat_j_kgk");
     Ok(One {
         surface: Surface {
             area_m2,

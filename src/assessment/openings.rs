@@ -5,7 +5,7 @@
 //! glass is wall until its criterion. Openings in ceilings and roofs stand apart: the
 //! correlations know wall openings only.
 
-use std::collections::HashSet;
+use std::collections::VecDeque;
 
 use super::findings::OpeningState;
 use super::plan::{Hole, Plan};
@@ -13,11 +13,11 @@ use crate::domain::assumptions::Scenario;
 use crate::domain::opening::{Glazing, OpeningKind};
 use crate::fire::constants::air_density_kg_m3;
 use crate::fire::ventilation::{WallOpening, combine, kawagoe_limit_kw};
-use crate::fire::{glazing, oxygen};
+use crate::fire::{DesignFire, glazing, oxygen};
 
 /// Open area per volume of the room up to which openings count as cracks, m²/m³: the range of the
 /// method for shut rooms.
-const CRACK_SHARE_M2_M3: f64 = 0.001;
+pub(super) const CRACK_SHARE_M2_M3: f64 = 0.001;
 
 /// How a room stands in a scenario.
 #[derive(Debug, Clone, Copy, PartialEq)]
@@ -44,16 +44,33 @@ impl State {
         self.wall.area_m2 > 0.0
     }
 
-    /// Heat release that the air can sustain for a growth coefficient, kW.
+    /// The fire that the air can sustain of one with all the air it wants.
     ///
-    /// The limit of all openings; but through inner doors no more than the air behind them gives: the heat
-    /// release at which the growing fire has used its oxygen, or the limit of inner door and outer opening
-    /// in a row, whichever is more.
+    /// No higher than the limit of all openings; but through inner doors no higher than the air behind them
+    /// gives: the heat release at which the growing fire has used its oxygen, or the limit of inner door and
+    /// outer opening in a row, whichever is more. Where nothing joins that air to outside, the fire ends with it.
+    pub fn admits(&self, fire: DesignFire) -> DesignFire {
+        let (limit_kw, air_heat_kj) = self.air_limit(fire.growth_kw_s2);
+        let fire = fire.capped_kw(limit_kw);
+        match air_heat_kj {
+            Some(heat_kj) if heat_kj < fire.decay_from_share * fire.energy_kj => {
+                DesignFire { energy_kj: heat_kj, decay_from_share: 1.0, ..fire }
+            }
+            _ => fire,
+        }
+    }
+
+    /// Heat release that the air can sustain for a growth coefficient, kW.
     pub fn air_limit_kw(&self, growth_kw_s2: f64) -> f64 {
+        self.air_limit(growth_kw_s2).0
+    }
+
+    /// The limit, and the heat of the air where there is no more than that, kJ.
+    fn air_limit(&self, growth_kw_s2: f64) -> (f64, Option<f64>) {
         let all_kw = kawagoe_limit_kw(self.wall);
         let inner_m2 = self.wall.area_m2 - self.outside.area_m2;
         if inner_m2 <= 1e-9 {
-            return all_kw;
+            return (all_kw, None);
         }
         let air_kg = self.behind_m3 * air_density_kg_m3(self.ambient_k);
         let heat_kj = oxygen::usable_heat_kj(air_kg, oxygen::LIMIT_AT_AMBIENT);
@@ -67,7 +84,9 @@ impl State {
         };
         let in_a_row_kw =
             kawagoe_limit_kw(WallOpening { area_m2: in_a_row_m2, height_m: self.wall.height_m });
-        all_kw.min(kawagoe_limit_kw(self.outside) + by_air_kw.max(in_a_row_kw))
+        let limit_kw = all_kw.min(kawagoe_limit_kw(self.outside) + by_air_kw.max(in_a_row_kw));
+        let cut_off = self.outside.area_m2 <= 0.0 && self.behind_outside_m2 <= 0.0;
+        (limit_kw, cut_off.then_some(heat_kj))
     }
 }
 
@@ -75,7 +94,7 @@ impl State {
 #[derive(Debug, Clone, Copy, PartialEq)]
 pub(super) struct Stand {
     pub scenario: Scenario,
-    /// Stands open whatever was recorded.
+    /// Stands open whatever was recorded, and with it every door from the room behind it to outside.
     pub opened: Option<usize>,
     /// Doors that shut themselves are shut.
     pub self_closed: bool,
@@ -152,7 +171,8 @@ impl Stand {
             (outside, inner) = (Wall::default(), Wall::default());
             inner_rooms.clear();
         }
-        let (behind_m3, behind_outside_m2) = air_behind(plan, room, &inner_rooms);
+        let way = self.opened.map_or_else(Vec::new, |door| way_to_outside(plan, room, door));
+        let (behind_m3, behind_outside_m2) = air_behind(plan, room, &inner_rooms, &way);
         State {
             wall: combine([outside.opening(), inner.opening()]),
             outside: outside.opening(),
@@ -209,29 +229,67 @@ impl Wall {
     }
 }
 
+/// Doors from the room behind a door to outside, by the fewest: those that somebody who fled has opened.
+/// None where no doors lead out.
+fn way_to_outside(plan: &Plan<'_>, origin: usize, door: usize) -> Vec<usize> {
+    let Some(behind) = plan.openings[door].behind(origin) else { return Vec::new() };
+    // For each room reached, the door and the room it was reached from.
+    let mut reached_by: Vec<Option<(usize, usize)>> = vec![None; plan.rooms.len()];
+    reached_by[behind] = Some((door, origin));
+    let mut waiting = VecDeque::from([behind]);
+    while let Some(room) = waiting.pop_front() {
+        for &number in plan.of_room[room].iter().filter(|&&number| plan.openings[number].is_door()) {
+            match plan.openings[number].behind(room) {
+                None => {
+                    let mut way = vec![number];
+                    let mut at = room;
+                    while let Some((through, from)) = reached_by[at].filter(|&(_, from)| from != origin) {
+                        way.push(through);
+                        at = from;
+                    }
+                    return way;
+                }
+                Some(next) => {
+                    if next != origin && reached_by[next].is_none() {
+                        reached_by[next] = Some((number, room));
+                        waiting.push_back(next);
+                    }
+                }
+            }
+        }
+    }
+    Vec::new()
+}
+
 /// Air of the rooms reached through open doors without passing the room of origin, m³, and the open area
-/// that joins them to outside, m². Other rooms' openings stand as recorded.
-fn air_behind(plan: &Plan<'_>, origin: usize, first: &[usize]) -> (f64, f64) {
+/// that joins them to outside, m². Other rooms' openings stand as recorded, but for the doors of the way out.
+fn air_behind(plan: &Plan<'_>, origin: usize, first: &[usize], way: &[usize]) -> (f64, f64) {
     if first.is_empty() {
         return (0.0, 0.0);
     }
-    let mut reached: HashSet<usize> = first.iter().copied().collect();
-    reached.insert(origin);
-    let mut waiting: Vec<usize> = reached.iter().copied().filter(|&room| room != origin).collect();
+    let mut reached = vec![false; plan.rooms.len()];
+    reached[origin] = true;
+    let mut waiting = Vec::with_capacity(first.len());
+    for &room in first {
+        if !std::mem::replace(&mut reached[room], true) {
+            waiting.push(room);
+        }
+    }
     let mut inside = Vec::new();
     let mut outside_m2 = Vec::new();
     while let Some(room) = waiting.pop() {
         inside.push(plan.rooms[room].geometry.volume_m3);
         for &number in &plan.of_room[room] {
             let hole = &plan.openings[number];
-            let open_m2 = hole.open_fraction * hole.area_m2();
+            let share = if way.contains(&number) { 1.0 } else { hole.open_fraction };
+            let open_m2 = share * hole.area_m2();
             if open_m2 <= 0.0 {
                 continue;
             }
             match hole.behind(room) {
                 None => outside_m2.push(open_m2),
                 Some(next) => {
-                    if reached.insert(next) {
+                    if !std::mem::replace(&mut reached[next], true) {
                         waiting.push(next);
                     }
                 }

@@ -6,7 +6,7 @@ use super::inputs::Inputs;
 use super::judge::FireClock;
 use super::methods::figure;
 use super::openings::Stand;
-use super::scenarios::{Cap, Screened, governing, screen_all, screen_stand};
+use super::scenarios::{Cap, Screened, governing, screen_all, screen_stand, window_fails};
 use crate::domain::assumptions::Scenario;
 use crate::domain::building::{Coverage, SprinklerState};
 use crate::fire::sprinkler::{Spray, evans_kw, evans_limits};
@@ -29,7 +29,14 @@ pub(super) fn sprinkler_cap(inputs: &Inputs<'_>) -> Option<Cap> {
             Some(fire.heat_release_kw(at_s))
         })
         .max_by(f64::total_cmp)
-        .map(|heat_release_kw| Cap { heat_release_kw })
+        .map(|heat_release_kw| Cap { heat_release_kw, fades_in_s: fades_in_s(head.density_mm_s) })
+}
+
+/// Time in which the heat release falls by e under a spray: `3 w^-1.85`, from [`evans_kw`] itself.
+fn fades_in_s(density_mm_s: f64) -> f64 {
+    let after_a_second = evans_kw(Spray { heat_release_kw: 1.0, since_activation_s: 1.0, density_mm_s });
+    // Hardly any water hardly fades the fire: an hour is as good as never.
+    (-1.0 / after_a_second.ln()).clamp(1.0, 3600.0)
 }
 
 /// What flashover findings say, reduced to what protection compares.
@@ -158,13 +165,14 @@ fn self_closer(
     // The credit is that the door is shut when the fire is on: neither left as recorded nor opened by who fled.
     let stand = Stand { self_closed: true, ..Stand::as_recorded(Scenario::AsFound) };
     let shut = screen_stand(inputs, stand, Cap::NONE, uncredited);
-    let kept = uncredited.iter().filter(|found| {
-        !matches!(found.scenario, Scenario::AsFound | Scenario::DoorOpen | Scenario::ShutLate)
-    });
-    let with: Vec<Screened> = std::iter::once(shut).chain(kept.cloned()).collect();
-    let with = Outcome::of(&with, large);
+    let asked = |scenario| uncredited.iter().any(|found| found.scenario == scenario);
+    let failed = asked(Scenario::WindowFails).then(|| window_fails(inputs, &shut, Cap::NONE));
+    let with: Vec<Screened> = std::iter::once(shut).chain(failed).collect();
     let acts_at_s =
         if held_open { clock.finding.detection_s } else { Band { low: 0.0, typical: 0.0, high: 0.0 } };
+    // A door that is released after flashover changes nothing of it.
+    let too_late = without.time_s.is_some_and(|time_s| time_s <= acts_at_s.typical);
+    let with = Outcome::of(if too_late { uncredited } else { &with }, large);
     Some(ProtectionFinding {
         kind: "self_closer",
         credited: false,

@@ -59,7 +59,7 @@ pub(super) fn assess(inputs: &Inputs<'_>, common: &Common<'_>, account: Account)
     }
     let governing = place.map(|place| &screened[place]);
     let assessed = flashover.rating != FlashoverRating::NotAssessed;
-    let flame_out_s = starved.iter().find(|one| one.starved).map(|one| (one.scenario, one.flame_out_s));
+    let flame_out_s = starved.iter().find(|one| one.dies()).map(|one| (one.scenario, one.flame_out_s));
     let course =
         Course { clock: &clock, smoke: &smoke, governing: governing.filter(|_| assessed), flame_out_s, cap };
     let timeline = timeline(inputs, &course);

@@ -55,17 +55,28 @@ impl Screened {
     }
 }
 
-/// A cap on the fire, where something that may be relied upon holds it down.
+/// A cap on the fire, where a sprinkler that may be relied upon holds it down.
 #[derive(Debug, Clone, Copy, PartialEq)]
 pub(super) struct Cap {
+    /// Heat release when the head opens: the fire grows no further.
     pub heat_release_kw: f64,
+    /// In which the fire then falls by e, by the correlation of Evans, s.
+    pub fades_in_s: f64,
 }
 
 impl Cap {
-    pub const NONE: Self = Self { heat_release_kw: f64::INFINITY };
+    pub const NONE: Self = Self { heat_release_kw: f64::INFINITY, fades_in_s: f64::INFINITY };
 
+    /// The fire under water: it grows to the cap and then releases as much heat as the exponential of Evans does,
+    /// in a straight line.
     pub fn on(self, fire: DesignFire) -> DesignFire {
-        fire.capped_kw(self.heat_release_kw)
+        let kw = self.heat_release_kw;
+        if !kw.is_finite() || kw >= fire.reached_kw() {
+            return fire;
+        }
+        let grown_kj = kw * (kw / fire.growth_kw_s2.max(f64::MIN_POSITIVE)).sqrt() / 3.0;
+        let energy_kj = (grown_kj + kw * self.fades_in_s).min(fire.energy_kj);
+        DesignFire { peak_kw: kw, energy_kj, decay_from_share: (grown_kj / energy_kj).min(1.0), ..fire }
     }
 }
 
@@ -95,8 +106,11 @@ pub(super) fn screen_all(inputs: &Inputs<'_>, asked: Option<&[Scenario]>, cap: C
     if wanted(Scenario::ShutLate) {
         let stand = Stand { scenario: Scenario::ShutLate, ..open_door };
         let mut late = screen_stand(inputs, stand, cap, &screened);
-        late.reason =
-            Some(reason("until_shut", "open until the door is shut at 400 °C or 60 s after flashover"));
+        late.reason = Some(if late.state.is_open() {
+            reason("until_shut", "open until the door is shut at 400 °C or 60 s after flashover")
+        } else {
+            reason("never_open", "nothing stands open that could be shut late: as shut")
+        });
         screened.push(late);
     }
     screened.extend(glass);
@@ -120,7 +134,7 @@ fn screen_state(inputs: &Inputs<'_>, stand: Stand, state: State, cap: Cap) -> Sc
     let typical = judge(inputs, &state, typical_fire, &surfaces);
     // A flame that died of lack of oxygen while the fire still grew would have died so with more fuel too.
     let growing_when_out =
-        typical.burn.is_some_and(|b| b.starved && b.state.time_s <= typical_fire.phases().growth_end_s);
+        typical.burn().is_some_and(|b| b.starved && b.state.time_s <= typical_fire.phases().growth_end_s);
     let p95 = if growing_when_out { typical } else { judge(inputs, &state, p95_fire, &surfaces) };
     let only_above = !state.is_open() && state.horizontal_m2 > 0.001 * inputs.geometry.volume_m3;
     let (rating, reason) = if only_above {
@@ -130,23 +144,18 @@ fn screen_state(inputs: &Inputs<'_>, stand: Stand, state: State, cap: Cap) -> Sc
         (rules::flashover(typical.to_highest, p95.to_lowest), None)
     };
     let share = spread_of_linings(inputs);
-    let moments = [
-        moments(
-            inputs,
-            &state,
-            cap.on(contents.worst_fire()),
-            &taking_heat(surfaces, share.low),
-            CORNER.high,
-        ),
-        moments(inputs, &state, typical_fire, &surfaces, CORNER.typical),
-        moments(
-            inputs,
-            &state,
-            cap.on(contents.mildest_fire()),
-            &taking_heat(surfaces, share.high),
-            CORNER.low,
-        ),
-    ];
+    // A shut room that stays far from 600 °C stays below it at the corners too, and is spared the work.
+    let moments = if state.is_open() || typical.to_highest >= rules::NOT_INDICATED_RATIO {
+        let worst = (cap.on(contents.worst_fire()), taking_heat(surfaces, share.low));
+        let mildest = (cap.on(contents.mildest_fire()), taking_heat(surfaces, share.high));
+        [
+            moments(inputs, &state, worst.0, &worst.1, CORNER.high),
+            moments(inputs, &state, typical_fire, &surfaces, CORNER.typical),
+            moments(inputs, &state, mildest.0, &mildest.1, CORNER.low),
+        ]
+    } else {
+        [Moments::default(); 3]
+    };
     Screened {
         scenario: stand.scenario,
         stand,
@@ -180,11 +189,11 @@ pub(super) fn spread_of_leaks(inputs: &Inputs<'_>) -> Band {
 
 /// Gas temperature that a scenario reaches with typical inputs, K.
 pub(super) fn hottest_k(inputs: &Inputs<'_>, screened: &Screened, surfaces: &[Surface; 3], cap: Cap) -> f64 {
-    if let Some(burn) = screened.typical.burn {
+    if let Some(burn) = screened.typical.burn() {
         return burn.state.peak_temperature_k;
     }
     let fire = cap.on(inputs.contents.typical_fire());
-    let phases = fire.capped_kw(screened.typical.available_kw).phases();
+    let phases = screened.state.admits(fire).phases();
     let rise_k = mccaffrey_rise_k(Vented {
         heat_release_kw: screened.typical.available_kw,
         opening: screened.state.wall,
@@ -194,7 +203,7 @@ pub(super) fn hottest_k(inputs: &Inputs<'_>, screened: &Screened, surfaces: &[Su
 }
 
 /// The room once its glass has fallen, where the fire found gets hot enough for that.
-fn window_fails(inputs: &Inputs<'_>, as_found: &Screened, cap: Cap) -> Screened {
+pub(super) fn window_fails(inputs: &Inputs<'_>, as_found: &Screened, cap: Cap) -> Screened {
     let surfaces = inputs.lined.around(as_found.state.wall.area_m2);
     let gas_k = hottest_k(inputs, as_found, &surfaces, cap);
     let falling = inputs.plan.of_room[inputs.number]
@@ -202,8 +211,11 @@ fn window_fails(inputs: &Inputs<'_>, as_found: &Screened, cap: Cap) -> Screened 
         .filter_map(|&number| fallout(inputs.plan, number))
         .filter(|fallout| fallout.low_k <= gas_k)
         .min_by(|a, b| a.typical_k.total_cmp(&b.typical_k));
-    let stand =
-        Stand { glass_fallen_at_k: falling.map(|_| gas_k), ..Stand::as_recorded(Scenario::WindowFails) };
+    let stand = Stand {
+        scenario: Scenario::WindowFails,
+        glass_fallen_at_k: falling.map(|_| gas_k),
+        ..as_found.stand
+    };
     let mut failed = screen_stand(inputs, stand, cap, std::slice::from_ref(as_found));
     match falling {
         None => failed.reason = Some(reason("glass_holds", "no glass falls by its criterion: as found")),
@@ -232,11 +244,11 @@ fn glass_falls_s(
     let fire = cap.on(inputs.contents.typical_fire());
     let clock = super::judge::FireClock::of(&fire);
     // In a shut room the gas is hottest about when the flame dies.
-    if let Some(burn) = as_found.typical.burn {
+    if let Some(burn) = as_found.typical.burn() {
         return clock.at_s(burn.state.time_s);
     }
     let growing = GrowingVented {
-        fire: fire.capped_kw(as_found.state.air_limit_kw(fire.growth_kw_s2)),
+        fire: as_found.state.admits(fire),
         opening: as_found.state.wall,
         surfaces,
         position_factor: CORNER.typical,

@@ -128,7 +128,7 @@ impl Leaving<'_, '_> {
             return None;
         }
         let (mut from_s, mut to_s) = (begins_s, end_s);
-        for _ in 0..24 {
+        for _ in 0..16 {
             let middle_s = 0.5 * (from_s + to_s);
             if volume_m3(middle_s) < self.to_fill_m3 { from_s = middle_s } else { to_s = middle_s }
         }

@@ -1,6 +1,5 @@
 //! Small buildings made by hand, for tests.
 
-use crate::domain::assumptions::Assumptions;
 use crate::domain::opening::{Opening, OpeningKind, Space};
 use crate::domain::properties::MaterialProperties;
 use crate::domain::quantity::{Kind, Quantity};
@@ -121,8 +120,4 @@ pub(super) fn board(share: f64) -> Linings {
         })
     };
     Linings { walls: lining(), ceiling: lining(), floor: lining() }
-}
-
-pub(super) fn defaults() -> Assumptions {
-    Assumptions::default()
 }

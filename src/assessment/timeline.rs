@@ -134,10 +134,10 @@ impl List {
                 }
             }
         }
-        if found.typical.burn.is_some() {
+        if found.typical.excess.is_some() {
             return;
         }
-        let fire = cap.on(inputs.contents.typical_fire()).capped_kw(found.typical.available_kw);
+        let fire = found.state.admits(cap.on(inputs.contents.typical_fire()));
         let (clock, phases) = (FireClock::of(&fire), fire.phases());
         if phases.reached_kw > 0.0 && phases.reached_kw.is_finite() {
             self.push(MilestoneKind::Decay, exactly(clock.at_s(phases.decay_start_s)), scenario, None);

@@ -40,12 +40,6 @@ impl<K: Kind> Quantity<K> {
         let value = units::read(text, K::UNIT).map_err(Fault::Unreadable)?;
         Self::new(value).ok_or(Fault::OutOfRange(value))
     }
-
-    /// The limits in words, with the reason for them.
-    pub fn limits() -> String {
-        let (min, max, because) = (K::MIN, K::MAX, K::LIMITS_BECAUSE);
-        format!("must lie between {min} and {max}{} ({because})", Spaced(K::UNIT))
-    }
 }
 
 /// The number and its unit, shortest form that reads back as the same quantity.
@@ -138,4 +132,42 @@ kinds! {
     Longitude = LongitudeKind, "deg", -180.0..=180.0, "the globe";
     /// A latitude.
     Latitude = LatitudeKind, "deg", -90.0..=90.0, "the globe";
+}
+
+#[cfg(test)]
+mod tests {
+    use super::*;
+
+    #[test]
+    fn both_ends_of_the_limits_are_lawful_and_nothing_beyond() {
+        for (value, lawful) in [
+            (0.3, true),
+            (1000.0, true),
+            (0.299_999, false),
+            (1_000.000_1, false),
+            (0.0, false),
+            (-3.0, false),
+            (1e9, false),
+            (f64::NAN, false),
+            (f64::INFINITY, false),
+            (f64::NEG_INFINITY, false),
+        ] {
+            assert_eq!(RoomLength::new(value).is_some(), lawful, "{value}");
+        }
+    }
+
+    #[test]
+    fn there_is_one_zero() {
+        let zero = Elevation::new(-0.0).unwrap();
+
+        assert!(zero.get().is_sign_positive());
+        assert_eq!(zero.to_string(), "0 m");
+    }
+
+    #[test]
+    fn a_quantity_prints_with_its_unit() {
+        assert_eq!(RoomLength::new(3.66).unwrap().to_string(), "3.66 m");
+        assert_eq!(Fraction::new(0.25).unwrap().to_string(), "0.25");
+        assert_eq!(Temperature::parse("68 F").unwrap().to_string(), "20 C");
+    }
 }

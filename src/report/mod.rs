@@ -2,7 +2,7 @@
 //!
 //! [`building_report`] writes the report of a building, [`room_report`] takes one room out of it,
 //! and [`room_report_bytes`] does the same with a report that was stored. Same findings, same
-//! bytes. [`methods_document`] tells what every method is, [`table`] prints a report for people.
+//! bytes. [`methods_document`] tells what every method is, [`table()`] prints a report for people.
 
 pub mod backdraft;
 pub mod building;

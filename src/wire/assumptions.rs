@@ -1,8 +1,9 @@
 //! The form of the assumptions of an assessment.
 
 use super::list::{List, Words};
+use super::number::{Bare, Whole};
 use super::object::{Maybe, default_of, doc_of, name_of, object};
-use super::scalar::{Bare, OneWord, Whole};
+use super::scalar::OneWord;
 use crate::domain::Key;
 use crate::domain::assumptions::{Ambient, Assumptions, GrowthClass, Level, Scenario};
 use crate::domain::building::Response;

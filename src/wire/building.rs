@@ -6,10 +6,12 @@ use utoipa::openapi::schema::Object;
 use super::form::{Components, Way};
 use super::json::Json;
 use super::list::{List, Pair};
+use super::number::Whole;
 use super::object::{self, Maybe, default_of, doc_of, name_of, object, parts};
 use super::reader::Reader;
 use super::room::FloorNumber;
-use super::scalar::{CodeLetters, OneWord, Prose, Text, Whole};
+use super::scalar::OneWord;
+use super::text::{CodeLetters, Prose, Text};
 use crate::domain::building::{
     Address, Boundary, Building, ConstructionType, Contact, Coverage, FloorLevel, Location, MAX_OPENINGS,
     MAX_ROOMS, Occupants, Preplan, Response, SprinklerState, Sprinklers,

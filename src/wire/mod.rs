@@ -12,6 +12,7 @@ mod input;
 pub mod json;
 mod list;
 mod named;
+mod number;
 mod object;
 mod opening;
 mod output;
@@ -21,6 +22,7 @@ mod reader;
 mod room;
 mod scalar;
 pub mod stored;
+mod text;
 
 pub use input::{
     Assess, AssessInput, AssessmentRequest, AssumptionsInput, BuildingInput, Input, OpeningInput, Part,

@@ -8,9 +8,10 @@ use utoipa::openapi::{ObjectBuilder, RefOr};
 
 use super::form::{Components, Form, Way};
 use super::json::Json;
+use super::number::{Measure, write_number};
 use super::object::{Maybe, default_of, doc_of, either, name_of, object};
 use super::reader::Reader;
-use super::scalar::{Measure, OneWord, write_number};
+use super::scalar::OneWord;
 use crate::catalogue::Kind;
 use crate::domain::properties::{
     DetectorKind, DetectorProperties, ExposedGrowth, FuelProperties, IgnitionEase, ItemProperties,

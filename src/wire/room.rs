@@ -10,9 +10,11 @@ use super::form::{Components, Form, Way};
 use super::json::Json;
 use super::list::{List, Words};
 use super::named::NameOr;
+use super::number::Whole;
 use super::object::{self, Maybe, default_of, doc_of, name_of, object, parts};
 use super::reader::Reader;
-use super::scalar::{OneWord, Text, Whole};
+use super::scalar::OneWord;
+use super::text::Text;
 use crate::domain::check::RoomOutline;
 use crate::domain::properties::{
     DetectorProperties, ItemProperties, LeakageProperties, MaterialProperties, SprinklerProperties,

@@ -3,5 +3,6 @@
 #![expect(clippy::unwrap_used, reason = "a test may stop at what it cannot do")]
 
 mod commands;
+mod golden;
 mod readme;
 mod server;

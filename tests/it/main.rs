@@ -1,5 +1,8 @@
 //! The service over HTTP, one file per resource.
 
+// The example of a whole building is one `json!`.
+#![recursion_limit = "256"]
+
 mod assessments;
 mod bad_input;
 mod buildings;
@@ -10,5 +13,7 @@ mod fixtures;
 mod openapi;
 mod operations;
 mod parts;
+mod reading;
+mod reports;
 mod support;
 mod surface;

@@ -83,11 +83,68 @@ proptest! {
         }
     }
 
+    /// A building that is put together elsewhere is held to the same rules as one that is read.
+    #[test]
+    fn the_reader_finds_what_the_domain_finds(
+        mut building in arbitrary::building(),
+        at in any::<prop::sample::Index>(),
+        what in 0_u8..7,
+    ) {
+        spoil(&mut building, at, what);
+        let pairs = |faults: Vec<crate::domain::Invalid>| {
+            let mut pairs: Vec<_> =
+                faults.into_iter().map(|fault| (fault.pointer.to_string(), fault.code, fault.detail)).collect();
+            pairs.sort();
+            pairs
+        };
+
+        let found = pairs(check::faults(&building));
+        let answer = serde_json::to_value(wire::Building::of(&building, &meta())).unwrap();
+        let told = match wire::read_value::<BuildingInput>(&answer, Catalogue::embedded()) {
+            Ok(_) => Vec::new(),
+            Err(wire::Refused::Invalid(faults)) => pairs(faults),
+            Err(wire::Refused::Unreadable(fault)) => panic!("a value is always readable: {fault:?}"),
+        };
+
+        prop_assert_eq!(told, found);
+    }
+
     /// Nor does anything panic on bytes that are no body at all.
     #[test]
     fn any_bytes_are_read_or_refused(bytes in proptest::collection::vec(any::<u8>(), 0..200)) {
         let refused = wire::read::<BuildingInput>(&bytes, Catalogue::embedded());
         prop_assert!(refused.is_err());
+    }
+}
+
+/// Breaks one rule, where there is something to break and the room is not too large for it.
+fn spoil(building: &mut crate::domain::Building, at: prop::sample::Index, what: u8) {
+    use crate::domain::{Quantity, check};
+
+    let rooms = building.rooms.len();
+    if rooms == 0 {
+        return;
+    }
+    let twin = building.rooms[at.index(rooms)].clone();
+    let room = &mut building.rooms[at.index(rooms)];
+    match what {
+        0 => room.height_m = Quantity::new(0.5).unwrap(),
+        1 => building.rooms.push(twin),
+        2 => room.ceiling.high_m = Quantity::new(1.0),
+        3 => _ = building.rooms.remove(at.index(rooms)),
+        _ if building.openings.is_empty() => {}
+        _ => {
+            let openings = building.openings.len();
+            let opening = &mut building.openings[at.index(openings)];
+            match what {
+                4 => opening.width_m = Quantity::new(100.0).unwrap(),
+                5 => opening.height_m = Quantity::new(50.0).unwrap(),
+                _ => {
+                    opening.connects[1] = opening.connects[0].clone();
+                    assert!(!check::faults(building).is_empty());
+                }
+            }
+        }
     }
 }
 

@@ -269,12 +269,3 @@ fn each_problem_has_a_page_and_a_status_of_its_kind() {
     }
     assert_eq!(names.len(), 17);
 }
-
-/// Writes the components for validators of others; not a test of its own.
-#[test]
-#[ignore = "writes a file"]
-fn dump() {
-    std::fs::write("/tmp/wire-components.json", serde_json::to_string_pretty(&components()).unwrap())
-        .unwrap();
-    std::fs::write("/tmp/wire-example.json", serde_json::to_string_pretty(&example()).unwrap()).unwrap();
-}

@@ -1,0 +1,69 @@
+//! No result of the demo district moves without a new engine version.
+//!
+//! This pins what the engine says, not whether it is right: the tests beside the formulas and
+//! `tests/reference` do that. Words may change freely; ratings and figures may not.
+
+use std::fmt::Write as _;
+use std::fs;
+
+use serde_json::Value;
+use sha2::{Digest, Sha256};
+
+use crate::server::sootline;
+
+const BUILDINGS: &str = concat!(env!("CARGO_MANIFEST_DIR"), "/seed-data/demo/buildings");
+const KEPT: &str = concat!(env!("CARGO_MANIFEST_DIR"), "/tests/binary/golden.txt");
+const RENEW: &str = "SOOTLINE_RENEW";
+
+/// What must not move: the ratings, and every number behind them.
+const PINNED: &[&str] = &[
+    "/flashover/rating",
+    "/flashover/time_s",
+    "/flashover/time_to_600_c_s",
+    "/flashover/time_to_20_kw_m2_s",
+    "/flashover/required_heat_release_kw",
+    "/flashover/available_heat_release_kw",
+    "/flashover/scenario",
+    "/flashover/before_water",
+    "/flashover/provisional",
+    "/flashover/holds_while",
+    "/flashover/figures",
+    "/backdraft/rating",
+    "/backdraft/scenario",
+    "/backdraft/figures",
+    "/entry/rating",
+];
+
+#[test]
+fn results_of_the_district_move_only_with_the_engine_version() {
+    let mut files: Vec<_> = fs::read_dir(BUILDINGS).unwrap().map(|entry| entry.unwrap().path()).collect();
+    files.sort();
+    let mut hash = Sha256::new();
+    let mut engine = String::new();
+    for file in &files {
+        let out = sootline().args(["assess", "--json"]).arg(file).output().unwrap();
+        assert!(out.status.success(), "{}: {}", file.display(), String::from_utf8_lossy(&out.stderr));
+        let report: Value = serde_json::from_slice(&out.stdout).unwrap();
+        engine = report["engine_version"].as_str().unwrap().to_owned();
+        for room in report["rooms"].as_array().unwrap() {
+            hash.update(room["key"].to_string());
+            for pointer in PINNED {
+                hash.update(room.pointer(pointer).unwrap_or_else(|| panic!("no {pointer}")).to_string());
+            }
+        }
+    }
+    let mut now = format!("engine {engine}\ndigest ");
+    for byte in hash.finalize() {
+        write!(now, "{byte:02x}").unwrap();
+    }
+    now.push('\n');
+
+    if std::env::var_os(RENEW).is_some() {
+        fs::write(KEPT, &now).unwrap();
+    }
+    let kept = fs::read_to_string(KEPT).unwrap_or_default();
+    assert_eq!(
+        now, kept,
+        "results moved: raise ENGINE_VERSION if they were meant to, then run this test with {RENEW}=1"
+    );
+}
