@@ -89,6 +89,8 @@ pub async fn create_assessment(
 }
 
 /// List the assessments of a building, newest first.
+///
+/// Each says whether it is stale: whether the building has changed since.
 #[utoipa::path(
     get,
     path = "/v1/buildings/{id}/assessments",
@@ -121,7 +123,9 @@ fn cursor_of(text: &str) -> Option<AssessmentCursor> {
     Some(AssessmentCursor { created_at: Timestamp(at.parse().ok()?), id: AssessmentId::parse(id)? })
 }
 
-/// Read the latest assessment of a building, of whatever revision.
+/// Read the latest assessment of a building.
+///
+/// Of whatever revision: `building_revision` in the report tells.
 #[utoipa::path(
     get,
     path = "/v1/buildings/{id}/assessments/latest",
@@ -147,6 +151,8 @@ pub async fn get_latest_assessment(
 }
 
 /// Read an assessment.
+///
+/// The bytes that were served when it was made, whatever the engine has become since.
 #[utoipa::path(
     get,
     path = "/v1/assessments/{id}",
@@ -171,6 +177,8 @@ pub async fn get_assessment(
 }
 
 /// Read the report of one room.
+///
+/// Taken out of the stored assessment, complete in itself.
 #[utoipa::path(
     get,
     path = "/v1/assessments/{id}/rooms/{room}",

@@ -93,6 +93,8 @@ pub async fn create_building(
 }
 
 /// Read a building, whole.
+///
+/// With its rooms and openings. Its ETag is its revision, which every change raises.
 #[utoipa::path(
     get,
     path = "/v1/buildings/{id}",

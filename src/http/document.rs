@@ -83,7 +83,22 @@ fn write() -> OpenApi {
             }
         }
     }
+    prune(&mut document);
     document
+}
+
+/// Takes out schemas that nothing refers to: those of generic pages are written in place, and
+/// their parts are left over.
+fn prune(document: &mut OpenApi) {
+    loop {
+        let text = document.to_json().expect("the document is made of strings and numbers");
+        let Some(components) = &mut document.components else { return };
+        let before = components.schemas.len();
+        components.schemas.retain(|name, _| text.contains(&format!("\"#/components/schemas/{name}\"")));
+        if components.schemas.len() == before {
+            return;
+        }
+    }
 }
 
 fn operations_of(item: &mut PathItem) -> impl Iterator<Item = (Method, &mut Operation)> {

@@ -20,6 +20,8 @@ use crate::store::{Missing, Part, SavedBuilding, StoreError};
 use crate::wire::{Opening, OpeningInput};
 
 /// Read an opening.
+///
+/// Its ETag is the revision of the building in which this opening last changed.
 #[utoipa::path(
     get,
     path = "/v1/buildings/{id}/openings/{opening}",
@@ -118,6 +120,8 @@ pub async fn patch_opening(
 }
 
 /// Delete an opening.
+///
+/// The rooms that it joined stay; a room left without any way in is assessed shut.
 #[utoipa::path(
     delete,
     path = "/v1/buildings/{id}/openings/{opening}",

@@ -21,6 +21,8 @@ use crate::store::{Missing, Part, SavedBuilding, StoreError};
 use crate::wire::{Room, RoomInput};
 
 /// Read a room.
+///
+/// Its ETag is the revision of the building in which this room last changed.
 #[utoipa::path(
     get,
     path = "/v1/buildings/{id}/rooms/{room}",

@@ -72,6 +72,22 @@ const FULL: &str = r#"{
         "boundaries": []
     }"#;
 
+/// A report without what differs from one assessment to the next: ids and addresses.
+pub fn findings(mut report: Value) -> Value {
+    fn strip(value: &mut Value) {
+        match value {
+            Value::Array(items) => items.iter_mut().for_each(strip),
+            Value::Object(members) => {
+                members.retain(|name, _| !matches!(name.as_str(), "links" | "assessment_id" | "building_id" | "building_revision"));
+                members.values_mut().for_each(strip);
+            }
+            _ => {}
+        }
+    }
+    strip(&mut report);
+    report
+}
+
 /// Sets the member at a JSON Pointer; the last name may be new, `-` appends.
 #[track_caller]
 pub fn set(mut document: Value, pointer: &str, value: Value) -> Value {

@@ -150,9 +150,11 @@ async fn every_operation_refuses_bad_requests_with_a_problem() {
     let app = TestApp::new().await;
     let deep = "[".repeat(1000);
 
-    for row in rows(&app).await {
+    for mut row in rows(&app).await {
         let id = row.id;
         if row.method == Method::DELETE {
+            // Nothing was put here, so what is there already is not deleted.
+            row.path = row.path.replace("rooms/attic", "rooms/store").replace("openings/w", "openings/d");
             row.send_with(&app, "?x=1", &[], None).await.problem(400, "invalid-parameter");
             row.send_with(&app, "", &[("Accept", "image/png")], None).await.problem(406, "not-acceptable");
             continue;
