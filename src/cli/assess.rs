@@ -19,14 +19,7 @@ pub fn run(flags: &Assess) -> Result<(), Failure> {
     let findings =
         assessment::assess(&building, Catalogue::embedded(), &assumptions, &mut || ControlFlow::Continue(()))
             .map_err(|_| "the computation was stopped")?;
-    let head = report::Head {
-        building: &building,
-        assumptions: &assumptions,
-        assessment_id: None,
-        building_id: None,
-        building_revision: None,
-        created_at: None,
-    };
+    let head = report::Head::unsaved(&building, &assumptions);
     let report = report::building_report(&findings, &head);
     if flags.json {
         println!("{}", serde_json::to_string_pretty(&report)?);
