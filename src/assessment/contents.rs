@@ -114,8 +114,17 @@ impl Contents {
         let found = find(&room.room_use, |key| catalogue.use_of(key))
             .ok_or_else(|| format!("use {:?}", room.room_use))?;
         let use_of = found.properties;
-        let fuel: Option<&FuelProperties> =
-            find(&use_of.fuel, |key| catalogue.fuel(key)).map(|found| found.properties);
+        let fuel = find(&use_of.fuel, |key| catalogue.fuel(key));
+        if let Some(found) = &fuel {
+            let FuelProperties { heat_of_combustion_mj_kg, radiative_fraction, .. } = *found.properties;
+            account.row("use.fuel.radiative_fraction", radiative_fraction, found, "radiative_fraction");
+            account.row(
+                "use.fuel.heat_of_combustion_mj_kg",
+                heat_of_combustion_mj_kg,
+                found,
+                "heat_of_combustion_mj_kg",
+            );
+        }
         let load = load_of(room, &found, assumptions, account);
         account.row(
             "use.heat_release_per_area_kw_m2",
@@ -131,7 +140,7 @@ impl Contents {
         };
         let origin = origin_of(&packages, assumptions);
         let growth = growth_of(room, &found, &packages, pile.as_ref(), origin, lined, assumptions, account);
-        let radiative_share = fuel.map_or(RADIATIVE_SHARE, |fuel| fuel.radiative_fraction);
+        let radiative_share = fuel.map_or(RADIATIVE_SHARE, |fuel| fuel.properties.radiative_fraction);
 
         let takes_fire =
             origin.map_or_else(Vec::new, |origin| spread_from(&packages, origin, radiative_share));
@@ -149,7 +158,8 @@ impl Contents {
             heat_release_per_area_kw_m2: use_of.heat_release_per_area_kw_m2,
             floor_area_m2: geometry.floor_area_m2,
             radiative_share,
-            heat_of_combustion_kj_kg: fuel.map_or(CONTENTS_KJ_KG, |fuel| fuel.heat_of_combustion_mj_kg * 1e3),
+            heat_of_combustion_kj_kg: fuel
+                .map_or(CONTENTS_KJ_KG, |fuel| fuel.properties.heat_of_combustion_mj_kg * 1e3),
             packages,
             pile,
             origin,

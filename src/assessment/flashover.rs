@@ -7,15 +7,16 @@ use super::findings::{
     Figure, FlashoverFinding, FlashoverRating, GrowthFinding, LimitedBy, Reason, ScenarioFinding,
 };
 use super::inputs::Inputs;
-use super::judge::{CORNER, Judged, Limit, enclosure, judge, moments};
+use super::judge::{CORNER, Judged, Limit, Required, enclosure, judge, moments, reached_by};
 use super::methods::figure;
 use super::scenarios::{Cap, Screened, governing, spread_of_leaks, spread_of_linings};
 use super::{contents, hazards, holds_while, large_spaces, not_covered, rules};
 use crate::domain::assumptions::GrowthClass;
 use crate::fire::constants::{ICE_POINT_K, air_density_kg_m3};
-use crate::fire::linings::conductance_limits;
+use crate::fire::hot_layer::{Vented, mccaffrey_limits, mccaffrey_rise_k};
+use crate::fire::linings::{conductance_limits, total_conductance_kw_k};
 use crate::fire::oxygen::{self, burn_shut_limits};
-use crate::fire::screen::{ScreenInput, flashover_screen};
+use crate::fire::ventilation::{kawagoe_limit_kw, kawagoe_limits};
 use crate::fire::{Exceeded, growth};
 
 /// The finding, and which of the scenarios governs.
@@ -276,47 +277,45 @@ fn figures(inputs: &Inputs<'_>, found: &Screened, cap: Cap) -> Vec<Figure> {
         ));
         return figures;
     }
-    let air_kw = found.state.air_limit_kw(fire.growth_kw_s2);
-    let input = ScreenInput {
-        enclosure: enclosure(&found.state, &surfaces),
-        surfaces: &surfaces,
-        fire: found.state.admits(fire),
-        position_factor: CORNER.typical,
-        ambient_temperature_k: inputs.ambient_k,
-    };
-    let Ok(screen) = flashover_screen(&input) else { return figures };
-    let linings = conductance_limits(&surfaces);
-    for (method, requirement) in screen.requirements() {
-        let of_lining = method == "mccaffrey_flashover";
-        let exceeded = if of_lining { requirement.exceeded.and(linings) } else { requirement.exceeded };
-        if requirement.required_kw.is_finite() {
-            figures.push(figure(
-                method,
-                "required_heat_release_kw",
-                requirement.required_kw,
-                &exceeded,
-                of_lining && by_lining,
-                scenario,
-            ));
+    let state = &found.state;
+    let (reached_kw, hottest_s) = reached_by(&state.admits(fire), inputs.horizon.open_s);
+    let required = Required::of(enclosure(state, &surfaces), &surfaces, hottest_s);
+    for (method, (kw, exceeded), recalled) in [
+        ("babrauskas_flashover", required.babrauskas, false),
+        ("thomas_flashover", required.thomas, false),
+        ("mccaffrey_flashover", required.mccaffrey, by_lining),
+    ] {
+        if kw.is_finite() {
+            figures.push(figure(method, "required_heat_release_kw", kw, &exceeded, recalled, scenario));
         }
     }
+    let ventilation_kw = kawagoe_limit_kw(state.wall);
+    let limits = kawagoe_limits(state.wall);
     figures.push(figure(
         "kawagoe_ventilation_limit",
         "ventilation_limit_kw",
-        screen.ventilation_limit_kw,
-        &screen.ventilation_exceeded,
+        ventilation_kw,
+        &limits,
         false,
         scenario,
     ));
-    if air_kw < screen.ventilation_limit_kw {
+    let air_kw = state.air_limit_kw(fire.growth_kw_s2);
+    if air_kw < ventilation_kw {
         figures.push(figure("oxygen_budget", "air_behind_limit_kw", air_kw, &none, false, scenario));
     }
-    if screen.hot_layer_rise_k.is_finite() {
+    let vented = Vented {
+        heat_release_kw: reached_kw,
+        opening: state.wall,
+        conductance_kw_k: total_conductance_kw_k(&surfaces, hottest_s),
+    };
+    let rise_k = CORNER.typical * mccaffrey_rise_k(vented);
+    if rise_k.is_finite() {
+        let limits = mccaffrey_limits(vented, rise_k).and(conductance_limits(&surfaces));
         figures.push(figure(
             "mccaffrey_hot_layer",
             "hot_layer_rise_k",
-            screen.hot_layer_rise_k,
-            &screen.hot_layer_exceeded.and(linings),
+            rise_k,
+            &limits,
             by_fuel || by_lining,
             scenario,
         ));
@@ -349,11 +348,23 @@ pub(super) fn scenario_findings(inputs: &Inputs<'_>, screened: &[Screened]) -> V
         .collect()
 }
 
+const CLASSES: [GrowthClass; 4] =
+    [GrowthClass::Slow, GrowthClass::Medium, GrowthClass::Fast, GrowthClass::UltraFast];
+
+/// The strip of a room that is not assessed.
+pub(super) fn strip_not_assessed() -> Vec<GrowthFinding> {
+    let step = |class| GrowthFinding {
+        growth: class,
+        growth_kw_s2: contents::coefficient_kw_s2(class),
+        rating: FlashoverRating::NotAssessed,
+        time_s: None,
+        before_water: None,
+    };
+    CLASSES.map(step).to_vec()
+}
+
 /// The strip slow / medium / fast / ultra-fast in the governing scenario.
 pub(super) fn strip(inputs: &Inputs<'_>, found: &Screened, clock: &Clock, cap: Cap) -> Vec<GrowthFinding> {
-    const CLASSES: [GrowthClass; 4] =
-        [GrowthClass::Slow, GrowthClass::Medium, GrowthClass::Fast, GrowthClass::UltraFast];
-
     let contents = &inputs.contents;
     let surfaces = inputs.lined.around(found.state.wall.area_m2);
     let water_s = clock.finding.water_on_fire_s.typical;

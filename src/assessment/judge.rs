@@ -3,10 +3,11 @@
 use super::inputs::Inputs;
 use super::openings::State;
 use crate::fire::DesignFire;
+use crate::fire::Exceeded;
 use crate::fire::excess_fuel::{self, AftergasShare, ExcessFuel, ExcessInput};
 use crate::fire::flashover::{self, Enclosure, LIMIT_20_KW_M2_FLOOR, LIMIT_600_C_GAS_K};
 use crate::fire::hot_layer::{GrowingVented, Position, mccaffrey_time_to_rise_s, measured_position_factor};
-use crate::fire::linings::{Surface, total_area_m2, total_conductance_kw_k};
+use crate::fire::linings::{Surface, conductance_limits, total_area_m2, total_conductance_kw_k};
 use crate::fire::oxygen::{LimitingOxygen, ShutBurn, ShutRoom, burn_shut};
 use crate::fire::radiation::{HotLayer, layer_temperature_for_flux_k, overhead_view_factor};
 
@@ -64,7 +65,7 @@ pub(super) fn shut_room<'s>(inputs: &Inputs<'_>, leak_m2: f64, surfaces: &'s [Su
 /// Judges a fire with all the air it wants in a room that stands so.
 pub(super) fn judge(inputs: &Inputs<'_>, state: &State, fire: DesignFire, surfaces: &[Surface]) -> Judged {
     if state.is_open() {
-        judge_open(state, fire, surfaces)
+        judge_open(state, fire, surfaces, inputs.horizon.open_s)
     } else {
         judge_excess(&fire, excess_in(inputs, fire, surfaces, state.leak_m2), inputs.ambient_k)
     }
@@ -94,18 +95,30 @@ pub(super) fn aftergas(inputs: &Inputs<'_>) -> AftergasShare {
     }
 }
 
-fn judge_open(state: &State, fire: DesignFire, surfaces: &[Surface]) -> Judged {
-    let fuel_kw = fire.reached_kw();
-    let air_kw = state.air_limit_kw(fire.growth_kw_s2);
-    let phases = state.admits(fire).phases();
-    let required_kw = required_span_kw(enclosure(state, surfaces), surfaces, phases.decay_start_s);
+fn judge_open(state: &State, fire: DesignFire, surfaces: &[Surface], horizon_s: f64) -> Judged {
+    let fuel_kw = reached_by(&fire, horizon_s).0;
+    let (available_kw, hottest_s) = reached_by(&state.admits(fire), horizon_s);
+    let required = Required::of(enclosure(state, surfaces), surfaces, hottest_s);
+    let (lowest_kw, highest_kw) = required.span_kw();
     Judged {
-        available_kw: phases.reached_kw,
-        required_kw: Some(required_kw),
-        to_highest: ratio(phases.reached_kw, required_kw.1),
-        to_lowest: ratio(phases.reached_kw, required_kw.0),
-        limit: if air_kw < fuel_kw || phases.reached_kw < fuel_kw { Limit::Air } else { Limit::Fuel },
+        available_kw,
+        required_kw: Some((lowest_kw, highest_kw)),
+        to_highest: ratio(available_kw, highest_kw),
+        to_lowest: ratio(available_kw, lowest_kw),
+        limit: if available_kw < fuel_kw { Limit::Air } else { Limit::Fuel },
         excess: None,
+    }
+}
+
+/// Heat release that a fire has reached by the horizon of the fire clock, kW, and when its lining is warmest while it
+/// has it: at the end of the steady burning, or at the horizon. On the clock of the curve, s.
+pub(super) fn reached_by(fire: &DesignFire, horizon_s: f64) -> (f64, f64) {
+    let phases = fire.phases();
+    let end_s = FireClock::of(fire).on_curve_s(horizon_s);
+    if end_s < phases.growth_end_s {
+        (phases.heat_release_kw(fire.growth_kw_s2, end_s), end_s)
+    } else {
+        (phases.reached_kw, phases.decay_start_s.min(end_s))
     }
 }
 
@@ -127,18 +140,34 @@ fn ratio(available_kw: f64, required_kw: f64) -> f64 {
     if available_kw <= 0.0 || required_kw <= 0.0 { 0.0 } else { available_kw / required_kw }
 }
 
-/// Lowest and highest heat release that the correlations in range ask for; all three where none is.
-fn required_span_kw(room: Enclosure, surfaces: &[Surface], decay_start_s: f64) -> (f64, f64) {
-    let by_conductance = flashover::mccaffrey_kw(room, total_conductance_kw_k(surfaces, decay_start_s));
-    let all = [
-        (flashover::babrauskas_kw(room), flashover::babrauskas_limits(room).is_empty()),
-        (flashover::thomas_kw(room), flashover::thomas_limits(room).is_empty()),
-        (by_conductance, flashover::mccaffrey_limits(room).is_empty()),
-    ];
-    let any_in_range = all.iter().any(|(_, in_range)| *in_range);
-    all.iter()
-        .filter(|(_, in_range)| *in_range || !any_in_range)
-        .fold((f64::INFINITY, f64::NEG_INFINITY), |(low, high), (kw, _)| (low.min(*kw), high.max(*kw)))
+/// What the three correlations ask for, and what of their ranges the room exceeds.
+#[derive(Debug, Clone, Copy, PartialEq)]
+pub(super) struct Required {
+    pub babrauskas: (f64, Exceeded),
+    pub thomas: (f64, Exceeded),
+    pub mccaffrey: (f64, Exceeded),
+}
+
+impl Required {
+    /// With the conductance of the lining at a time of the fire's curve.
+    pub fn of(room: Enclosure, surfaces: &[Surface], at_s: f64) -> Self {
+        let conductance_kw_k = total_conductance_kw_k(surfaces, at_s);
+        let of_lining = flashover::mccaffrey_limits(room).and(conductance_limits(surfaces));
+        Self {
+            babrauskas: (flashover::babrauskas_kw(room), flashover::babrauskas_limits(room)),
+            thomas: (flashover::thomas_kw(room), flashover::thomas_limits(room)),
+            mccaffrey: (flashover::mccaffrey_kw(room, conductance_kw_k), of_lining),
+        }
+    }
+
+    /// Lowest and highest of those in range; of all three where none is.
+    pub fn span_kw(&self) -> (f64, f64) {
+        let all = [&self.babrauskas, &self.thomas, &self.mccaffrey];
+        let any_in_range = all.iter().any(|(_, exceeded)| exceeded.is_empty());
+        all.iter()
+            .filter(|(_, exceeded)| exceeded.is_empty() || !any_in_range)
+            .fold((f64::INFINITY, f64::NEG_INFINITY), |(low, high), (kw, _)| (low.min(*kw), high.max(*kw)))
+    }
 }
 
 /// Moments of flashover on the fire clock, s; none where they never come.
@@ -189,16 +218,19 @@ pub(super) fn moments(
         };
     }
     let fire = state.admits(fire);
-    let phases = fire.phases();
     let growing = GrowingVented { fire, opening: state.wall, surfaces, position_factor: place_factor };
-    // A search that does not settle counts as "never": the rating does not rest on it.
-    let time_to_rise_s = |rise_k: f64| mccaffrey_time_to_rise_s(&growing, rise_k).ok().flatten();
-    let required_kw = required_span_kw(enclosure(state, surfaces), surfaces, phases.decay_start_s).1;
     let clock = FireClock::of(&fire);
+    let horizon_s = inputs.horizon.open_s;
+    let on_the_clock = |curve_s: f64| Some(clock.at_s(curve_s)).filter(|&at_s| at_s <= horizon_s);
+    // A search that does not settle counts as "never": the rating does not rest on it.
+    let time_to_rise_s =
+        |rise_k: f64| mccaffrey_time_to_rise_s(&growing, rise_k).ok().flatten().and_then(on_the_clock);
+    let hottest_s = reached_by(&fire, horizon_s).1;
+    let (_, highest_kw) = Required::of(enclosure(state, surfaces), surfaces, hottest_s).span_kw();
     Moments {
-        layer_600_c_s: time_to_rise_s(LIMIT_600_C_GAS_K - inputs.ambient_k).map(|at_s| clock.at_s(at_s)),
-        floor_20_kw_m2_s: time_to_rise_s(floor_flux_rise_k(inputs, state)).map(|at_s| clock.at_s(at_s)),
-        by_heat_s: fire.time_to_kw_s(required_kw).map(|at_s| clock.at_s(at_s)),
+        layer_600_c_s: time_to_rise_s(LIMIT_600_C_GAS_K - inputs.ambient_k),
+        floor_20_kw_m2_s: time_to_rise_s(floor_flux_rise_k(inputs, state)),
+        by_heat_s: fire.time_to_kw_s(highest_kw).and_then(on_the_clock),
     }
 }
 

@@ -122,6 +122,14 @@ impl<'b> Plan<'b> {
                     Provenance::Memory,
                 );
             }
+            if opening.kind == OpeningKind::Window && opening.glazing.is_none() {
+                account.enter(
+                    format!("openings.{}.glazing", opening.key),
+                    super::findings::AssumedValue::Text("float_3_mm".into()),
+                    "this project's choice: the pane that falls first",
+                    Provenance::Estimated,
+                );
+            }
         }
     }
 }

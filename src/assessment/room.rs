@@ -68,7 +68,7 @@ pub(super) fn assess(inputs: &Inputs<'_>, common: &Common<'_>, account: Account)
     });
     let growth_strip = match governing {
         Some(found) if assessed => flashover::strip(inputs, found, &clock, cap),
-        _ => Vec::new(),
+        _ => flashover::strip_not_assessed(),
     };
     let water = water::finding(inputs);
     let entry = entry::finding(inputs);
@@ -159,7 +159,7 @@ pub(super) fn unresolved(room: &Room, key: &Key, missing: &str, common: &Common<
         backdraft: backdraft::bare(reason.clone()),
         entry: entry::bare(reason.clone()),
         scenarios: Vec::new(),
-        growth_strip: Vec::new(),
+        growth_strip: flashover::strip_not_assessed(),
         fire: FireFinding {
             item_of_origin: None,
             place: Place::Corner,

@@ -2,7 +2,7 @@
 
 use super::findings::{Band, FlashoverRating, Reason};
 use super::inputs::Inputs;
-use super::judge::{CORNER, Judged, Moments, judge, moments};
+use super::judge::{CORNER, Judged, Moments, judge, moments, reached_by};
 use super::openings::{Stand, State, fallout, way_out};
 use super::rules;
 use crate::domain::assumptions::Scenario;
@@ -192,11 +192,11 @@ pub(super) fn hottest_k(inputs: &Inputs<'_>, screened: &Screened, surfaces: &[Su
         return burn.state.peak_temperature_k;
     }
     let fire = cap.on(inputs.contents.typical_fire());
-    let phases = screened.state.admits(fire).phases();
+    let (heat_release_kw, hottest_s) = reached_by(&screened.state.admits(fire), inputs.horizon.open_s);
     let rise_k = mccaffrey_rise_k(Vented {
-        heat_release_kw: screened.typical.available_kw,
+        heat_release_kw,
         opening: screened.state.wall,
-        conductance_kw_k: total_conductance_kw_k(surfaces, phases.decay_start_s),
+        conductance_kw_k: total_conductance_kw_k(surfaces, hottest_s),
     });
     inputs.ambient_k + CORNER.typical * rise_k
 }

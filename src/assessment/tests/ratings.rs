@@ -43,6 +43,33 @@ fn every_correlation_has_its_figure_with_its_range() {
 }
 
 #[test]
+fn the_required_heat_is_the_highest_figure_in_range() {
+    for width_m in [0.3, 0.9, 1.8, 3.0] {
+        let door = opening("d", Door, ["store", "outside"], [width_m, 2.0], 1.0);
+        let found = first(&building(vec![room("store", "storage", [3.66, 3.6, 2.4])], vec![door])).flashover;
+
+        let highest = found
+            .figures
+            .iter()
+            .filter(|figure| figure.quantity == "required_heat_release_kw" && figure.in_range)
+            .map(|figure| figure.value)
+            .fold(0.0, f64::max);
+        assert_eq!(found.required_heat_release_kw, Some(highest), "{width_m}");
+    }
+}
+
+#[test]
+fn what_comes_after_the_horizon_does_not_count() {
+    let short = Assumptions { horizon_s: Some(q(60.0)), ..Assumptions::default() };
+    let found = assessed_with(&store(1.0), &short).rooms.remove(0).flashover;
+
+    // By hand: 60 s after established burning the fire has 0.04444 · (60 + √(20/0.04444))² = 293.1 kW.
+    assert!((found.available_heat_release_kw.unwrap() - 293.1).abs() < 0.5);
+    assert_eq!(found.rating, FlashoverRating::NotIndicated);
+    assert_eq!(found.time_s, None);
+}
+
+#[test]
 fn the_rating_is_the_worst_over_the_scenarios_and_names_it() {
     let room = first(&store(0.0));
 
@@ -169,6 +196,16 @@ fn the_strip_runs_from_slow_to_ultra_fast_and_never_slows_flashover() {
     let classes: Vec<_> = strip.iter().map(|step| step.growth).collect();
     assert_eq!(classes, [GrowthClass::Slow, GrowthClass::Medium, GrowthClass::Fast, GrowthClass::UltraFast]);
     assert!(strip.is_sorted_by(|a, b| a.time_s.unwrap() > b.time_s.unwrap()));
+}
+
+#[test]
+fn every_room_has_the_strip() {
+    let findings = assessed(&building(
+        vec![room("hall", "warehouse", [30.0, 20.0, 9.0]), room("cell", "storage", [2.0, 2.0, 2.4])],
+        Vec::new(),
+    ));
+
+    assert!(findings.rooms.iter().all(|room| room.growth_strip.len() == 4));
 }
 
 fn package(name: &str, item: &str, spacing_m: f64) -> FuelPackage {
