@@ -11,9 +11,11 @@ use tokio::runtime::Runtime;
 
 /// Twenty rooms off one corridor, each with a door and a window: the building of the speed goal.
 fn twenty_rooms() -> Value {
-    let mut rooms = vec![json!({ "key": "corridor", "kind": "corridor", "use": "corridor", "length_m": 30, "width_m": 2,
+    let mut rooms =
+        vec![json!({ "key": "corridor", "kind": "corridor", "use": "corridor", "length_m": 30, "width_m": 2,
         "height_m": 2.6 })];
-    let mut openings = vec![json!({ "key": "exit", "kind": "double_door", "connects": ["corridor", "outside"],
+    let mut openings =
+        vec![json!({ "key": "exit", "kind": "double_door", "connects": ["corridor", "outside"],
         "width_m": 1.8, "height_m": 2.1, "open_fraction": 0, "entry": true })];
     let uses = ["office", "storage", "living", "bedroom", "classroom"];
     for number in 1..20 {
@@ -45,7 +47,9 @@ fn service(criterion: &mut Criterion) {
     });
     let get = |path: String| {
         let request = client.get(&path).build().expect("a request");
-        runtime.block_on(async { client.execute(request).await.expect("an answer").bytes().await.expect("a body") })
+        runtime.block_on(async {
+            client.execute(request).await.expect("an answer").bytes().await.expect("a body")
+        })
     };
     let post = |path: String, body: &Value| {
         let request = client.post(&path).json(body).build().expect("a request");
@@ -56,15 +60,20 @@ fn service(criterion: &mut Criterion) {
         })
     };
 
-    let made: Value = serde_json::from_slice(&post(format!("{base}/v1/buildings"), &twenty_rooms())).expect("JSON");
+    let made: Value =
+        serde_json::from_slice(&post(format!("{base}/v1/buildings"), &twenty_rooms())).expect("JSON");
     let id = made["id"].as_str().expect("an id").to_owned();
     let screening = json!({ "assumptions": { "level": "screening" } });
-    let report: Value = serde_json::from_slice(&post(format!("{base}/v1/buildings/{id}/assessments"), &screening)).expect("JSON");
+    let report: Value =
+        serde_json::from_slice(&post(format!("{base}/v1/buildings/{id}/assessments"), &screening))
+            .expect("JSON");
     let assessment = report["assessment_id"].as_str().expect("an id").to_owned();
 
     let mut group = criterion.benchmark_group("service");
     group.bench_function("bare_answer", |b| b.iter(|| black_box(get(format!("{base}/healthz")))));
-    group.bench_function("read_a_building", |b| b.iter(|| black_box(get(format!("{base}/v1/buildings/{id}")))));
+    group.bench_function("read_a_building", |b| {
+        b.iter(|| black_box(get(format!("{base}/v1/buildings/{id}"))))
+    });
     group.bench_function("read_a_room_report", |b| {
         b.iter(|| black_box(get(format!("{base}/v1/assessments/{assessment}/rooms/r1"))));
     });

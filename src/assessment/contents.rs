@@ -114,7 +114,8 @@ impl Contents {
         let found = find(&room.room_use, |key| catalogue.use_of(key))
             .ok_or_else(|| format!("use {:?}", room.room_use))?;
         let use_of = found.properties;
-        let fuel: Option<&FuelProperties> = catalogue.fuel(&use_of.fuel).map(|row| &row.properties);
+        let fuel: Option<&FuelProperties> =
+            find(&use_of.fuel, |key| catalogue.fuel(key)).map(|found| found.properties);
         let load = load_of(room, &found, assumptions, account);
         account.row(
             "use.heat_release_per_area_kw_m2",
@@ -438,7 +439,7 @@ mod tests {
             heat_release_per_area_kw_m2: 250.0,
             sleeping: false,
             way_out: false,
-            fuel: "wood".to_owned(),
+            fuel: crate::domain::Named::Catalogue("wood".to_owned()),
         }
     }
 

@@ -8,7 +8,6 @@ use super::findings::{
 };
 use super::inputs::Inputs;
 use super::judge::{CORNER, Judged, Limit, enclosure, judge, moments};
-use super::linings::taking_heat;
 use super::methods::figure;
 use super::scenarios::{Cap, Screened, governing, spread_of_leaks, spread_of_linings};
 use super::{contents, hazards, holds_while, large_spaces, not_covered, rules};
@@ -191,7 +190,7 @@ fn provisional_because(
             .map(|found| {
                 let mut state = found.state;
                 state.leak_m2 *= leak_share;
-                let surfaces = taking_heat(inputs.lined.around(state.wall.area_m2), heat_share);
+                let surfaces = inputs.lined.around(state.wall.area_m2).taking_heat(heat_share);
                 let typical =
                     judge(inputs, &state, cap.on(contents.fire(typical_load, growth_kw_s2)), &surfaces);
                 let p95 = if never_open {

@@ -4,7 +4,6 @@ use super::backdraft::Starved;
 use super::findings::{Direction, HoldsWhile};
 use super::inputs::Inputs;
 use super::judge::{excess_in, judge};
-use super::linings::taking_heat;
 use super::openings::{CRACK_SHARE_M2_M3, State};
 use super::rules::NOT_INDICATED_RATIO;
 use super::scenarios::{Cap, Screened, spread_of_linings};
@@ -62,7 +61,7 @@ pub(super) fn flashover(inputs: &Inputs<'_>, screened: &[Screened], cap: Cap) ->
     let load = contents.load;
     let alpha = contents.growth.typical_kw_s2;
     let flips_in = |state: &State, p95_mj_m2: f64, growth_kw_s2: f64, heat_share: f64| {
-        let surfaces = taking_heat(inputs.lined.around(state.wall.area_m2), heat_share);
+        let surfaces = inputs.lined.around(state.wall.area_m2).taking_heat(heat_share);
         let fire = cap.on(contents.fire(p95_mj_m2, growth_kw_s2));
         judge(inputs, state, fire, &surfaces).to_lowest >= NOT_INDICATED_RATIO
     };
@@ -136,7 +135,7 @@ fn opening_flip(inputs: &Inputs<'_>, state: &State, flips: impl Fn(&State) -> bo
 pub(super) fn backdraft(inputs: &Inputs<'_>, worst: &Starved, cap: Cap) -> Vec<HoldsWhile> {
     let contents = &inputs.contents;
     let share = spread_of_linings(inputs);
-    let surfaces = taking_heat(inputs.lined.around(0.0), share.low);
+    let surfaces = inputs.lined.around(0.0).taking_heat(share.low);
     let stand = super::openings::Stand::as_recorded(Scenario::Shut);
     let leak_m2 = stand.state(inputs.plan, inputs.number, inputs.envelope_leak_m2, inputs.ambient_k).leak_m2;
     let flips = |load_mj_m2: f64, leak_m2: f64| {

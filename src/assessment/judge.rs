@@ -41,7 +41,7 @@ pub(super) enum Limit {
 }
 
 /// The enclosure of the correlations.
-pub(super) fn enclosure(state: &State, surfaces: &[Surface; 3]) -> Enclosure {
+pub(super) fn enclosure(state: &State, surfaces: &[Surface]) -> Enclosure {
     Enclosure {
         bounding_area_m2: total_area_m2(surfaces),
         opening_area_m2: state.wall.area_m2,
@@ -50,7 +50,7 @@ pub(super) fn enclosure(state: &State, surfaces: &[Surface; 3]) -> Enclosure {
 }
 
 /// The shut room of the oxygen method.
-pub(super) fn shut_room<'s>(inputs: &Inputs<'_>, leak_m2: f64, surfaces: &'s [Surface; 3]) -> ShutRoom<'s> {
+pub(super) fn shut_room<'s>(inputs: &Inputs<'_>, leak_m2: f64, surfaces: &'s [Surface]) -> ShutRoom<'s> {
     ShutRoom {
         volume_m3: inputs.geometry.volume_m3,
         height_m: inputs.geometry.height_m,
@@ -62,7 +62,7 @@ pub(super) fn shut_room<'s>(inputs: &Inputs<'_>, leak_m2: f64, surfaces: &'s [Su
 }
 
 /// Judges a fire with all the air it wants in a room that stands so.
-pub(super) fn judge(inputs: &Inputs<'_>, state: &State, fire: DesignFire, surfaces: &[Surface; 3]) -> Judged {
+pub(super) fn judge(inputs: &Inputs<'_>, state: &State, fire: DesignFire, surfaces: &[Surface]) -> Judged {
     if state.is_open() {
         judge_open(state, fire, surfaces)
     } else {
@@ -74,7 +74,7 @@ pub(super) fn judge(inputs: &Inputs<'_>, state: &State, fire: DesignFire, surfac
 pub(super) fn excess_in(
     inputs: &Inputs<'_>,
     fire: DesignFire,
-    surfaces: &[Surface; 3],
+    surfaces: &[Surface],
     leak_m2: f64,
 ) -> ExcessFuel {
     excess_fuel::screen(&ExcessInput {
@@ -94,7 +94,7 @@ pub(super) fn aftergas(inputs: &Inputs<'_>) -> AftergasShare {
     }
 }
 
-fn judge_open(state: &State, fire: DesignFire, surfaces: &[Surface; 3]) -> Judged {
+fn judge_open(state: &State, fire: DesignFire, surfaces: &[Surface]) -> Judged {
     let fuel_kw = fire.reached_kw();
     let air_kw = state.air_limit_kw(fire.growth_kw_s2);
     let phases = state.admits(fire).phases();
@@ -128,7 +128,7 @@ fn ratio(available_kw: f64, required_kw: f64) -> f64 {
 }
 
 /// Lowest and highest heat release that the correlations in range ask for; all three where none is.
-fn required_span_kw(room: Enclosure, surfaces: &[Surface; 3], decay_start_s: f64) -> (f64, f64) {
+fn required_span_kw(room: Enclosure, surfaces: &[Surface], decay_start_s: f64) -> (f64, f64) {
     let by_conductance = flashover::mccaffrey_kw(room, total_conductance_kw_k(surfaces, decay_start_s));
     let all = [
         (flashover::babrauskas_kw(room), flashover::babrauskas_limits(room).is_empty()),
@@ -179,7 +179,7 @@ pub(super) fn moments(
     inputs: &Inputs<'_>,
     state: &State,
     fire: DesignFire,
-    surfaces: &[Surface; 3],
+    surfaces: &[Surface],
     place_factor: f64,
 ) -> Moments {
     if !state.is_open() {
@@ -207,7 +207,7 @@ fn shut_reaches_600_c_s(
     inputs: &Inputs<'_>,
     state: &State,
     fire: &DesignFire,
-    surfaces: &[Surface; 3],
+    surfaces: &[Surface],
 ) -> Option<f64> {
     let room = shut_room(inputs, state.leak_m2, surfaces);
     let until = |horizon_s: f64| burn_shut(fire, &room, horizon_s).state;

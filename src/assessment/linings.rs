@@ -90,10 +90,10 @@ impl<'c> Lined<'c> {
     }
 
     /// The surfaces where an opening takes its area from the walls.
-    pub fn around(&self, opening_area_m2: f64) -> [Surface; 3] {
+    pub fn around(&self, opening_area_m2: f64) -> Surfaces {
         let [mut walls, ceiling, floor] = self.surfaces;
         walls.area_m2 = (walls.area_m2 - opening_area_m2).max(0.0);
-        [walls, ceiling, floor]
+        Surfaces::of([walls, ceiling, floor])
     }
 
     /// What the report says of each.
@@ -124,16 +124,50 @@ impl<'c> Lined<'c> {
     }
 }
 
-/// The surfaces where the linings take less heat (share below 1) or more.
-///
-/// Conductivity and density go together, so that the conductance changes in proportion at every time: with
-/// the conductivity alone the penetration time would move, and at its jump a better insulator would seem worse.
-pub(super) fn taking_heat(surfaces: [Surface; 3], share: f64) -> [Surface; 3] {
-    surfaces.map(|surface| Surface {
-        conductivity_w_mk: surface.conductivity_w_mk * share,
-        density_kg_m3: surface.density_kg_m3 * share,
-        ..surface
-    })
+/// The surfaces as the methods sum over them: those that are lined alike as one, which spares the hot loops a third.
+#[derive(Debug, Clone, Copy)]
+pub(super) struct Surfaces {
+    list: [Surface; 3],
+    count: usize,
+}
+
+impl Surfaces {
+    fn of([walls, ceiling, floor]: [Surface; 3]) -> Self {
+        let mut surfaces = Self { list: [walls, ceiling, floor], count: 1 };
+        for next in [ceiling, floor] {
+            let alike = surfaces.list[..surfaces.count]
+                .iter_mut()
+                .find(|one| Surface { area_m2: next.area_m2, ..**one } == next);
+            match alike {
+                Some(one) => one.area_m2 += next.area_m2,
+                None => {
+                    surfaces.list[surfaces.count] = next;
+                    surfaces.count += 1;
+                }
+            }
+        }
+        surfaces
+    }
+
+    /// The surfaces where the linings take less heat (share below 1) or more.
+    ///
+    /// Conductivity and density go together, so that the conductance changes in proportion at every time: with
+    /// the conductivity alone the penetration time would move, and at its jump a better insulator would seem worse.
+    pub fn taking_heat(mut self, share: f64) -> Self {
+        for surface in &mut self.list {
+            surface.conductivity_w_mk *= share;
+            surface.density_kg_m3 *= share;
+        }
+        self
+    }
+}
+
+impl std::ops::Deref for Surfaces {
+    type Target = [Surface];
+
+    fn deref(&self) -> &[Surface] {
+        &self.list[..self.count]
+    }
 }
 
 struct One<'c> {

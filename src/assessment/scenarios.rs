@@ -3,7 +3,6 @@
 use super::findings::{Band, FlashoverRating, Reason};
 use super::inputs::Inputs;
 use super::judge::{CORNER, Judged, Moments, judge, moments};
-use super::linings::taking_heat;
 use super::openings::{Stand, State, fallout, way_out};
 use super::rules;
 use crate::domain::assumptions::Scenario;
@@ -146,8 +145,8 @@ fn screen_state(inputs: &Inputs<'_>, stand: Stand, state: State, cap: Cap) -> Sc
     let share = spread_of_linings(inputs);
     // A shut room that stays far from 600 °C stays below it at the corners too, and is spared the work.
     let moments = if state.is_open() || typical.to_highest >= rules::NOT_INDICATED_RATIO {
-        let worst = (cap.on(contents.worst_fire()), taking_heat(surfaces, share.low));
-        let mildest = (cap.on(contents.mildest_fire()), taking_heat(surfaces, share.high));
+        let worst = (cap.on(contents.worst_fire()), surfaces.taking_heat(share.low));
+        let mildest = (cap.on(contents.mildest_fire()), surfaces.taking_heat(share.high));
         [
             moments(inputs, &state, worst.0, &worst.1, CORNER.high),
             moments(inputs, &state, typical_fire, &surfaces, CORNER.typical),
@@ -188,7 +187,7 @@ pub(super) fn spread_of_leaks(inputs: &Inputs<'_>) -> Band {
 }
 
 /// Gas temperature that a scenario reaches with typical inputs, K.
-pub(super) fn hottest_k(inputs: &Inputs<'_>, screened: &Screened, surfaces: &[Surface; 3], cap: Cap) -> f64 {
+pub(super) fn hottest_k(inputs: &Inputs<'_>, screened: &Screened, surfaces: &[Surface], cap: Cap) -> f64 {
     if let Some(burn) = screened.typical.burn() {
         return burn.state.peak_temperature_k;
     }
@@ -235,7 +234,7 @@ pub(super) fn window_fails(inputs: &Inputs<'_>, as_found: &Screened, cap: Cap) -
 fn glass_falls_s(
     inputs: &Inputs<'_>,
     as_found: &Screened,
-    surfaces: &[Surface; 3],
+    surfaces: &[Surface],
     gas_k: f64,
     cap: Cap,
 ) -> f64 {

@@ -8,3 +8,20 @@ pub enum Named<T> {
     /// The properties, given by the bureau.
     Given(T),
 }
+
+impl<T> Named<T> {
+    /// The key, where it is one.
+    pub fn key(&self) -> Option<&str> {
+        match self {
+            Self::Catalogue(key) => Some(key),
+            Self::Given(_) => None,
+        }
+    }
+}
+
+/// A row of the catalogue names another by its key.
+impl<T> From<String> for Named<T> {
+    fn from(key: String) -> Self {
+        Self::Catalogue(key)
+    }
+}

@@ -7,6 +7,8 @@
 //! The limits are ours. They are set wide of anything met in buildings or in the catalogue,
 //! to stop slips of unit or decimal point, not to judge data.
 
+use super::named::Named;
+
 /// The numbers between which a member must lie, both ends included.
 #[derive(Debug, Clone, Copy, PartialEq)]
 pub struct Limit {
@@ -97,8 +99,8 @@ pub struct UseProperties {
     pub sleeping: bool,
     /// The way out leads through here: corridor, stair, lobby.
     pub way_out: bool,
-    /// Catalogue key of the fuel that the contents burn as.
-    pub fuel: String,
+    /// The fuel that the contents burn as.
+    pub fuel: Named<FuelProperties>,
 }
 
 impl Properties for UseProperties {
@@ -177,8 +179,8 @@ pub struct ItemProperties {
     pub burning_area_m2: f64,
     /// Height of its top above its foot. 0.01 to 50 m.
     pub height_m: f64,
-    /// Catalogue key of the fuel it burns as.
-    pub fuel: String,
+    /// The fuel it burns as.
+    pub fuel: Named<FuelProperties>,
     /// How readily it takes fire from another.
     pub ignition: IgnitionEase,
 }
@@ -507,7 +509,7 @@ mod tests {
             heat_release_per_area_kw_m2: 500.0,
             sleeping: false,
             way_out: false,
-            fuel: "wood".into(),
+            fuel: Named::Catalogue("wood".into()),
         }
     }
 

@@ -12,7 +12,6 @@ use utoipa::openapi::schema::{Object, Type};
 use utoipa::openapi::{Content, OpenApi, Ref, RefOr, ResponseBuilder};
 use utoipa::{OpenApi as _, ToSchema as _};
 
-use super::catalogue_rows::Fuel;
 use super::problem::PROBLEM_JSON;
 use super::routes::operations;
 use crate::wire::problem::Problem;
@@ -39,7 +38,7 @@ use crate::wire::problem::Problem;
         (name = "catalogue", description = "What the names in a building stand for, each row with its source."),
         (name = "methods", description = "How the figures come about: equations, sources, ranges."),
     ),
-    components(schemas(Problem, Fuel)),
+    components(schemas(Problem)),
 )]
 struct Service;
 

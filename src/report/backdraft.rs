@@ -12,6 +12,23 @@ use super::words::{BackdraftWord, LimitWord, OutcomeWord, ScenarioWord};
 use crate::assessment::findings;
 use crate::domain::Key;
 
+/// Bands of the overpressure; the findings carry the word.
+#[derive(Debug, Clone, Copy, PartialEq, Eq, Serialize, ToSchema)]
+pub enum PressureBand {
+    /// Under 100 Pa.
+    #[serde(rename = "under_100_pa")]
+    Under100Pa,
+    /// 100 to 1000 Pa.
+    #[serde(rename = "100_to_1000_pa")]
+    From100To1000Pa,
+    /// 1 to 10 kPa.
+    #[serde(rename = "1_to_10_kpa")]
+    From1To10KPa,
+    /// Over 10 kPa.
+    #[serde(rename = "over_10_kpa")]
+    Over10KPa,
+}
+
 /// Can a shut room hide gas that burns violently when air reaches it.
 #[derive(Debug, Clone, PartialEq, Serialize, ToSchema)]
 #[schema(as = BackdraftFinding)]
@@ -46,7 +63,7 @@ pub struct Backdraft {
     #[schema(required)]
     pub peak_overpressure_pa: Option<Range>,
     /// The same as a band.
-    #[schema(required)]
+    #[schema(required, value_type = Option<PressureBand>)]
     pub pressure_band: Option<&'static str>,
     /// What gives way.
     pub elements_failing: Vec<&'static str>,

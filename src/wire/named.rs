@@ -198,8 +198,8 @@ object! {
         sleeping: bool = false,
         /// The way out leads through here.
         way_out: bool = false,
-        /// The fuel that the contents burn as.
-        fuel: RowName<FuelProperties>,
+        /// The fuel that the contents burn as: a name of `/v1/catalogue/fuels`, or its properties.
+        fuel: NameOr<FuelProperties>,
     }
 
     /// A thing that burns as one, in place of a name of `/v1/catalogue/items`.
@@ -216,10 +216,38 @@ object! {
         burning_area_m2: Amount<ItemProperties>,
         /// Height of its top above its foot, m.
         height_m: Amount<ItemProperties>,
-        /// The fuel it burns as.
-        fuel: RowName<FuelProperties>,
+        /// The fuel it burns as: a name of `/v1/catalogue/fuels`, or its properties.
+        fuel: NameOr<FuelProperties>,
         /// How readily it takes fire from another.
         ignition: OneWord<IgnitionEase> = IgnitionEase::Normal,
+    }
+
+    /// What burns, in place of a name of `/v1/catalogue/fuels`. Yields that are null are not known.
+    FuelProperties as "FuelProperties" {
+        /// Net heat of complete combustion, MJ/kg.
+        heat_of_combustion_mj_kg: Amount<FuelProperties>,
+        /// Heat really released in well-ventilated burning, MJ/kg; at most the former.
+        chemical_heat_mj_kg: Amount<FuelProperties>,
+        /// Share of the chemical heat that leaves as radiation.
+        radiative_fraction: Amount<FuelProperties>,
+        /// Atoms of carbon in the formula.
+        carbon: Amount<FuelProperties>,
+        /// Atoms of hydrogen in the formula.
+        hydrogen: Amount<FuelProperties>,
+        /// Atoms of oxygen in the formula.
+        oxygen: Amount<FuelProperties>,
+        /// Atoms of nitrogen in the formula.
+        nitrogen: Amount<FuelProperties>,
+        /// Atoms of chlorine in the formula.
+        chlorine: Amount<FuelProperties>,
+        /// Carbon monoxide per fuel burnt, well ventilated, kg/kg.
+        co_yield_kg_kg: Maybe<Amount<FuelProperties>> = None,
+        /// Soot per fuel burnt, well ventilated, kg/kg.
+        soot_yield_kg_kg: Maybe<Amount<FuelProperties>> = None,
+        /// Hydrogen cyanide per fuel burnt, well ventilated, kg/kg.
+        hcn_yield_kg_kg: Maybe<Amount<FuelProperties>> = None,
+        /// Air that burns one kilogram completely, kg/kg.
+        stoichiometric_air_kg_kg: Amount<FuelProperties>,
     }
 
     /// What a surface is lined with, in place of a name of `/v1/catalogue/materials`.

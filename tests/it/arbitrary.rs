@@ -17,7 +17,7 @@ use sootline::domain::building::{
 };
 use sootline::domain::opening::{Opening, OpeningKind, Space};
 use sootline::domain::properties::{
-    DetectorProperties, ItemProperties, LeakageProperties, MaterialProperties, Properties,
+    DetectorProperties, FuelProperties, ItemProperties, LeakageProperties, MaterialProperties, Properties,
     SprinklerProperties, UseProperties,
 };
 use sootline::domain::quantity::{Kind, OpeningSide, Quantity, Sill};
@@ -58,8 +58,29 @@ fn numbers<P: Properties>() -> BoxedStrategy<Vec<f64>> {
     P::LIMITS.iter().map(|limit| limit.least..=limit.most).collect::<Vec<_>>().boxed()
 }
 
-fn fuel() -> BoxedStrategy<String> {
-    catalogue_key(Subject::Fuels).boxed()
+fn fuel() -> BoxedStrategy<Named<FuelProperties>> {
+    let yields = (of(0.0..=1.0), of(0.0..=1.0), of(0.0..=1.0));
+    let own = (numbers::<FuelProperties>(), yields).prop_map(|(mut numbers, yields)| {
+        // The first two are the net and the chemical heat, which is not the greater.
+        numbers[..2].sort_by(f64::total_cmp);
+        let (co_yield_kg_kg, soot_yield_kg_kg, hcn_yield_kg_kg) = yields;
+        FuelProperties {
+            heat_of_combustion_mj_kg: numbers[1],
+            chemical_heat_mj_kg: numbers[0],
+            radiative_fraction: numbers[2],
+            // Something must burn.
+            carbon: numbers[3].max(1.0),
+            hydrogen: numbers[4],
+            oxygen: numbers[5],
+            nitrogen: numbers[6],
+            chlorine: numbers[7],
+            co_yield_kg_kg,
+            soot_yield_kg_kg,
+            hcn_yield_kg_kg,
+            stoichiometric_air_kg_kg: numbers[11],
+        }
+    });
+    named(Subject::Fuels, own)
 }
 
 fn catalogue_key(subject: Subject) -> BoxedStrategy<String> {

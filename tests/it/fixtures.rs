@@ -78,7 +78,9 @@ pub fn findings(mut report: Value) -> Value {
         match value {
             Value::Array(items) => items.iter_mut().for_each(strip),
             Value::Object(members) => {
-                members.retain(|name, _| !matches!(name.as_str(), "links" | "assessment_id" | "building_id" | "building_revision"));
+                members.retain(|name, _| {
+                    !matches!(name.as_str(), "links" | "assessment_id" | "building_id" | "building_revision")
+                });
                 members.values_mut().for_each(strip);
             }
             _ => {}

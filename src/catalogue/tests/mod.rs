@@ -38,8 +38,8 @@ fn plain<T: Properties>(kind: Kind, row: &Row<T>, fuel: Option<&str>) -> Plain {
 fn every_row() -> Vec<Plain> {
     let all = Catalogue::embedded();
     let mut rows = Vec::new();
-    rows.extend(all.uses().map(|row| plain(Kind::Uses, row, Some(&row.properties.fuel))));
-    rows.extend(all.items().map(|row| plain(Kind::Items, row, Some(&row.properties.fuel))));
+    rows.extend(all.uses().map(|row| plain(Kind::Uses, row, row.properties.fuel.key())));
+    rows.extend(all.items().map(|row| plain(Kind::Items, row, row.properties.fuel.key())));
     rows.extend(all.fuels().map(|row| plain(Kind::Fuels, row, None)));
     rows.extend(all.materials().map(|row| plain(Kind::Materials, row, None)));
     rows.extend(all.leakages().map(|row| plain(Kind::Leakage, row, None)));

@@ -94,7 +94,7 @@ fn growth_of_every_use_is_a_class_of_the_european_standard() {
 fn no_item_holds_more_heat_than_its_fuel_can_give() {
     for row in all().items() {
         let item = &row.properties;
-        let fuel = &all().fuel(&item.fuel).unwrap().properties;
+        let fuel = &all().fuel(item.fuel.key().unwrap()).unwrap().properties;
 
         let heat = item.energy_mj / item.mass_kg;
         // A little above 1: masses and energies are rounded.

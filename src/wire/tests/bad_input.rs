@@ -365,6 +365,22 @@ fn properties_may_stand_in_place_of_a_name_and_are_held_to_their_limits() {
         let faults = faults_of::<BuildingInput>(&with("/rooms/0/use", changed));
         assert_eq!(told(&faults), [(format!("/rooms/0/use/{member}"), code)]);
     }
+    let fuel = json!({
+        "heat_of_combustion_mj_kg": 18, "chemical_heat_mj_kg": 13, "radiative_fraction": 0.3, "carbon": 1,
+        "hydrogen": 1.7, "oxygen": 0.7, "nitrogen": 0, "chlorine": 0, "stoichiometric_air_kg_kg": 6,
+    });
+    let with_fuel = |member: &str, value: Value| {
+        let mut changed = properties.clone();
+        changed["fuel"] = fuel.clone();
+        changed["fuel"][member] = value;
+        told(&faults_of::<BuildingInput>(&with("/rooms/0/use", changed)))
+    };
+    assert_eq!(with_fuel("oxygen", json!(0.8)), []);
+    assert_eq!(with_fuel("oxygen", json!(-1)), [("/rooms/0/use/fuel/oxygen".to_owned(), "out_of_range")]);
+    assert_eq!(
+        with_fuel("chemical_heat_mj_kg", json!(19)),
+        [("/rooms/0/use/fuel/chemical_heat_mj_kg".to_owned(), "contradiction")]
+    );
     let mut falling = properties.clone();
     falling["fire_load_p80_mj_m2"] = json!(100);
     let faults = faults_of::<BuildingInput>(&with("/rooms/0/use", falling));
