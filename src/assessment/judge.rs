@@ -83,6 +83,7 @@ pub(super) fn excess_in(
         room: shut_room(inputs, leak_m2, surfaces),
         aftergas: aftergas(inputs),
         horizon_s: inputs.horizon.shut_s,
+        heat_of_combustion_kj_kg: inputs.contents.heat_of_combustion_kj_kg,
     })
 }
 

@@ -58,6 +58,8 @@ pub struct ExcessInput<'a> {
     pub aftergas: AftergasShare,
     /// When to stop looking, s.
     pub horizon_s: f64,
+    /// Heat of combustion of the fuel gas, kJ/kg: the gas is itself part of the layer.
+    pub heat_of_combustion_kj_kg: f64,
 }
 
 /// What the screen may answer: it never says that there is a backdraft, nor that there is none.
@@ -117,7 +119,8 @@ pub fn threshold_kj_kg(layer_temperature_k: f64) -> f64 {
 /// Can the gas of this shut room hold fuel enough for a backdraft?
 ///
 /// ```text
-/// e = unburned when the flame dies + min( share × gasified, fuel left ) / m
+/// e' = unburned when the flame dies + min( share × gasified, fuel left ) / m
+/// e  = e' / ( 1 + e' / ΔH_c )
 /// not indicated  if e with the high share < e_crit(T)
 /// ```
 ///
@@ -127,6 +130,7 @@ pub fn threshold_kj_kg(layer_temperature_k: f64) -> f64 {
 /// | gasified   | the same, until the flame dies                                        | kJ    |
 /// | share      | [`AftergasShare`]                                                     | -     |
 /// | `m`, `T`   | gas left in the room when the flame dies, and its temperature         | kg, K |
+/// | `ΔH_c`     | `heat_of_combustion_kj_kg`: the fuel gas adds its own mass to the layer | kJ/kg |
 /// | `e_crit`   | [`threshold_kj_kg`]                                                   | kJ/kg |
 ///
 /// Solid fuel left on the floor does not count, only what turns to gas; but no more turns to gas
@@ -150,6 +154,7 @@ pub fn threshold_kj_kg(layer_temperature_k: f64) -> f64 {
 ///                      ambient_temperature_k: 293.15, limit: LimitingOxygen::TYPICAL },
 ///     aftergas: AftergasShare::NONCOMBUSTIBLE_LINING,
 ///     horizon_s: 7200.0,
+///     heat_of_combustion_kj_kg: 17_500.0,
 /// };
 /// assert_eq!(screen(&basket).outcome, Outcome::NotIndicated);
 /// ```
@@ -160,7 +165,7 @@ pub fn screen(input: &ExcessInput<'_>) -> ExcessFuel {
     let left_kj = (input.fire.energy_kj - state.gasified_kj).max(0.0);
     let after = |share: f64| {
         let after_kj = if burn.starved { (share * state.gasified_kj).min(left_kj) } else { 0.0 };
-        state.unburned_kj_kg + after_kj / state.gas_mass_kg
+        of_layer_kj_kg(state.unburned_kj_kg + after_kj / state.gas_mass_kg, input.heat_of_combustion_kj_kg)
     };
     let threshold_kj_kg = threshold_kj_kg(state.temperature_k);
     let high_kj_kg = after(input.aftergas.high);
@@ -173,6 +178,11 @@ pub fn screen(input: &ExcessInput<'_>) -> ExcessFuel {
         burn,
         outcome: if high_kj_kg < threshold_kj_kg { Outcome::NotIndicated } else { Outcome::CannotBeExcluded },
     }
+}
+
+/// Heat of combustion per mass of layer gas and fuel gas together, from that per mass of the other gas alone.
+fn of_layer_kj_kg(of_other_gas_kj_kg: f64, heat_of_combustion_kj_kg: f64) -> f64 {
+    of_other_gas_kj_kg / (1.0 + of_other_gas_kj_kg / heat_of_combustion_kj_kg)
 }
 
 /// What a room exceeds of the range of [`screen`].
@@ -215,7 +225,13 @@ mod tests {
     }
 
     fn input(fire: DesignFire, room: ShutRoom<'static>) -> ExcessInput<'static> {
-        ExcessInput { fire, room, aftergas: AftergasShare::NONCOMBUSTIBLE_LINING, horizon_s: 7200.0 }
+        ExcessInput {
+            fire,
+            room,
+            aftergas: AftergasShare::NONCOMBUSTIBLE_LINING,
+            horizon_s: 7200.0,
+            heat_of_combustion_kj_kg: 17_500.0,
+        }
     }
 
     #[test]
@@ -307,6 +323,13 @@ mod tests {
 
     proptest! {
         #[test]
+    fn no_layer_holds_more_per_kilogram_than_its_fuel() {
+        // By hand: 10 MJ of fuel of 20 MJ/kg is 0.5 kg; with 1 kg of other gas 10/1.5 = 6.667 MJ/kg.
+        assert_relative_eq!(of_layer_kj_kg(10_000.0, 20_000.0), 6_666.667, max_relative = 1e-6);
+        assert!(of_layer_kj_kg(1e9, 20_000.0) < 20_000.0);
+    }
+
+    #[test]
         fn more_fuel_of_the_same_growth_never_turns_the_outcome_to_not_indicated(
             fuel in 2e4..2e6_f64, more in 1.0..5.0_f64, volume in 10.0..200.0_f64,
         ) {
