@@ -1,6 +1,7 @@
 //! What a request asks beside its body: media it accepts, parameters, conditions.
 
 use std::collections::BTreeMap;
+use std::collections::btree_map::Entry;
 use std::convert::Infallible;
 
 use axum::extract::FromRequestParts;
@@ -78,10 +79,16 @@ impl Query {
         for (name, value) in pairs.0 {
             if !known.contains(&name.as_str()) {
                 faults.push(unknown(&name, known));
-            } else if values.contains_key(&name) {
-                faults.push(ProblemItem::parameter(&name, "duplicate", "the parameter is given twice", None));
-            } else {
-                values.insert(name, value);
+                continue;
+            }
+            match values.entry(name) {
+                Entry::Vacant(free) => {
+                    free.insert(value);
+                }
+                Entry::Occupied(taken) => {
+                    let detail = "the parameter is given twice";
+                    faults.push(ProblemItem::parameter(taken.key(), "duplicate", detail, None));
+                }
             }
         }
         if faults.is_empty() { Ok(Self(values)) } else { Err(bad_parameters(faults)) }

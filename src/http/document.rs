@@ -204,3 +204,53 @@ fn text_header(description: &str) -> Header {
     header.description = Some(description.to_owned());
     header
 }
+
+#[cfg(test)]
+mod tests {
+    use std::collections::BTreeMap;
+
+    use utoipa::ToSchema;
+    use utoipa::openapi::{RefOr, Schema};
+
+    use super::super::summary::{AssessmentSummary, BuildingSummary};
+    use crate::report::{BuildingReport, Methods, RoomReport};
+    use crate::wire;
+
+    fn schemas_of<T: ToSchema>() -> Vec<(String, RefOr<Schema>)> {
+        let mut schemas = vec![(T::name().into_owned(), T::schema())];
+        T::schemas(&mut schemas);
+        schemas
+    }
+
+    /// Schemas are gathered by name and the last one wins, so two of one name would pass unseen.
+    #[test]
+    fn no_two_schemas_share_a_name() {
+        let mut known = BTreeMap::new();
+        let mut read = 0;
+        for (name, schema) in [
+            schemas_of::<wire::Building>(),
+            schemas_of::<wire::BuildingInput>(),
+            schemas_of::<wire::Room>(),
+            schemas_of::<wire::RoomInput>(),
+            schemas_of::<wire::Opening>(),
+            schemas_of::<wire::OpeningInput>(),
+            schemas_of::<wire::AssessInput>(),
+            schemas_of::<wire::AssessmentRequest>(),
+            schemas_of::<wire::Problem>(),
+            schemas_of::<BuildingSummary>(),
+            schemas_of::<AssessmentSummary>(),
+            schemas_of::<BuildingReport>(),
+            schemas_of::<RoomReport>(),
+            schemas_of::<Methods>(),
+        ]
+        .into_iter()
+        .flatten()
+        {
+            let text = serde_json::to_string(&schema).unwrap();
+            let first = known.entry(name.clone()).or_insert_with(|| text.clone());
+            assert_eq!(*first, text, "{name} means two things");
+            read += 1;
+        }
+        assert!(read > 100, "only {read} schemas were read");
+    }
+}

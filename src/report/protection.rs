@@ -56,6 +56,7 @@ impl From<&findings::ProtectionFinding> for Protection {
 
 /// Needed fire flow against the water recorded.
 #[derive(Debug, Clone, PartialEq, Serialize, ToSchema)]
+#[schema(as = WaterNeeded)]
 pub struct Water {
     /// What each formula asks for; each method's title says what its figure means.
     pub figures: Vec<Figure>,

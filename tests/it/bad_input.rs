@@ -426,25 +426,60 @@ async fn judgement_goes_in_the_order_of_the_contract() {
     let missing = path.replace("0001", "9999");
     let large = vec![b' '; 4 * 1024 * 1024 + 1];
 
-    // Each request has every fault from its own on; the first decides.
-    let all: [(&str, &str, &str, &str, Option<&str>, &str, &[u8], u16, &str); 9] = [
-        ("PUT", &missing, "text/html", "text/plain", None, "?x=1", &large, 404, "not-found"),
-        ("POST", &path, "text/html", "text/plain", None, "?x=1", &large, 405, "method-not-allowed"),
-        ("PUT", &path, "text/html", "text/plain", None, "?x=1", &large, 406, "not-acceptable"),
-        ("PUT", &path, "*/*", "text/plain", None, "?x=1", &large, 413, "too-large"),
-        ("PUT", &path, "*/*", "text/plain", None, "?x=1", b"{", 415, "unsupported-media-type"),
-        ("PUT", &path, "*/*", "application/json", None, "?x=1", b"{", 428, "precondition-required"),
-        ("PUT", &path, "*/*", "application/json", Some("\"9\""), "?x=1", b"{", 412, "precondition-failed"),
-        ("PUT", &path, "*/*", "application/json", Some("\"1\""), "?x=1", b"{", 400, "invalid-parameter"),
-        ("PUT", &path, "*/*", "application/json", Some("\"1\""), "", b"{", 400, "unreadable"),
-    ];
-    for (method, path, accept, content_type, if_match, query, body, status, slug) in all {
-        let mut headers = vec![("Accept", accept), ("Content-Type", content_type)];
-        headers.extend(if_match.map(|tags| ("If-Match", tags)));
-        let method = Method::from_bytes(method.as_bytes()).unwrap();
-        let request = with_headers(request(method, &format!("{path}{query}")), &headers);
-        let reply = app.send(request.body(Body::from(body.to_vec())).unwrap()).await;
+    // Each request mends one fault more than the one before; the first that is left decides.
+    let worst = Faulty {
+        method: Method::PUT,
+        path: &missing,
+        accept: "text/html",
+        content_type: "text/plain",
+        if_match: None,
+        query: "?x=1",
+        body: &large,
+    };
+    let not_there = worst.clone();
+    let no_method = Faulty { method: Method::POST, path: &path, ..not_there.clone() };
+    let no_form = Faulty { method: Method::PUT, ..no_method.clone() };
+    let too_large = Faulty { accept: "*/*", ..no_form.clone() };
+    let no_json = Faulty { body: b"{", ..too_large.clone() };
+    let no_condition = Faulty { content_type: "application/json", ..no_json.clone() };
+    let stale = Faulty { if_match: Some("\"9\""), ..no_condition.clone() };
+    let odd_parameter = Faulty { if_match: Some("\"1\""), ..stale.clone() };
+    let broken = Faulty { query: "", ..odd_parameter.clone() };
+    let meaningless = Faulty { body: b"{}", ..broken.clone() };
+    for (request, status, slug) in [
+        (not_there, 404, "not-found"),
+        (no_method, 405, "method-not-allowed"),
+        (no_form, 406, "not-acceptable"),
+        (too_large, 413, "too-large"),
+        (no_json, 415, "unsupported-media-type"),
+        (no_condition, 428, "precondition-required"),
+        (stale, 412, "precondition-failed"),
+        (odd_parameter, 400, "invalid-parameter"),
+        (broken, 400, "unreadable"),
+        (meaningless, 422, "invalid"),
+    ] {
+        request.send(&app).await.problem(status, slug);
+    }
+}
 
-        reply.problem(status, slug);
+/// A request with faults of several kinds at once.
+#[derive(Clone)]
+struct Faulty<'a> {
+    method: Method,
+    path: &'a str,
+    accept: &'a str,
+    content_type: &'a str,
+    if_match: Option<&'a str>,
+    query: &'a str,
+    body: &'a [u8],
+}
+
+impl Faulty<'_> {
+    async fn send(self, app: &TestApp) -> Reply {
+        let mut headers = vec![("Accept", self.accept), ("Content-Type", self.content_type)];
+        headers.extend(self.if_match.map(|tags| ("If-Match", tags)));
+        let path = format!("{}{}", self.path, self.query);
+        let request = with_headers(request(self.method, &path), &headers);
+        app.send(request.body(Body::from(self.body.to_vec())).unwrap()).await
     }
 }
