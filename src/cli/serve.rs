@@ -53,24 +53,43 @@ async fn serve(flags: &Serve, inventory: &Inventory) -> Result<(), Failure> {
     let app = App::new(store.clone(), Compute::on_this_machine()?);
     let loaded = if flags.demo { Some(demo::load(&app).await?) } else { None };
 
+    let signals = Signals::listen()?;
     print!("{}", greeting(listener.local_addr()?, inventory, loaded.as_ref()));
-    axum::serve(listener, http::router(app)).with_graceful_shutdown(stopped()).await?;
+    axum::serve(listener, http::router(app)).with_graceful_shutdown(signals.come()).await?;
     store.close().await?;
     Ok(())
 }
 
-/// Ctrl-C, or the signal that service managers send.
-async fn stopped() {
-    let interrupt = tokio::signal::ctrl_c();
+/// Ctrl-C, or the signal that service managers send. Listened for from the moment this is made, so that
+/// whoever has read the greeting can stop the service.
+struct Signals {
     #[cfg(unix)]
-    {
-        use tokio::signal::unix::{SignalKind, signal};
-        if let Ok(mut terminate) = signal(SignalKind::terminate()) {
-            tokio::select! { _ = interrupt => {}, _ = terminate.recv() => {} }
-            return;
+    interrupt: tokio::signal::unix::Signal,
+    #[cfg(unix)]
+    terminate: tokio::signal::unix::Signal,
+}
+
+impl Signals {
+    fn listen() -> std::io::Result<Self> {
+        #[cfg(unix)]
+        {
+            use tokio::signal::unix::{SignalKind, signal};
+            Ok(Self {
+                interrupt: signal(SignalKind::interrupt())?,
+                terminate: signal(SignalKind::terminate())?,
+            })
         }
+        #[cfg(not(unix))]
+        Ok(Self {})
     }
-    let _signal = interrupt.await;
+
+    #[cfg_attr(not(unix), expect(unused_mut, reason = "only the signals of unix are read in place"))]
+    async fn come(mut self) {
+        #[cfg(unix)]
+        tokio::select! { _ = self.interrupt.recv() => {}, _ = self.terminate.recv() => {} }
+        #[cfg(not(unix))]
+        let _signal = tokio::signal::ctrl_c().await;
+    }
 }
 
 fn greeting(address: SocketAddr, inventory: &Inventory, demo: Option<&Loaded>) -> String {

@@ -242,7 +242,10 @@ async fn a_full_lane_is_503_with_a_time_to_come_back() {
     let (held, queued) = (compute.clone(), compute.clone());
     let app = TestApp::with(|parts| parts.compute = compute.clone()).await;
     let (release, wait) = std::sync::mpsc::channel::<()>();
-    let first = tokio::spawn(async move { held.run(Lane::Interactive, move |_| wait.recv().unwrap_or_default()).await });
+    let first =
+        tokio::spawn(
+            async move { held.run(Lane::Interactive, move |_| wait.recv().unwrap_or_default()).await },
+        );
     while compute.load().running == 0 {
         tokio::task::yield_now().await;
     }
