@@ -2,7 +2,7 @@
 //!
 //! Pure: no I/O, no clock, no log. A whole building can be assessed in a unit test.
 //!
-//! The way through: [`plan`] numbers rooms and openings, `inputs` resolves one room with everything that was
+//! The way through: `plan` numbers rooms and openings, `inputs` resolves one room with everything that was
 //! assumed, `openings` says what stands open in a scenario, `judge` sets the heat that is there against the heat
 //! required, `scenarios` does so for every scenario, and `room` gathers the findings, one subject a file.
 

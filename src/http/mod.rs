@@ -1,7 +1,7 @@
 //! Routes, extractors, errors to statuses.
 //!
 //! A handler converts, calls one method of the store or one piece of computing, and answers.
-//! [`routes`] is the list of them all.
+//! `routes` is the list of them all.
 
 pub mod app;
 pub mod problem;
