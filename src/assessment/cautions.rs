@@ -85,6 +85,13 @@ pub(super) fn of_room(inputs: &Inputs<'_>, building: &[Caution], flashover: Flas
     if exposed && cautions.iter().all(|caution| caution.key != "wind") {
         cautions.push(WIND_EXPOSED);
     }
+    if super::protection::sprinkler_credited(inputs) {
+        cautions.push(caution(
+            "sprinkler_credit",
+            "The ratings count on sprinklers that are recorded as working and tested. Without them the room is worse: see its \
+             protection.",
+        ));
+    }
     if inputs.lined.combustible {
         cautions.push(caution(
             "combustible_lining",

@@ -88,7 +88,7 @@ pub(super) fn finding(
         provisional: !because.is_empty(),
         provisional_because: because,
         holds_while,
-        not_covered: not_covered::flashover(inputs, found, rating),
+        not_covered: not_covered::flashover(inputs, found, rating, cap != Cap::NONE),
         figures: figures(inputs, found, cap),
         clauses,
     };
@@ -384,7 +384,7 @@ pub(super) fn strip(inputs: &Inputs<'_>, found: &Screened, clock: &Clock, cap: C
             let time_s = moments(inputs, &found.state, fire, &surfaces, CORNER.typical)
                 .earliest_s()
                 .filter(|_| rating != FlashoverRating::NotIndicated)
-                .map(|time_s| time_s.max(found.not_before_s));
+                .map(|time_s| time_s.max(found.not_before_s.typical));
             GrowthFinding {
                 growth: class,
                 growth_kw_s2: alpha,

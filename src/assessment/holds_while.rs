@@ -100,7 +100,23 @@ pub(super) fn flashover(inputs: &Inputs<'_>, screened: &[Screened], cap: Cap) ->
         });
         found.extend(value.map(|value| flip("leakage_area_m2", now, value, "the leakage", "m²")));
     }
-    nearest_first(found)
+    let mut found = nearest_first(found);
+    if cap != Cap::NONE {
+        found.insert(
+            0,
+            HoldsWhile {
+                field: "sprinklers.state",
+                value: None,
+                now: cap.heat_release_kw,
+                direction: Direction::Below,
+                words: format!(
+                    "Holds while the sprinklers work as recorded and keep the fire below {} kW.",
+                    short(cap.heat_release_kw)
+                ),
+            },
+        );
+    }
+    found
 }
 
 /// The area open to outside at which it flips: more than now, or less; where nothing stands open to outside,

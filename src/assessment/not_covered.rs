@@ -10,7 +10,12 @@ const fn item(key: &'static str, text: &'static str) -> NotCovered {
 }
 
 /// What the flashover screen leaves out.
-pub(super) fn flashover(inputs: &Inputs<'_>, found: &Screened, rating: FlashoverRating) -> Vec<NotCovered> {
+pub(super) fn flashover(
+    inputs: &Inputs<'_>,
+    found: &Screened,
+    rating: FlashoverRating,
+    sprinkler_credited: bool,
+) -> Vec<NotCovered> {
     let mut left_out = vec![
         item("smouldering", "Smouldering before flames: the clock begins at established burning."),
         item("fire_from_outside", "Fire that comes from another room or from outside."),
@@ -36,6 +41,12 @@ pub(super) fn flashover(inputs: &Inputs<'_>, found: &Screened, rating: Flashover
         left_out.push(item(
             "rooms_behind",
             "Fire and heat in the rooms behind an open inner door: they count as air only.",
+        ));
+    }
+    if sprinkler_credited {
+        left_out.push(item(
+            "sprinkler_failure",
+            "Sprinklers that fail, are shut off or do not reach the fire: the rating counts on them.",
         ));
     }
     if inputs.lined.combustible {

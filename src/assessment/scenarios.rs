@@ -10,6 +10,8 @@ use crate::fire::DesignFire;
 use crate::fire::hot_layer::{Vented, mccaffrey_rise_k};
 use crate::fire::linings::{Surface, total_conductance_kw_k};
 
+const AT_ONCE: Band = Band { low: 0.0, typical: 0.0, high: 0.0 };
+
 /// One scenario, screened.
 #[derive(Debug, Clone, PartialEq)]
 pub(super) struct Screened {
@@ -24,8 +26,8 @@ pub(super) struct Screened {
     pub p95: Judged,
     /// Earliest corner, typical, latest corner.
     pub moments: [Moments; 3],
-    /// Before this no air came in: glass had to fall first, fire clock.
-    pub not_before_s: f64,
+    /// Before this no air came in: glass had to fall first. Zero where it had not. Fire clock.
+    pub not_before_s: Band,
 }
 
 impl Screened {
@@ -39,12 +41,13 @@ impl Screened {
         if self.rating == FlashoverRating::NotIndicated {
             return None;
         }
-        let at = |place: usize| of(&self.moments[place]).map(|time_s| time_s.max(self.not_before_s));
-        let typical = at(1)?;
+        let Band { low: early_s, typical: usual_s, high: late_s } = self.not_before_s;
+        let at = |place: usize, least_s: f64| of(&self.moments[place]).map(|time_s| time_s.max(least_s));
+        let typical = at(1, usual_s)?;
         Some(Band {
-            low: at(0).map_or(typical, |low| low.min(typical)),
+            low: at(0, early_s).map_or(typical, |low| low.min(typical)),
             typical,
-            high: at(2).map_or(typical, |high| high.max(typical)),
+            high: at(2, late_s).map_or(typical, |high| high.max(typical)),
         })
     }
 
@@ -164,7 +167,7 @@ fn screen_state(inputs: &Inputs<'_>, stand: Stand, state: State, cap: Cap) -> Sc
         typical,
         p95,
         moments,
-        not_before_s: 0.0,
+        not_before_s: AT_ONCE,
     }
 }
 
@@ -223,7 +226,14 @@ pub(super) fn window_fails(inputs: &Inputs<'_>, as_found: &Screened, cap: Cap) -
             if as_found.moments[1].earliest_s().is_some_and(|flashover_s| flashover_s <= falls_s) {
                 failed.moments = as_found.moments;
             } else {
-                failed.not_before_s = falls_s;
+                // A fire that grows faster or slower has given off the same heat sooner or later by the cube root: E = α t³/3.
+                let growth = inputs.contents.growth;
+                let by = |kw_s2: f64| (growth.typical_kw_s2 / kw_s2).cbrt();
+                failed.not_before_s = Band {
+                    low: falls_s * by(growth.fast_kw_s2),
+                    typical: falls_s,
+                    high: falls_s * by(growth.slow_kw_s2),
+                };
             }
         }
     }

@@ -119,8 +119,8 @@ impl List {
 
     fn governing(&mut self, inputs: &Inputs<'_>, found: &Screened, cap: Cap) {
         let scenario = Some(found.scenario);
-        if found.not_before_s > 0.0 {
-            self.push(MilestoneKind::GlassFalls, exactly(found.not_before_s), scenario, None);
+        if found.not_before_s.typical > 0.0 {
+            self.push(MilestoneKind::GlassFalls, found.not_before_s, scenario, None);
         }
         if found.rating != FlashoverRating::NotAssessed {
             let moments = [

@@ -111,6 +111,20 @@ fn glass_is_wall_until_it_falls_and_an_opening_then() {
 }
 
 #[test]
+fn flashover_that_waits_for_glass_has_its_own_band() {
+    // Shut but for its window of thin glass and lined with wool, the room gets hot enough for the pane to fall.
+    let mut house = store_with_window(Some(Glazing::Float3Mm));
+    house.openings[0].open_fraction = super::super::testing::q(0.0);
+    house.rooms[0].linings = super::super::testing::lined("ceramic_fibre");
+    let room = first(&house);
+    let found = scenario(&room, Scenario::WindowFails);
+
+    let band = found.time_s.unwrap();
+    assert!((found.opening_area_m2 - 1.8).abs() < 1e-9);
+    assert!(band.low < band.typical && band.typical < band.high, "{band:?}");
+}
+
+#[test]
 fn fire_resisting_glass_holds() {
     let room = first(&store_with_window(Some(Glazing::FireResisting)));
     let found = scenario(&room, Scenario::WindowFails);

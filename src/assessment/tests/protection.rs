@@ -42,6 +42,15 @@ fn sprinklers_are_given_credit_only_when_recorded_as_working_and_tested() {
 }
 
 #[test]
+fn a_rating_that_counts_on_sprinklers_says_so() {
+    let found = first(&sprinklered(SprinklerState::WorkingTested));
+
+    assert_eq!(found.flashover.holds_while[0].field, "sprinklers.state");
+    assert!(found.flashover.not_covered.iter().any(|left_out| left_out.key == "sprinkler_failure"));
+    assert!(found.cautions.iter().any(|caution| caution.key == "sprinkler_credit"));
+}
+
+#[test]
 fn the_sprinkler_opens_long_before_the_peak() {
     let found = first(&sprinklered(SprinklerState::Installed));
     let sprinkler = found.protection.iter().find(|p| p.kind == "sprinkler").unwrap();
