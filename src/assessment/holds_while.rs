@@ -20,10 +20,10 @@ struct Steps {
 
 const FINE: Steps = Steps { factor: 1.3, most: 18, halvings: 8 };
 /// For shut rooms, where each trial follows a whole fire.
-const COARSE: Steps = Steps { factor: 2.0, most: 5, halvings: 4 };
+const COARSE: Steps = Steps { factor: 2.0, most: 3, halvings: 4 };
 
 impl Steps {
-    /// The nearest value above `from` (or below it) that flips, within a limit.
+    /// The last value that holds before the nearest one above `from` (or below it) that flips, within a limit.
     fn search(self, from: f64, limit: f64, flips: impl Fn(f64) -> bool) -> Option<f64> {
         let up = limit > from;
         let (mut holds, mut trial) = (from, from);
@@ -35,7 +35,7 @@ impl Steps {
                     let middle = (holds * flipped).sqrt();
                     if flips(middle) { flipped = middle } else { holds = middle }
                 }
-                return Some(flipped);
+                return Some(holds);
             }
             if trial == limit {
                 return None;
@@ -70,13 +70,17 @@ pub(super) fn flashover(inputs: &Inputs<'_>, screened: &[Screened], cap: Cap) ->
     };
     let mut found = Vec::with_capacity(5);
 
-    let now = load.typical_mj_m2;
-    if now > 0.0 {
-        let value = steps.search(now, 100_000.0, |x| flips(load.p95_mj_m2 * x / now, alpha, 1.0));
-        found.extend(value.map(|value| flip("fuel_load_mj_m2", now, value, "the fire load", "MJ/m²")));
+    // Where the oxygen of a shut room decides, neither fire load nor growth does.
+    let starved = screened.iter().any(|found| found.typical.burn().is_some_and(|burn| burn.starved));
+    if any_open || !starved {
+        let now = load.typical_mj_m2;
+        if now > 0.0 {
+            let value = steps.search(now, 100_000.0, |x| flips(load.p95_mj_m2 * x / now, alpha, 1.0));
+            found.extend(value.map(|value| flip("fuel_load_mj_m2", now, value, "the fire load", "MJ/m²")));
+        }
+        let value = steps.search(alpha, 20.0, |x| flips(load.p95_mj_m2, x, 1.0));
+        found.extend(value.map(|value| flip("growth_kw_s2", alpha, value, "growth", "kW/s²")));
     }
-    let value = steps.search(alpha, 20.0, |x| flips(load.p95_mj_m2, x, 1.0));
-    found.extend(value.map(|value| flip("growth_kw_s2", alpha, value, "growth", "kW/s²")));
     // The scenario that stands most open to outside is the one whose opening is varied.
     let most_open = states
         .iter()
@@ -160,14 +164,16 @@ pub(super) fn backdraft(inputs: &Inputs<'_>, worst: &Starved, cap: Cap) -> Vec<H
         found.high_kj_kg >= found.threshold_kj_kg
     };
     let mut found = Vec::with_capacity(2);
-    if leak_m2 > 0.0 {
+    // A starved fire wants air, one that burns out wants fuel.
+    let now = contents.load.typical_mj_m2;
+    if worst.starved && leak_m2 > 0.0 {
         let most_m2 = (0.002 * inputs.geometry.volume_m3).max(2.0 * leak_m2);
         let value = COARSE.search(leak_m2, most_m2, |x| flips(contents.load.p95_mj_m2, x));
         found.extend(value.map(|value| flip("leakage_area_m2", leak_m2, value, "the leakage", "m²")));
-    }
-    let now = contents.load.typical_mj_m2;
-    if now > 0.0 && worst.to_threshold > 0.0 {
-        let value = COARSE.search(now, 100_000.0, |x| flips(contents.load.p95_mj_m2 * x / now, leak_m2));
+    } else if now > 0.0 {
+        // Fire loads differ by more than leakages do: wider steps.
+        let steps = Steps { factor: 4.0, ..COARSE };
+        let value = steps.search(now, 100_000.0, |x| flips(contents.load.p95_mj_m2 * x / now, leak_m2));
         found.extend(value.map(|value| flip("fuel_load_mj_m2", now, value, "the fire load", "MJ/m²")));
     }
     nearest_first(found)
@@ -233,8 +239,8 @@ mod tests {
         let up = FINE.search(1.0, 100.0, |x| x >= 7.0).unwrap();
         let down = FINE.search(100.0, 1.0, |x| x <= 7.0).unwrap();
 
-        assert!((up / 7.0 - 1.0).abs() < 0.01 && up >= 7.0, "{up}");
-        assert!((down / 7.0 - 1.0).abs() < 0.01 && down <= 7.0, "{down}");
+        assert!((up / 7.0 - 1.0).abs() < 0.01 && up < 7.0, "{up}");
+        assert!((down / 7.0 - 1.0).abs() < 0.01 && down > 7.0, "{down}");
     }
 
     #[test]
