@@ -53,7 +53,7 @@ pub async fn assess(State(app): State<App>, ask: Ask, body: Unread) -> Result<Re
     path = "/v1/buildings/{id}/assessments",
     tag = "assessments",
     params(BuildingPath),
-    request_body(content = Option<AssessmentRequest>, description = "What to assume", example = json!(examples::assessment())),
+    request_body(content = AssessmentRequest, description = "What to assume", example = json!(examples::assessment())),
     responses((
         status = 201, description = "The report, kept under its own address.", body = BuildingReport,
         headers(
@@ -95,7 +95,11 @@ pub async fn create_assessment(
     get,
     path = "/v1/buildings/{id}/assessments",
     tag = "assessments",
-    params(BuildingPath, PageQuery),
+    params(
+        BuildingPath,
+        PageQuery,
+        ("cursor" = Option<String>, Query, description = paging::CURSOR, pattern = "^[0-9a-f]{48}$"),
+    ),
     responses((
         status = 200, description = "A page of the list.", body = Page<AssessmentSummary>,
         headers(("Link" = String, description = "The next page, `rel=\"next\"`; left out on the last.")),
@@ -112,15 +116,22 @@ pub async fn list_assessments(
     let query = ask.query(&["limit", "cursor"])?;
     let (after, limit) = (paging::cursor(&query, cursor_of)?, paging::limit(&query)?);
     let found = app.store.list_assessments(&caller, building, after, limit).await?;
-    let after = found.next.map(|next| format!("{}.{}", next.created_at.0, next.id));
+    let after = found.next.map(cursor_text);
     let items = found.items.into_iter().map(AssessmentSummary::from).collect();
     let path = format!("/v1/buildings/{building}/assessments");
     paging::answer(&paging::page(&path, &query, items, after.as_deref()), REVALIDATE)
 }
 
+/// Moment and id, in hexadecimal: the order of the list is that of both.
+fn cursor_text(cursor: AssessmentCursor) -> String {
+    format!("{:016x}{}", cursor.created_at.0.cast_unsigned(), cursor.id.0.simple())
+}
+
 fn cursor_of(text: &str) -> Option<AssessmentCursor> {
-    let (at, id) = text.split_once('.')?;
-    Some(AssessmentCursor { created_at: Timestamp(at.parse().ok()?), id: AssessmentId::parse(id)? })
+    let (at, id) = text.split_at_checked(16)?;
+    let at = paging::number_in(at)?;
+    let id = AssessmentId(paging::id_in(id)?);
+    Some(AssessmentCursor { created_at: Timestamp(at.cast_signed()), id })
 }
 
 /// Read the latest assessment of a building.

@@ -31,6 +31,7 @@ use crate::wire::{Building, BuildingInput, Page};
     tag = "buildings",
     params(
         PageQuery,
+        ("cursor" = Option<String>, Query, description = paging::CURSOR, pattern = "^[0-9a-f]{32}$"),
         ("reference" = Option<String>, Query, description = "Only the building with this reference, the bureau's own number."),
     ),
     responses((
@@ -43,11 +44,11 @@ pub async fn list_buildings(caller: Caller, State(app): State<App>, ask: Ask) ->
     let query = ask.query(&["limit", "cursor", "reference"])?;
     let list = ListBuildings {
         reference: query.get("reference").map(str::to_owned),
-        after: paging::cursor(&query, BuildingId::parse)?,
+        after: paging::cursor(&query, |text| paging::id_in(text).map(BuildingId))?,
         limit: paging::limit(&query)?,
     };
     let found = app.store.list_buildings(&caller, &list).await?;
-    let after = found.next.map(|id| id.to_string());
+    let after = found.next.map(|id| id.0.simple().to_string());
     let items: Vec<_> = found.items.into_iter().map(BuildingSummary::from).collect();
     paging::answer(&paging::page("/v1/buildings", &query, items, after.as_deref()), REVALIDATE)
 }

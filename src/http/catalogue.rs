@@ -22,7 +22,10 @@ macro_rules! lists {
             get,
             path = $path,
             tag = "catalogue",
-            params(PageQuery),
+            params(
+                PageQuery,
+                ("cursor" = Option<String>, Query, description = paging::CURSOR, pattern = "^[0-9]{1,4}$"),
+            ),
             responses((
                 status = 200, description = "A page of the list.", body = Page<$row>,
                 headers(("Link" = String, description = "The next page, `rel=\"next\"`; left out on the last.")),
@@ -32,15 +35,20 @@ macro_rules! lists {
             ask.accepts_json()?;
             let query = ask.query(&["limit", "cursor"])?;
             let limit = usize::try_from(paging::limit(&query)?).unwrap_or(usize::MAX);
-            let position = |key: &str| app.catalogue.$rows().position(|row| row.key == key);
-            let from = paging::cursor(&query, position)?.map_or(0, |last| last + 1);
+            // Rows keep their places as long as the program runs, so the place is the cursor.
+            let from = paging::cursor(&query, place)?.unwrap_or(0);
             let rows = app.catalogue.$rows();
             let more = rows.len() > from.saturating_add(limit);
             let items = rows.skip(from).take(limit).map($row::of).collect::<Result<Vec<_>, _>>()?;
-            let after = items.last().filter(|_| more).map(|row| row.key.clone());
+            let after = more.then(|| (from + limit).to_string());
             paging::answer(&paging::page($path, &query, items, after.as_deref()), AN_HOUR)
         }
     )*};
+}
+
+fn place(text: &str) -> Option<usize> {
+    let lawful = text.len() <= 4 && text.bytes().all(|c| c.is_ascii_digit());
+    if lawful { text.parse().ok() } else { None }
 }
 
 lists! {

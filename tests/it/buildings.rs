@@ -268,6 +268,7 @@ async fn parameters_are_judged_by_name() {
         ("limit=5&limit=6", "limit", "duplicate"),
         ("cursor=nonsense", "cursor", "unknown_cursor"),
         ("cursor=6162", "cursor", "unknown_cursor"),
+        ("cursor=019AC000000070008000000000000001", "cursor", "unknown_cursor"),
         ("limits=5", "limits", "unknown_parameter"),
     ] {
         let problem = app.get(&format!("/v1/buildings?{query}")).await.problem(400, "invalid-parameter");
