@@ -36,6 +36,7 @@ pub mod smoke_filling;
 pub mod glazing;
 pub mod radiation;
 pub mod spread;
+pub mod two_zone;
 
 pub mod leakage;
 pub mod oxygen;
