@@ -2,6 +2,8 @@
 
 mod network;
 mod outcome;
+mod real;
+mod surfaces;
 
 pub use network::{
     Ambient, Detector, Element, Fan, Fire, Fuel, GivesWay, HeatRelease, Ignition, Lie, Linings, Move, Network,
