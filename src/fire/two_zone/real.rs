@@ -23,6 +23,10 @@ pub(super) trait Real:
     fn constant(value: f64) -> Self;
     /// The number itself.
     fn value(self) -> f64;
+    /// The variable of a direction.
+    fn variable(value: f64, direction: usize) -> Self;
+    /// Derivative along a direction; none without derivatives.
+    fn slope(self, direction: usize) -> f64;
     /// A function of this number, by its value and its derivative there.
     fn chain(self, value: f64, derivative: f64) -> Self;
 
@@ -115,6 +119,16 @@ impl Real for f64 {
     }
 
     #[inline]
+    fn variable(value: f64, _direction: usize) -> Self {
+        value
+    }
+
+    #[inline]
+    fn slope(self, _direction: usize) -> f64 {
+        0.0
+    }
+
+    #[inline]
     fn chain(self, value: f64, _derivative: f64) -> Self {
         value
     }
@@ -130,14 +144,6 @@ pub(super) struct Dual<const N: usize> {
 }
 
 impl<const N: usize> Dual<N> {
-    /// A variable: the direction of which it is itself.
-    #[inline]
-    pub(super) fn variable(value: f64, direction: usize) -> Self {
-        let mut along = [0.0; N];
-        along[direction] = 1.0;
-        Self { value, along }
-    }
-
     #[inline]
     fn map(self, value: f64, factor: f64) -> Self {
         let mut along = self.along;
@@ -166,6 +172,18 @@ impl<const N: usize> Real for Dual<N> {
     #[inline]
     fn value(self) -> f64 {
         self.value
+    }
+
+    #[inline]
+    fn variable(value: f64, direction: usize) -> Self {
+        let mut along = [0.0; N];
+        along[direction] = 1.0;
+        Self { value, along }
+    }
+
+    #[inline]
+    fn slope(self, direction: usize) -> f64 {
+        self.along[direction]
     }
 
     #[inline]
