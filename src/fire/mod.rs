@@ -45,6 +45,9 @@ pub mod excess_fuel;
 
 pub mod fire_flow;
 
+pub mod tenability;
+
+mod crossing;
 mod search;
 
 pub use design_fire::DesignFire;
