@@ -45,6 +45,7 @@ pub mod excess_fuel;
 
 pub mod fire_flow;
 
+pub mod crew;
 pub mod tenability;
 
 mod crossing;
