@@ -48,6 +48,8 @@ pub mod fire_flow;
 pub mod crew;
 pub mod tenability;
 
+pub mod door_force;
+
 mod crossing;
 mod search;
 
