@@ -48,7 +48,9 @@ pub mod fire_flow;
 pub mod crew;
 pub mod tenability;
 
+pub mod door_burn_through;
 pub mod door_force;
+pub mod give_way;
 
 mod crossing;
 mod search;
