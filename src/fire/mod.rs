@@ -52,6 +52,8 @@ pub mod door_burn_through;
 pub mod door_force;
 pub mod give_way;
 
+pub mod place;
+
 mod crossing;
 mod search;
 
