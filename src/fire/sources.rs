@@ -402,6 +402,142 @@ pub const ISO_NFF: Source = Source {
     provenance: Provenance::Memory,
 };
 
+/// Dose of gas and heat.
+pub const ISO_13571: Source = Source {
+    key: "iso_13571",
+    citation: "ISO 13571, Life-threatening components of fire: guidelines for the estimation of time to compromised tenability (2007, 2012)",
+    locator: "[CO]/35 000, [HCN]^2.36/1.2e6, exp([CO2]/5), hot air and radiation (the sum of the two quoted in a public text): equations from memory",
+    provenance: Provenance::Memory,
+};
+
+/// Dose of low oxygen; limits of tenability.
+pub const PURSER_SFPE: Source = Source {
+    key: "purser_sfpe",
+    citation: "Purser, D. A., McAllister, J. L.: Assessment of hazards to occupants from smoke, toxic gases and heat, SFPE Handbook of Fire Protection Engineering",
+    locator: "low oxygen exp(8.13 - 0.54 (20.9 - [O2])); visibility 5 and 10 m, 2.5 kW/m², 60 °C, layer at 2 m; all from memory",
+    provenance: Provenance::Memory,
+};
+
+/// Extinction by soot.
+pub const MULHOLLAND_CROARKIN_2000: Source = Source {
+    key: "mulholland_croarkin_2000",
+    citation: "Mulholland, G. W., Croarkin, C.: Specific extinction coefficient of flame generated smoke, Fire and Materials 24 (2000) 227-230",
+    locator: "8.7 ± 1.1 m²/g (95 %), flaming; from memory",
+    provenance: Provenance::Memory,
+};
+
+/// Visibility through smoke.
+pub const JIN_1978: Source = Source {
+    key: "jin_1978",
+    citation: "Jin, T.: Visibility through fire smoke, Journal of Fire and Flammability 9 (1978) 135-155",
+    locator: "3 for reflecting and 8 for light-emitting signs: seen quoted in public texts, the spans 2 to 4 and 5 to 10 also",
+    provenance: Provenance::Seen,
+};
+
+/// Thermal classes of crews.
+pub const DONNELLY_2006: Source = Source {
+    key: "donnelly_2006",
+    citation: "Donnelly, M. K., Davis, W. D., Lawson, J. R., Selepak, M. J.: Thermal environment for electronic equipment used by first responders, NIST TN 1474 (2006)",
+    locator: "classes I to IV; temperatures and times of I and II seen, class III and all radiation from memory",
+    provenance: Provenance::Memory,
+};
+
+/// Thermal classes of crews.
+pub const FOSTER_ROBERTS_1994: Source = Source {
+    key: "foster_roberts_1994",
+    citation: "Foster, J. A., Roberts, G. V.: Measurements of the firefighting environment, Home Office Fire Research and Development Group, Report 61 (1994)",
+    locator: "routine, hazardous, extreme, critical; from memory",
+    provenance: Provenance::Memory,
+};
+
+/// Thermal classes of crews.
+pub const UTECH_1973: Source = Source {
+    key: "utech_1973",
+    citation: "Utech, H. P.: High temperatures vs. fire equipment, International Fire Chief 39 (1973) 26-27",
+    locator: "routine, ordinary, emergency; from memory",
+    provenance: Provenance::Memory,
+};
+
+/// Force on a door.
+pub const DOOR_FORCE: Source = Source {
+    key: "door_force",
+    citation: "Klote, J. H., Milke, J. A.: Principles of smoke management, ASHRAE; the form that NFPA 92 prints",
+    locator: "F = F_dc + W A dp/(2 (W - d)), with its table of greatest pressures; from memory",
+    provenance: Provenance::Memory,
+};
+
+/// Force on a door.
+pub const NFPA_101: Source = Source {
+    key: "nfpa_101",
+    citation: "NFPA 101, Life Safety Code, forces to open doors in means of egress",
+    locator: "30 lbf to set a door in motion; from memory",
+    provenance: Provenance::Memory,
+};
+
+/// Force on a door.
+pub const EN_12101_6: Source = Source {
+    key: "en_12101_6",
+    citation: "EN 12101-6, Smoke and heat control systems: pressure differential systems",
+    locator: "100 N at the handle; from memory",
+    provenance: Provenance::Memory,
+};
+
+/// Numbers that place a case beside experiments.
+pub const NUREG_1934: Source = Source {
+    key: "nureg_1934",
+    citation: "NUREG-1934 / EPRI 1023259, Nuclear power plant fire modeling analysis guidelines (2012)",
+    locator: "fire Froude number, flame over ceiling height, shape, equivalence ratio; from memory",
+    provenance: Provenance::Memory,
+};
+
+/// Doors.
+pub const IEBC_RESOURCE_A: Source = Source {
+    key: "iebc_resource_a",
+    citation: "International Existing Building Code, Resource A (2009): guidelines on fire ratings of archaic materials, table 5.1",
+    locator: "items D-1 (5 min) and D-4 (11 min, recommended 10)",
+    provenance: Provenance::Seen,
+};
+
+/// Doors.
+pub const KERBER_2012: Source = Source {
+    key: "kerber_2012",
+    citation: "Kerber, S.: Analysis of changing residential fire dynamics and its implications on firefighter operational timeframes, Fire Technology 48 (2012) 865-891",
+    locator: "inner doors in a furnace: about 300 to 320 s; from memory",
+    provenance: Provenance::Memory,
+};
+
+/// Doors.
+pub const SOLID_CORE_DOORS: Source = Source {
+    key: "solid_core_doors",
+    citation: "Common practice: the 20-minute door of NFPA 252 is a solid core of 45 mm",
+    locator: "18 to 25 min; from memory",
+    provenance: Provenance::Memory,
+};
+
+/// Slow pressure.
+pub const HARRIS_1983: Source = Source {
+    key: "harris_1983",
+    citation: "Harris, R. J.: The investigation and control of gas explosions in buildings and heating plant, British Gas / Spon (1983)",
+    locator: "glass 2 to 7 kPa, inner doors 2 to 3, light partitions 2 to 5, 50 mm blocks 4 to 5, 114 mm brick 7 to 15; from memory",
+    provenance: Provenance::Memory,
+};
+
+/// Slow pressure.
+pub const SLOW_PRESSURE: Source = Source {
+    key: "slow_pressure",
+    citation: "Rasbash, D. J., on the relief of gas explosions in buildings; NFPA 68; tests of British Gas",
+    locator: "light roof and cladding 2 to 5 kPa, studs with plasterboard 3 to 7, held brick of 230 mm 23 to 35; from memory",
+    provenance: Provenance::Memory,
+};
+
+/// Blast.
+pub const CLANCEY_1972: Source = Source {
+    key: "clancey_1972",
+    citation: "Clancey, V. J.: Diagnostic features of explosion damage, Sixth International Meeting of Forensic Sciences, Edinburgh (1972)",
+    locator: "1.03 kPa typical glass breakage; 3.4 to 6.9 kPa windows usually shattered; table seen in public copies",
+    provenance: Provenance::Seen,
+};
+
 /// All publications, in the order of this file.
 pub const ALL: &[&Source] = &[
     &HUGGETT_1980,
@@ -451,6 +587,23 @@ pub const ALL: &[&Source] = &[
     &ROYER_NELSON_1959,
     &NFA_FORMULA,
     &ISO_NFF,
+    &ISO_13571,
+    &PURSER_SFPE,
+    &MULHOLLAND_CROARKIN_2000,
+    &JIN_1978,
+    &DONNELLY_2006,
+    &FOSTER_ROBERTS_1994,
+    &UTECH_1973,
+    &DOOR_FORCE,
+    &NFPA_101,
+    &EN_12101_6,
+    &NUREG_1934,
+    &IEBC_RESOURCE_A,
+    &KERBER_2012,
+    &SOLID_CORE_DOORS,
+    &HARRIS_1983,
+    &SLOW_PRESSURE,
+    &CLANCEY_1972,
 ];
 
 /// The publication of a key.
