@@ -102,7 +102,7 @@ pub(super) const OXYGEN_LIMIT: f64 = 0.135;
 /// Least temperature of a flame, K.
 pub(super) const FLAME_LEAST_K: f64 = 1700.0;
 /// Width over which a flame weakens, kg/kg.
-pub(super) const FLAME_BAND: f64 = 0.03;
+pub(super) const FLAME_BAND: f64 = 0.06;
 
 /// Does unburned gas light where it meets air? 0 below 700 K, 1 above 900 K.
 #[inline]

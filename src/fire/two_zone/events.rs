@@ -12,6 +12,8 @@ use super::outcome::{Event, EventKind, Sample};
 pub(super) struct Pending {
     /// Time fire gas has stood against each opening, s.
     exposed_s: Vec<f64>,
+    /// Time each flame has been too weak to last, s.
+    weak_s: Vec<f64>,
     detectors: Vec<Device>,
     heads: Vec<Device>,
     moves_done: usize,
@@ -27,8 +29,10 @@ pub(super) struct Reached {
     pub to: f64,
 }
 
-/// A flame below this share of what it wants is out.
-const OUT_SHARE: f64 = 0.02;
+/// Share of a flame below which it is out: the limit itself; the band about it only keeps the rates smooth.
+const OUT_SHARE: f64 = 0.5;
+/// How long a flame too weak to last lingers, s.
+const LINGERS_S: f64 = 30.0;
 /// Fire gas that a door is exposed to, K.
 const EXPOSING_K: f64 = 573.0;
 
@@ -39,6 +43,7 @@ impl Pending {
         let device = Device::at(network.ambient.indoor_temperature_k);
         Self {
             exposed_s: vec![0.0; network.openings.len()],
+            weak_s: vec![0.0; network.fires.len()],
             detectors: vec![device; network.detectors.len()],
             heads: vec![device; network.sprinklers.len()],
             moves_done: 0,
@@ -191,12 +196,9 @@ impl Pending {
                 continue;
             }
             if control.alight {
-                let short = |kw: f64| OUT_SHARE - kw / wanted_kw;
-                consider(
-                    EventKind::WentOut(index),
-                    short(from.fires[index].heat_release_kw),
-                    short(to.fires[index].heat_release_kw),
-                );
+                let stood_s = self.weak_s[index];
+                let more_s = if is_weak(to, index) { to.time_s - from.time_s } else { -stood_s };
+                consider(EventKind::WentOut(index), stood_s - LINGERS_S, stood_s + more_s - LINGERS_S);
             } else {
                 // Another flame of the room, or gas hot enough, lights it where there is oxygen again.
                 let pilot = after.upper.temperature_k > 800.0
@@ -209,7 +211,7 @@ impl Pending {
                     let air = |room: &super::outcome::RoomState| {
                         let base = fire.base_height_m < room.interface_height_m - 0.1;
                         let oxygen = if base { room.lower.gas.oxygen } else { room.upper.gas.oxygen };
-                        oxygen - (OXYGEN_LIMIT + FLAME_BAND)
+                        oxygen - (OXYGEN_LIMIT + 0.5 * FLAME_BAND)
                     };
                     consider(EventKind::Relit(index), air(before), air(after));
                 }
@@ -268,6 +270,10 @@ impl Pending {
             if hot {
                 self.exposed_s[index] += to.time_s - from.time_s;
             }
+        }
+        for (index, weak_s) in self.weak_s.iter_mut().enumerate() {
+            let weak = to.fires[index].alight && is_weak(to, index);
+            *weak_s = if weak { *weak_s + to.time_s - from.time_s } else { 0.0 };
         }
         for (device, detector) in self.detectors.iter_mut().zip(&network.detectors) {
             device.element_k = device.after(network, detector, from, to).0;
@@ -329,12 +335,16 @@ fn spray(network: &Network, controls: &mut Controls, index: usize, sample: &Samp
     }
 }
 
+fn is_weak(sample: &Sample, fire: usize) -> bool {
+    sample.fires[fire].flame_share < OUT_SHARE
+}
+
 fn light(control: &mut FireControl, time_s: f64) {
     control.lit_s = Some(time_s);
     control.alight = true;
 }
 
-fn move_leaf(leaf: &mut Leaf, time_s: f64, open_fraction: f64) {
+pub(super) fn move_leaf(leaf: &mut Leaf, time_s: f64, open_fraction: f64) {
     *leaf = Leaf { from: leaf.open_fraction(time_s), to: open_fraction.clamp(0.0, 1.0), since_s: time_s };
 }
 

@@ -16,6 +16,7 @@ mod plume;
 mod radiation;
 mod rates;
 mod real;
+mod right_side;
 mod room;
 mod sampling;
 mod snapshot;
@@ -24,6 +25,7 @@ mod surfaces;
 mod vents;
 
 pub use drive::run;
+pub use right_side::RightSide;
 pub use network::{
     Ambient, Detector, Element, Fan, Fire, Fuel, GivesWay, HeatRelease, Ignition, Lie, Linings, Move, Network,
     Opening, Position, Room, Side, Slab, Sprinkler, Supply, Zoning,

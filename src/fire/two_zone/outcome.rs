@@ -132,6 +132,8 @@ pub struct FireState {
     pub drawn_oxygen: f64,
     /// Height of the flame, m.
     pub flame_height_m: f64,
+    /// Share of the flame that the gas it draws lets burn; below a half it goes out.
+    pub flame_share: f64,
 }
 
 /// The building at one moment.

@@ -12,6 +12,9 @@ use super::real::{Dual, Real};
 use super::room::{self, Around, Burning, Derived, Inner, Inside, Reaction, black_w_m2};
 use super::vents::{self, Flank, Flow};
 
+/// Tangent of the half angle at which a turbulent jet widens, 12°. Common practice.
+const SPREADS: f64 = 0.21;
+
 /// Directions of a vent: pressure, volume and both masses of either side.
 pub(super) const VENT_WAYS: usize = 8;
 /// Directions of a room: its core, then its faces.
@@ -42,6 +45,7 @@ pub(super) struct FireRates {
     pub wanted_w: f64,
     pub heat_w: f64,
     pub supply_kg_s: f64,
+    pub flame: f64,
     pub drawn: f64,
     pub clock_rate: f64,
     pub drawn_kg_s: f64,
@@ -135,7 +139,6 @@ impl Look {
             self.fan(model, time_s, fan, slopes);
         }
         self.mixing(model);
-        self.draughts(model);
         self.rooms(model, slopes);
         self.gather(model, controls, state, out);
     }
@@ -185,8 +188,8 @@ impl Look {
                 diameter_m: fire.diameter_m,
                 images: match fire.position {
                     Position::Centre => 1.0,
-                    Position::Wall => 2.0,
-                    Position::Corner => 4.0,
+                    Position::Wall => std::f64::consts::SQRT_2,
+                    Position::Corner => 2.0,
                 },
                 radiative: fire.radiative_fraction,
             });
@@ -247,6 +250,8 @@ impl Look {
 
     /// Sends the gas of a flow where it belongs: hot gas to the hot layer beyond, cool gas to the cool one.
     fn pass<R: Real>(&mut self, model: Model<'_>, vent: &Vent, flow: &Flow<R>, state: &[f64]) {
+        let mut low_kg_s = [0.0; 2];
+        let mut low_k = [0.0; 2];
         for giver in 0..2 {
             let taker = 1 - giver;
             let mut hot_kg_s = 0.0;
@@ -281,6 +286,8 @@ impl Look {
                         let upper = share_to_upper(&self.now[room], temperature_k);
                         send(Some((room, 0)), upper);
                         send(Some((room, 1)), 1.0 - upper);
+                        low_kg_s[taker] += mass.value() * (1.0 - upper);
+                        low_k[taker] = temperature_k;
                         hot_kg_s += mass.value() * upper;
                         hot_heat += mass.value() * upper * temperature_k;
                     }
@@ -311,6 +318,9 @@ impl Look {
                     });
                 }
             }
+        }
+        if vent.opening.is_some() && vent.lie == Lie::Vertical {
+            self.draughts(model, vent, low_kg_s, low_k);
         }
         if let Some(index) = vent.opening {
             let out = flow.from[0][0].value() + flow.from[0][1].value();
@@ -521,18 +531,21 @@ impl Look {
         }
     }
 
-    /// Draught across the plumes of each room: cool inflow over the section it spreads through.
-    fn draughts(&mut self, model: Model<'_>) {
-        for transfer in &self.transfers {
-            let (Some((room, 1)), from) = (transfer.to, transfer.from) else { continue };
-            if from.is_some_and(|(other, _)| other == room) {
+    /// Draught across the plumes of each room, m/s: what comes in low spreads as a jet of the width of its opening, by
+    /// [`SPREADS`] on either side, until it fills the width of the room; taken at half the length of the room.
+    fn draughts(&mut self, model: Model<'_>, vent: &Vent, flow_in_kg_s: [f64; 2], temperatures_k: [f64; 2]) {
+        for end in 0..2 {
+            let (Some(room), flow) = (vent.rooms[end], flow_in_kg_s[end]) else { continue };
+            if flow <= 0.0 {
                 continue;
             }
             let data = &model.building.rooms[room];
-            let density = model.building.ambient.pressure_pa / (GAS_CONSTANT_J_KGK * transfer.temperature_k);
-            let across_m = data.length_m.min(data.width_m);
+            let density = model.building.ambient.pressure_pa / (GAS_CONSTANT_J_KGK * temperatures_k[end]);
+            let (long_m, wide_m) = (data.length_m.max(data.width_m), data.length_m.min(data.width_m));
+            let opening_m = vent.area_m2 / (vent.top_m - vent.bottom_m).max(1e-3);
+            let across_m = (opening_m + 2.0 * SPREADS * 0.5 * long_m).min(wide_m);
             let section_m2 = across_m * self.now[room].interface_m.max(0.1 * data.height_m);
-            self.around[room].draught_m_s += transfer.mass_kg_s / density / section_m2;
+            self.around[room].draught_m_s += flow / density / section_m2;
         }
     }
 
@@ -712,6 +725,7 @@ impl Look {
                         wanted_w: 0.0,
                         heat_w,
                         supply_kg_s: reaction.supply_kg_s,
+                        flame: reaction.flame,
                         drawn: reaction.drawn,
                         clock_rate: 1.0,
                         drawn_kg_s: reaction.drawn_kg_s,

@@ -103,6 +103,8 @@ pub(super) struct Reaction<R> {
     /// Fuel given off, kg/s.
     pub supply_kg_s: R,
     pub products: Products,
+    /// Share of the flame that the gas it draws lets burn.
+    pub flame: f64,
     /// Oxygen of the gas that the plume draws, kg/kg, and the oxygen it draws, kg/s.
     pub drawn: f64,
     pub drawn_kg_s: f64,
@@ -174,6 +176,7 @@ pub(super) fn inside<R: Real>(
                     oxygen_kg_s: zero,
                     supply_kg_s: supply,
                     products: products(&fuel.fuel, 0.0, 300.0),
+                    flame: 0.0,
                     drawn: 0.0,
                     drawn_kg_s: 0.0,
                 });
@@ -200,12 +203,12 @@ pub(super) fn inside<R: Real>(
         let high_kg_s = (all_kg_s - low_kg_s).at_least(0.0);
         let drawn_kg_s = low_kg_s + high_kg_s + 1e-12;
         let drawn_oxygen_kg_s = low_kg_s * lower_oxygen + high_kg_s * upper_oxygen;
-        let oxygen = if fire.oxygen_limited {
+        let (flame, oxygen) = if fire.oxygen_limited {
             let mixed_k = (low_kg_s * now.lower_k + high_kg_s * now.upper_k) / drawn_kg_s;
             let share = flame_share(drawn_oxygen_kg_s / drawn_kg_s, mixed_k);
-            smooth_min(share * wanted_oxygen, drawn_oxygen_kg_s)
+            (share.value(), smooth_min(share * wanted_oxygen, drawn_oxygen_kg_s))
         } else {
-            R::constant(wanted_oxygen)
+            (1.0, R::constant(wanted_oxygen))
         };
         let burns = oxygen / wanted_oxygen;
         let supply = (burns + (-burns + 1.0) * fire.without_flame) * wanted_fuel;
@@ -216,6 +219,7 @@ pub(super) fn inside<R: Real>(
             oxygen_kg_s: oxygen,
             supply_kg_s: supply,
             products: products(&fuel.fuel, equivalence_ratio, now.upper_k.value()),
+            flame,
             drawn: drawn_oxygen_kg_s.value() / drawn_kg_s.value(),
             drawn_kg_s: drawn_oxygen_kg_s.value(),
         });
@@ -251,6 +255,7 @@ pub(super) fn inside<R: Real>(
                 oxygen_kg_s: oxygen,
                 supply_kg_s: zero,
                 products: products(&fuel.fuel, 0.5, now.upper_k.value()),
+                flame: 0.0,
                 drawn: 0.0,
                 drawn_kg_s: 0.0,
             });

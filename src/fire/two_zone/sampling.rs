@@ -143,6 +143,7 @@ impl Between {
             fire.heat_release_kw = line(from.heat_release_kw, to.heat_release_kw);
             fire.fuel_kg_s = line(from.fuel_kg_s, to.fuel_kg_s);
             fire.drawn_oxygen = line(from.drawn_oxygen, to.drawn_oxygen);
+            fire.flame_share = line(from.flame_share, to.flame_share);
             fire.flame_height_m = line(from.flame_height_m, to.flame_height_m);
         }
         self.sample = sample;

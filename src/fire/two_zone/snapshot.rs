@@ -36,6 +36,7 @@ pub(super) fn fill(
             heat_release_kw: heat_kw,
             fuel_kg_s: rates.supply_kg_s,
             drawn_oxygen: rates.drawn,
+            flame_share: rates.flame,
             flame_height_m: plume::flame_height_m(heat_kw, fire.diameter_m),
         });
     }

@@ -240,8 +240,8 @@ fn measure(building: &Building, from: &[f64], to: &[f64], error: &[f64], toleran
         let least = -1e-5 * room.air_kg;
         let bad = to[at + 2] < least
             || to[at + 3] < least
-            || to[at + 1] < -1e-5 * volume
-            || to[at + 1] > volume * (1.0 + 1e-5)
+            || to[at + 1] < -1e-2 * volume
+            || to[at + 1] > volume * (1.0 + 1e-2)
             || building.ambient.pressure_pa + to[at] <= 0.0;
         if bad || !of_room.is_finite() {
             return Tried { error: f64::INFINITY, room: index };
