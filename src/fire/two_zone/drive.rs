@@ -120,7 +120,7 @@ impl<'a> Run<'a> {
             work: Work::default(),
             before: Sample::default(),
             after: Sample::default(),
-            between: Between::new(solver.state.len()),
+            between: Between::default(),
             start: solver.state.clone(),
             samples_done: 0,
             solver,
@@ -158,6 +158,7 @@ impl<'a> Run<'a> {
                 return Err(self.failed(FailureReason::StepTooSmall, None));
             }
             let tried = self.solver.attempt(self.model, &self.controls, tried_s, self.plan.tolerance);
+            if std::env::var("TRACE").is_ok() { let r=&self.before.rooms[tried.room]; eprintln!("{from_s:.4} {tried_s:.3e} err {:.2e} room {} z {:.4} ml {:.3e} Tl {:.1} Tu {:.1} p {:.2} q {:.1}", tried.error, tried.room, r.interface_height_m, r.lower.mass_kg, r.lower.temperature_k, r.upper.temperature_k, r.pressure_pa, r.heat_release_kw); }
             let factor = (0.9 * tried.error.max(1e-6).powf(-1.0 / 3.0)).clamp(0.2, 4.0);
             if !(tried.error <= 1.0) {
                 self.work.rejected += 1;
@@ -195,7 +196,6 @@ impl<'a> Run<'a> {
         }
         // What is asked for at the end itself, or where nothing was to be done.
         self.after.clone_from(&self.before);
-        self.between.stay(&self.solver.state, self.solver.time_s);
         self.report_last(sample);
         Ok(self.ended())
     }
@@ -219,10 +219,8 @@ impl<'a> Run<'a> {
 
     /// Takes the step that was tried and looks at its end.
     fn take(&mut self, reached_s: f64) {
-        self.between.leave(&self.solver.state, &self.solver.rates, self.solver.time_s);
         self.solver.accept(reached_s);
         self.solver.look(self.model, &self.controls);
-        self.between.arrive(&self.solver.state, &self.solver.rates, reached_s);
         snapshot::fill(
             self.model,
             &self.controls,
@@ -281,7 +279,7 @@ impl<'a> Run<'a> {
             && at_s < self.solver.time_s
         {
             self.samples_done += 1;
-            sample(self.between.at(self.model, at_s, &self.before, &self.after));
+            sample(self.between.at(at_s, &self.before, &self.after));
         }
     }
 
@@ -290,7 +288,7 @@ impl<'a> Run<'a> {
             && at_s <= self.plan.duration_s
         {
             self.samples_done += 1;
-            sample(self.between.at(self.model, at_s, &self.before, &self.after));
+            sample(self.between.at(at_s, &self.before, &self.after));
         }
     }
 

@@ -7,8 +7,8 @@
 //! matrix loses nothing and the method keeps mass, energy and elements to rounding.
 
 use super::building::{Building, SURFACES, ledger};
-use super::gas::{GAMMA, OXYGEN, PRODUCTS, SPECIFIC_HEAT_J_KGK};
-use super::rates::{CORE, Look, Model, Place, Transfer, held_kg, place};
+use super::gas::{GAMMA, OXYGEN, PRODUCTS, SPECIES_MAX, SPECIFIC_HEAT_J_KGK};
+use super::rates::{CORE, Look, Model, Transfer, held_kg, place};
 use super::room::Inner;
 
 type Block = [[f64; CORE]; CORE];
@@ -22,6 +22,12 @@ struct Way {
     transfer: Transfer,
     /// One over the mass of the giver; zero outside.
     per_kg: f64,
+    /// Slopes of the giver's temperature.
+    warms: [f64; 4],
+    /// Mass fractions of what it gives.
+    shares: [f64; SPECIES_MAX],
+    /// First species of both ends in the state.
+    ends: [usize; 2],
 }
 
 /// The lift of a plume, with slopes along the room's own directions.
@@ -32,6 +38,7 @@ struct Lift {
     slopes: [f64; CORE + SURFACES],
     per_kg: f64,
     temperature_k: f64,
+    shares: [f64; SPECIES_MAX],
 }
 
 /// The faces of one room: how they hang together and on the core.
@@ -189,8 +196,16 @@ impl Matrix {
         self.ways.clear();
         self.lifts.clear();
         for transfer in &look.transfers {
-            let per_kg = transfer.from.map_or(0.0, |(room, layer)| 1.0 / held_kg(building, state, room, layer));
-            self.ways.push(Way { transfer: *transfer, per_kg });
+            let (per_kg, warms, shares) = match transfer.from {
+                Some((room, layer)) => (
+                    1.0 / held_kg(building, state, room, layer),
+                    temperature_slopes(building, look, state, room, layer),
+                    look.shares[room][layer],
+                ),
+                None => (0.0, [0.0; 4], building.outside_air),
+            };
+            let ends = [place(building, transfer.from), place(building, transfer.to)];
+            self.ways.push(Way { transfer: *transfer, per_kg, warms, shares, ends });
         }
         for (room, inner) in look.inner_slopes.iter().enumerate() {
             if inner.lifted_kg_s.value > 0.0 {
@@ -200,6 +215,7 @@ impl Matrix {
                     slopes: inner.lifted_kg_s.along,
                     per_kg: 1.0 / held_kg(building, state, room, 1),
                     temperature_k: look.now[room].lower_k,
+                    shares: look.shares[room][1],
                 });
             }
         }
@@ -208,7 +224,7 @@ impl Matrix {
 
         // Rows hold heat to both layers (0 all, 1 hot), masses, oxygen, fuel; turned into rates below.
         for index in 0..self.ways.len() {
-            self.add_way(building, look, state, index);
+            self.add_way(building, index);
         }
         for index in 0..self.lifts.len() {
             self.add_lift(building, look, state, index);
@@ -219,10 +235,12 @@ impl Matrix {
         self.to_rates(building, state, rates);
     }
 
-    fn add_way(&mut self, building: &Building, look: &Look, state: &[f64], index: usize) {
+    fn add_way(&mut self, building: &Building, index: usize) {
         let way = self.ways[index];
         let transfer = &way.transfer;
         let warmth = SPECIFIC_HEAT_J_KGK * transfer.temperature_k;
+        let oxygen = way.shares[OXYGEN];
+        let fuel: f64 = way.shares[PRODUCTS..building.species].iter().sum();
         // Slopes of the flow along both rooms.
         for end in 0..2 {
             let Some(column) = transfer.rooms[end] else { continue };
@@ -230,8 +248,6 @@ impl Matrix {
             for (place, sign) in [(transfer.from, -1.0), (transfer.to, 1.0)] {
                 let Some((row, layer)) = place else { continue };
                 let block = &mut self.blocks[self.graph.at(row, column)];
-                let oxygen = share(building, state, transfer.from, OXYGEN);
-                let fuel = fuel_share(building, state, transfer.from);
                 for (way, slope) in slopes.iter().enumerate() {
                     let moved = sign * slope;
                     block[0][way] += warmth * moved;
@@ -246,16 +262,13 @@ impl Matrix {
         }
         // The giver's own warmth and composition.
         if let Some((giver, from_layer)) = transfer.from {
-            let warms = temperature_slopes(building, look, state, giver, from_layer);
             let mass = transfer.mass_kg_s;
-            let oxygen = share(building, state, transfer.from, OXYGEN);
-            let fuel = fuel_share(building, state, transfer.from);
             for (place, sign) in [(transfer.from, -1.0), (transfer.to, 1.0)] {
                 let Some((row, layer)) = place else { continue };
                 let at = self.graph.at(row, giver);
                 let block = &mut self.blocks[at];
                 let carried = sign * mass * way.per_kg;
-                for (column, warm) in warms.iter().enumerate() {
+                for (column, warm) in way.warms.iter().enumerate() {
                     let heat = sign * mass * SPECIFIC_HEAT_J_KGK * warm;
                     block[0][column] += heat;
                     if layer == 0 {
@@ -277,9 +290,8 @@ impl Matrix {
         let lift = self.lifts[index];
         let at = self.graph.at(lift.room, lift.room);
         let block = &mut self.blocks[at];
-        let giver = Some((lift.room, 1));
-        let oxygen = share(building, state, giver, OXYGEN);
-        let fuel = fuel_share(building, state, giver);
+        let oxygen = lift.shares[OXYGEN];
+        let fuel: f64 = lift.shares[PRODUCTS..building.species].iter().sum();
         let warmth = SPECIFIC_HEAT_J_KGK * lift.temperature_k;
         let warms = temperature_slopes(building, look, state, lift.room, 1);
         for column in 0..CORE {
@@ -550,8 +562,8 @@ impl Matrix {
             let at = layout.pressure(index);
             right[at..at + 4].copy_from_slice(&core[..4]);
         }
-        self.solve_species(model, look, state, right);
-        self.solve_ledger(model, look, state, right);
+        self.solve_species(model, look, right);
+        self.solve_ledger(model, right);
     }
 
     fn solve_core(&mut self) {
@@ -616,7 +628,7 @@ impl Matrix {
         }
     }
 
-    fn solve_species(&mut self, model: Model<'_>, look: &Look, state: &[f64], right: &mut [f64]) {
+    fn solve_species(&mut self, model: Model<'_>, look: &Look, right: &mut [f64]) {
         let building = model.building;
         let layout = &building.layout;
         self.move_flows();
@@ -629,9 +641,9 @@ impl Matrix {
                 }
                 None => moved,
             };
-            let (from, to) = (place(building, way.transfer.from), place(building, way.transfer.to));
-            for species in 0..building.species {
-                let carried = diluted * share(building, state, way.transfer.from, species);
+            let [from, to] = way.ends;
+            for (species, share) in way.shares[..building.species].iter().enumerate() {
+                let carried = diluted * share;
                 self.carried[from + species] -= carried;
                 self.carried[to + species] += carried;
             }
@@ -639,8 +651,8 @@ impl Matrix {
         for (lift, &moved) in self.lifts.iter().zip(&self.lifted) {
             let diluted = moved - lift.mass_kg_s * lift.per_kg * self.core[lift.room][3];
             let (from, to) = (layout.species_of(lift.room, 1), layout.species_of(lift.room, 0));
-            for species in 0..building.species {
-                let carried = diluted * share(building, state, Some((lift.room, 1)), species);
+            for (species, share) in lift.shares[..building.species].iter().enumerate() {
+                let carried = diluted * share;
                 self.carried[from + species] -= carried;
                 self.carried[to + species] += carried;
             }
@@ -712,7 +724,7 @@ impl Matrix {
     }
 
     /// The ledger and the clocks: nothing waits for them.
-    fn solve_ledger(&mut self, model: Model<'_>, look: &Look, state: &[f64], right: &mut [f64]) {
+    fn solve_ledger(&mut self, model: Model<'_>, right: &mut [f64]) {
         let building = model.building;
         let layout = &building.layout;
         let base = layout.ledger;
@@ -725,8 +737,7 @@ impl Matrix {
             };
             let mut warms = 0.0;
             if let Some((room, layer)) = transfer.from {
-                let slopes = temperature_slopes(building, look, state, room, layer);
-                warms = (0..4).map(|way| slopes[way] * self.core[room][way]).sum();
+                warms = (0..4).map(|column| way.warms[column] * self.core[room][column]).sum();
                 // Species that leave at the rate they are now there.
                 let first = layout.species_of(room, layer);
                 for species in 0..building.species {
@@ -791,23 +802,6 @@ fn temperature_slopes(building: &Building, look: &Look, state: &[f64], room: usi
     } else {
         [temperature / pressure, -by_volume, 0.0, by_mass]
     }
-}
-
-/// Share of a species in what a place gives.
-#[inline]
-fn share(building: &Building, state: &[f64], from: Place, species: usize) -> f64 {
-    match from {
-        Some((room, layer)) => {
-            state[building.layout.species_of(room, layer) + species] / held_kg(building, state, room, layer)
-        }
-        None => building.outside_air[species],
-    }
-}
-
-/// Share of unburned fuel gas, of all fuels together.
-#[inline]
-fn fuel_share(building: &Building, state: &[f64], from: Place) -> f64 {
-    (PRODUCTS..building.species).map(|species| share(building, state, from, species)).sum()
 }
 
 #[inline]

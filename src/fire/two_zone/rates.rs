@@ -3,7 +3,8 @@
 use super::building::{Building, SURFACES, Vent, ledger};
 use super::controls::Controls;
 use super::gas::{
-    CARBON_DIOXIDE, FUELS_MAX, GAMMA, GAS_CONSTANT_J_KGK, OXYGEN, PRODUCTS, SOOT, SPECIFIC_HEAT_J_KGK, WATER,
+    CARBON_DIOXIDE, FUELS_MAX, GAMMA, GAS_CONSTANT_J_KGK, OXYGEN, PRODUCTS, SOOT, SPECIES_MAX,
+    SPECIFIC_HEAT_J_KGK, WATER,
 };
 use super::jets;
 use super::network::{Fan, Lie, Network, Position, Side};
@@ -69,6 +70,8 @@ pub(super) struct Look {
     pub inside: Vec<Inside<f64>>,
     pub now: Vec<Derived<f64>>,
     pub zones: Vec<Zones<f64>>,
+    /// Mass fractions of both layers of each room.
+    pub shares: Vec<[[f64; SPECIES_MAX]; 2]>,
     pub around: Vec<Around>,
     pub inner: Vec<Inner<f64>>,
     pub transfers: Vec<Transfer>,
@@ -133,7 +136,7 @@ impl Look {
         self.radiated_out_w = 0.0;
         self.openings.fill(OpeningRates::default());
         for vent in &model.building.vents {
-            self.vent(model, controls, time_s, state, vent, slopes);
+            self.vent(model, controls, time_s, vent, slopes);
         }
         for fan in &model.network.fans {
             self.fan(model, time_s, fan, slopes);
@@ -155,10 +158,20 @@ impl Look {
         self.now.clear();
         self.zones.clear();
         self.around.clear();
+        self.shares.clear();
         for (index, room) in building.rooms.iter().enumerate() {
             let inside = variables::<f64>(building, index, state);
             let now = inside.derived(room);
-            let glow = [glow(building, index, 0, state), glow(building, index, 1, state)];
+            let mut shares = [[0.0; SPECIES_MAX]; 2];
+            for (layer, shares) in shares.iter_mut().enumerate() {
+                let per_kg = 1.0 / held_kg(building, state, index, layer);
+                let first = building.layout.species_of(index, layer);
+                for (share, kg) in shares.iter_mut().zip(&state[first..first + building.species]) {
+                    *share = kg * per_kg;
+                }
+            }
+            self.shares.push(shares);
+            let glow = [0, 1].map(|layer| glow(building, index, layer, state, &shares[layer]));
             let around = Around { draught_m_s: 0.0, glow };
             self.zones.push(radiation::zones(room, &now, &around, &inside.surfaces_k));
             self.inside.push(inside);
@@ -201,7 +214,6 @@ impl Look {
         model: Model<'_>,
         controls: &Controls,
         time_s: f64,
-        state: &[f64],
         vent: &Vent,
         slopes: bool,
     ) {
@@ -212,10 +224,10 @@ impl Look {
         }
         if slopes {
             let flow = self.flow::<Dual<VENT_WAYS>>(model, vent, width_m, share);
-            self.pass(model, vent, &flow, state);
+            self.pass(model, vent, &flow);
         } else {
             let flow = self.flow::<f64>(model, vent, width_m, share);
-            self.pass(model, vent, &flow, state);
+            self.pass(model, vent, &flow);
         }
         if vent.lie == Lie::Vertical && share > 0.0 {
             self.shine(model, vent, vent.area_m2 * share);
@@ -249,7 +261,7 @@ impl Look {
     }
 
     /// Sends the gas of a flow where it belongs: hot gas to the hot layer beyond, cool gas to the cool one.
-    fn pass<R: Real>(&mut self, model: Model<'_>, vent: &Vent, flow: &Flow<R>, state: &[f64]) {
+    fn pass<R: Real>(&mut self, model: Model<'_>, vent: &Vent, flow: &Flow<R>) {
         let mut low_kg_s = [0.0; 2];
         let mut low_k = [0.0; 2];
         for giver in 0..2 {
@@ -293,7 +305,7 @@ impl Look {
                     }
                 }
                 if layer == 0 || self.now_is_hot(vent.rooms[giver], layer) {
-                    self.jet(model, vent, giver, layer, mass.value(), temperature_k, state);
+                    self.jet(model, vent, giver, layer, mass.value(), temperature_k);
                 }
             }
             // Hot gas that comes through an opening rises to the layer beyond and draws cool gas along.
@@ -346,19 +358,15 @@ impl Look {
         layer: usize,
         mass_kg_s: f64,
         temperature_k: f64,
-        state: &[f64],
     ) {
         let Some(room) = vent.rooms[giver] else { return };
         if temperature_k <= 700.0 || mass_kg_s <= 0.0 {
             return;
         }
         let building = model.building;
-        let layout = &building.layout;
-        let whole_kg = state[layout.pressure(room) + 2 + layer].max(1e-8 * building.rooms[room].air_kg);
-        let first = layout.species_of(room, layer);
         let lit = super::combustion::lights(temperature_k);
         for (index, fuel) in building.fuels.iter().enumerate() {
-            let share = (state[first + PRODUCTS + index] / whole_kg).max(0.0);
+            let share = self.shares[room][layer][PRODUCTS + index].max(0.0);
             let wants = mass_kg_s * share * fuel.oxygen_need * lit;
             if wants <= 0.0 {
                 continue;
@@ -590,7 +598,6 @@ impl Look {
     fn gather(&mut self, model: Model<'_>, controls: &Controls, state: &[f64], out: &mut [f64]) {
         let building = model.building;
         let layout = &building.layout;
-        let species = building.species;
         out.fill(0.0);
         self.mass.clear();
         self.mass.resize(building.rooms.len(), [0.0; 2]);
@@ -610,26 +617,25 @@ impl Look {
                     rooms: [None, None],
                     temperature_k: self.now[index].lower_k,
                 };
-                self.carry(building, state, &lift, out);
+                self.carry(building, &lift, out);
             }
         }
         for index in 0..self.transfers.len() {
             let transfer = self.transfers[index];
-            self.carry(building, state, &transfer, out);
+            self.carry(building, &transfer, out);
         }
-        self.react(model, state, controls, out);
+        self.react(model, controls, out);
 
-        let (gas, faces) = (GAMMA, SURFACES);
         for (index, room) in building.rooms.iter().enumerate() {
             let at = layout.pressure(index);
             let [upper_w, lower_w] = self.heat[index];
             let pressure_pa = building.ambient.pressure_pa + state[at];
-            let pressure_rate = (gas - 1.0) * (upper_w + lower_w) / room.volume_m3;
+            let pressure_rate = (GAMMA - 1.0) * (upper_w + lower_w) / room.volume_m3;
             out[at] = pressure_rate;
-            out[at + 1] = ((gas - 1.0) * upper_w - state[at + 1] * pressure_rate) / (gas * pressure_pa);
+            out[at + 1] = ((GAMMA - 1.0) * upper_w - state[at + 1] * pressure_rate) / (GAMMA * pressure_pa);
             out[at + 2] += self.mass[index][0];
             out[at + 3] += self.mass[index][1];
-            for surface in 0..faces {
+            for surface in 0..SURFACES {
                 let Some(chain) = room.chains[surface] else { continue };
                 let chain = &building.chains[chain];
                 let first = room.nodes[surface];
@@ -649,11 +655,10 @@ impl Look {
             }
         }
         out[layout.ledger + ledger::LOST] += self.radiated_out_w;
-        let _ = species;
     }
 
     /// Adds one transfer to both its ends.
-    fn carry(&mut self, building: &Building, state: &[f64], transfer: &Transfer, out: &mut [f64]) {
+    fn carry(&mut self, building: &Building, transfer: &Transfer, out: &mut [f64]) {
         let layout = &building.layout;
         let mass = transfer.mass_kg_s;
         let enthalpy_w = mass * SPECIFIC_HEAT_J_KGK * transfer.temperature_k;
@@ -679,14 +684,11 @@ impl Look {
         }
         let from = place(building, transfer.from);
         let to = place(building, transfer.to);
-        for species in 0..building.species {
-            let share = match transfer.from {
-                Some((room, layer)) => {
-                    state[layout.species_of(room, layer) + species]
-                        / held_kg(building, state, room, layer)
-                }
-                None => building.outside_air[species],
-            };
+        let shares = match transfer.from {
+            Some((room, layer)) => &self.shares[room][layer],
+            None => &building.outside_air,
+        };
+        for (species, share) in shares[..building.species].iter().enumerate() {
             let moved = mass * share;
             out[from + species] -= moved;
             out[to + species] += moved;
@@ -694,7 +696,7 @@ impl Look {
     }
 
     /// Adds what burns and what fuel comes.
-    fn react(&mut self, model: Model<'_>, _state: &[f64], controls: &Controls, out: &mut [f64]) {
+    fn react(&mut self, model: Model<'_>, controls: &Controls, out: &mut [f64]) {
         let building = model.building;
         let layout = &building.layout;
         let fuel_k = building.ambient.indoor_temperature_k;
@@ -862,23 +864,26 @@ fn outside<R: Real>(density_kg_m3: f64) -> Flank<R> {
 }
 
 /// What makes a layer glow.
-fn glow(building: &Building, room: usize, layer: usize, state: &[f64]) -> Glow {
-    let first = building.layout.species_of(room, layer);
-    let mass = held_kg(building, state, room, layer);
-    let share = |species: usize| (state[first + species] / mass).clamp(0.0, 1.0);
+fn glow(
+    building: &Building,
+    room: usize,
+    layer: usize,
+    state: &[f64],
+    shares: &[f64; SPECIES_MAX],
+) -> Glow {
     // Mole fractions in gas of the molar mass of air.
-    let water = share(WATER) * 28.96 / 18.015;
+    let water = shares[WATER].clamp(0.0, 1.0) * (28.96 / 18.015);
     let mut fuel_shares = [0.0; FUELS_MAX];
-    let fuels = &state[first + PRODUCTS..first + building.species];
-    let whole: f64 = fuels.iter().map(|kg| kg.max(0.0)).sum();
+    let fuels = &shares[PRODUCTS..building.species];
+    let whole: f64 = fuels.iter().map(|share| share.max(0.0)).sum();
     if whole > 0.0 {
-        for (share, kg) in fuel_shares.iter_mut().zip(fuels) {
-            *share = kg.max(0.0) / whole;
+        for (share, fuel) in fuel_shares.iter_mut().zip(fuels) {
+            *share = fuel.max(0.0) / whole;
         }
     }
     Glow {
-        soot_kg: state[first + SOOT].max(0.0),
-        gases: water + share(CARBON_DIOXIDE) * 28.96 / 44.009,
+        soot_kg: state[building.layout.species_of(room, layer) + SOOT].max(0.0),
+        gases: water + shares[CARBON_DIOXIDE].clamp(0.0, 1.0) * (28.96 / 44.009),
         water,
         fuel_shares,
     }

@@ -40,7 +40,7 @@ pub(super) trait Real:
     /// Cube root of the size, with its sign.
     #[inline]
     fn cbrt(self) -> Self {
-        let root = self.value().cbrt();
+        let root = cube_root(self.value());
         self.chain(root, if root == 0.0 { 0.0 } else { 1.0 / (3.0 * root * root) })
     }
 
@@ -105,6 +105,23 @@ pub(super) trait Real:
         let x = ((self.value() - from) / (to - from)).clamp(0.0, 1.0);
         self.chain(x * x * (3.0 - 2.0 * x), 6.0 * x * (1.0 - x) / (to - from))
     }
+}
+
+/// Cube root to rounding, several times faster than the library's, and the same on every machine.
+///
+/// A first guess from the exponent, then Halley's rule, which triples the digits each time.
+#[inline]
+pub(super) fn cube_root(value: f64) -> f64 {
+    let size = value.abs();
+    if !(size > 1e-300 && size < f64::INFINITY) {
+        return if size <= 1e-300 { 0.0 } else { value };
+    }
+    let mut root = f64::from_bits(size.to_bits() / 3 + 0x2A9F_7893_782D_A1CE);
+    for _ in 0..3 {
+        let cube = root * root * root;
+        root *= (cube + 2.0 * size) / (2.0 * cube + size);
+    }
+    if value < 0.0 { -root } else { root }
 }
 
 impl Real for f64 {
@@ -291,6 +308,18 @@ mod tests {
             assert_relative_eq!(got.along[0], dx, max_relative = 1e-6, epsilon = 1e-8);
             assert_relative_eq!(got.along[1], dy, max_relative = 1e-6, epsilon = 1e-8);
         }
+    }
+
+    #[test]
+    fn the_cube_root_is_the_librarys() {
+        for exponent in -290..290 {
+            for mantissa in [1.0, 1.7, 3.3, 7.9, 9.999] {
+                let value = mantissa * 10_f64.powi(exponent);
+                assert_relative_eq!(cube_root(value), value.cbrt(), max_relative = 1e-15);
+                assert_relative_eq!(cube_root(-value), -value.cbrt(), max_relative = 1e-15);
+            }
+        }
+        assert_eq!(cube_root(0.0), 0.0);
     }
 
     #[test]

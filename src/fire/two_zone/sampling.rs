@@ -1,108 +1,37 @@
-//! What is read between two steps.
+//! What is read between two steps: straight lines.
 //!
-//! Volumes and masses follow a cubic held within what both ends allow; pressures, faces and flows a straight line: they
-//! settle faster than a step, and a cubic through their slopes would swing.
+//! A step is never longer than the engine's longest; over it a cubic through the rates at both ends
+//! would swing with what settles faster than the step (pressure, faces, a thin layer).
 
 use super::outcome::Sample;
-use super::rates::Model;
-use super::gas;
 
-/// Both ends of a step.
-#[derive(Debug)]
+/// Reads between two looks.
+#[derive(Debug, Default)]
 pub(super) struct Between {
-    from_s: f64,
-    to_s: f64,
-    from: Vec<f64>,
-    from_rates: Vec<f64>,
-    to: Vec<f64>,
-    to_rates: Vec<f64>,
     sample: Sample,
 }
 
 impl Between {
-    pub(super) fn new(len: usize) -> Self {
-        let zeros = vec![0.0; len];
-        Self {
-            from_s: 0.0,
-            to_s: 0.0,
-            from: zeros.clone(),
-            from_rates: zeros.clone(),
-            to: zeros.clone(),
-            to_rates: zeros,
-            sample: Sample::default(),
-        }
-    }
-
-    pub(super) fn leave(&mut self, state: &[f64], rates: &[f64], time_s: f64) {
-        self.from_s = time_s;
-        self.from.copy_from_slice(state);
-        self.from_rates.copy_from_slice(rates);
-    }
-
-    pub(super) fn arrive(&mut self, state: &[f64], rates: &[f64], time_s: f64) {
-        self.to_s = time_s;
-        self.to.copy_from_slice(state);
-        self.to_rates.copy_from_slice(rates);
-    }
-
-    /// Stays where it is: both ends the same.
-    pub(super) fn stay(&mut self, state: &[f64], time_s: f64) {
-        self.from_s = time_s;
-        self.to_s = time_s;
-        self.from.copy_from_slice(state);
-        self.to.copy_from_slice(state);
-        self.from_rates.fill(0.0);
-        self.to_rates.fill(0.0);
-    }
-
-    fn cubic(&self, at: usize, share: f64) -> f64 {
-        let step_s = self.to_s - self.from_s;
-        let (from, to) = (self.from[at], self.to[at]);
-        if step_s <= 0.0 {
-            return to;
-        }
-        let rise = to - from;
-        // Slopes beyond three times the rise would swing past the ends.
-        let held = |slope: f64| {
-            let scaled = slope * step_s;
-            if rise == 0.0 || scaled * rise <= 0.0 { 0.0 } else { scaled.signum() * scaled.abs().min(3.0 * rise.abs()) }
-        };
-        let (first, last) = (held(self.from_rates[at]), held(self.to_rates[at]));
-        let s = share;
-        let (s2, s3) = (s * s, s * s * s);
-        from * (2.0 * s3 - 3.0 * s2 + 1.0)
-            + first * (s3 - 2.0 * s2 + s)
-            + to * (3.0 * s2 - 2.0 * s3)
-            + last * (s3 - s2)
-    }
-
     /// The building at a time between.
-    pub(super) fn at(&mut self, model: Model<'_>, time_s: f64, before: &Sample, after: &Sample) -> &Sample {
-        let step_s = self.to_s - self.from_s;
-        let share = if step_s > 0.0 { ((time_s - self.from_s) / step_s).clamp(0.0, 1.0) } else { 1.0 };
+    pub(super) fn at(&mut self, time_s: f64, before: &Sample, after: &Sample) -> &Sample {
+        let step_s = after.time_s - before.time_s;
+        let share =
+            if step_s > 0.0 { ((time_s - before.time_s) / step_s).clamp(0.0, 1.0) } else { 1.0 };
         let line = |from: f64, to: f64| from + (to - from) * share;
         let mut sample = std::mem::take(&mut self.sample);
         sample.clone_from(if share < 0.5 { before } else { after });
         sample.time_s = time_s;
-        let building = model.building;
         for (index, room) in sample.rooms.iter_mut().enumerate() {
             let (from, to) = (&before.rooms[index], &after.rooms[index]);
-            let data = &building.rooms[index];
-            let at = building.layout.pressure(index);
             room.pressure_pa = line(from.pressure_pa, to.pressure_pa);
-            let pressure = building.ambient.pressure_pa + room.pressure_pa;
-            let upper_m3 = self.cubic(at + 1, share).clamp(1e-7 * data.volume_m3, data.volume_m3);
-            room.upper.mass_kg = self.cubic(at + 2, share).max(1e-8 * data.air_kg);
-            room.lower.mass_kg = self.cubic(at + 3, share).max(1e-8 * data.air_kg);
-            room.upper.temperature_k = gas::temperature_k(pressure, upper_m3, room.upper.mass_kg);
-            let lower_m3 = data.volume_m3 - upper_m3;
-            // The warmth of a layer that is nearly gone is a ratio of two remnants: a line serves better.
-            room.lower.temperature_k = if lower_m3 > 0.01 * data.volume_m3 {
-                gas::temperature_k(pressure, lower_m3, room.lower.mass_kg)
-            } else {
-                line(from.lower.temperature_k, to.lower.temperature_k)
-            };
-            room.interface_height_m = lower_m3 / data.floor_area_m2;
+            room.interface_height_m = line(from.interface_height_m, to.interface_height_m);
+            for (mine, (a, b)) in [
+                (&mut room.upper, (&from.upper, &to.upper)),
+                (&mut room.lower, (&from.lower, &to.lower)),
+            ] {
+                mine.temperature_k = line(a.temperature_k, b.temperature_k);
+                mine.mass_kg = line(a.mass_kg, b.mass_kg);
+            }
             for (mine, (a, b)) in [
                 (&mut room.upper.gas, (from.upper.gas, to.upper.gas)),
                 (&mut room.lower.gas, (from.lower.gas, to.lower.gas)),
