@@ -158,7 +158,6 @@ impl<'a> Run<'a> {
                 return Err(self.failed(FailureReason::StepTooSmall, None));
             }
             let tried = self.solver.attempt(self.model, &self.controls, tried_s, self.plan.tolerance);
-            if std::env::var("TRACE").is_ok() { let r=&self.before.rooms[tried.room]; eprintln!("{from_s:.4} {tried_s:.3e} err {:.2e} room {} z {:.4} ml {:.3e} Tl {:.1} Tu {:.1} p {:.2} q {:.1}", tried.error, tried.room, r.interface_height_m, r.lower.mass_kg, r.lower.temperature_k, r.upper.temperature_k, r.pressure_pa, r.heat_release_kw); }
             let factor = (0.9 * tried.error.max(1e-6).powf(-1.0 / 3.0)).clamp(0.2, 4.0);
             if !(tried.error <= 1.0) {
                 self.work.rejected += 1;

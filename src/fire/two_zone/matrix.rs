@@ -795,8 +795,10 @@ fn temperature_slopes(building: &Building, look: &Look, state: &[f64], room: usi
     } else {
         (now.lower_k, data.volume_m3 - state[at + 1], state[at + 3])
     };
-    let by_volume = if volume > least_m3 { temperature / volume } else { 0.0 };
-    let by_mass = if kg > least_kg { -temperature / kg } else { 0.0 };
+    // A layer that goes has little warmth of its own.
+    let own = now.own[layer];
+    let by_volume = if volume > least_m3 { own * temperature / volume } else { 0.0 };
+    let by_mass = if kg > least_kg { -own * temperature / kg } else { 0.0 };
     if layer == 0 {
         [temperature / pressure, by_volume, by_mass, 0.0]
     } else {

@@ -516,16 +516,19 @@ impl Look {
         }
     }
 
-    /// Shafts and stairs: both layers of a mixed zone change places within seconds.
+    /// Shafts and stairs: both layers of a mixed zone change places within seconds. So does a layer that is nearly
+    /// gone with the other.
     fn mixing(&mut self, model: Model<'_>) {
         const MIXES_S: f64 = 2.0;
         for (index, room) in model.building.rooms.iter().enumerate() {
-            if !room.mixed {
-                continue;
-            }
             let now = &self.now[index];
             let inside = &self.inside[index];
-            let mass_kg_s = inside.upper_kg.min(inside.lower_kg).max(0.0) / MIXES_S;
+            let least_kg = inside.upper_kg.min(inside.lower_kg).max(0.0);
+            let share = if room.mixed { 1.0 } else { 1.0 - now.own[0].min(now.own[1]) };
+            if share < 1e-4 {
+                continue;
+            }
+            let mass_kg_s = share * least_kg / MIXES_S;
             for (from, to, temperature_k) in [(0, 1, now.upper_k), (1, 0, now.lower_k)] {
                 self.transfers.push(Transfer {
                     from: Some((index, from)),

@@ -37,6 +37,9 @@ pub(super) struct Derived<R> {
     /// How much of its part the cool, the hot layer still plays: 1, falling to 0 as the layer goes.
     pub lower_there: R,
     pub upper_there: R,
+    /// How far the temperature of the hot, the cool layer is its own: the ratio of two remnants means nothing,
+    /// so a layer that goes takes on the other's.
+    pub own: [R; 2],
 }
 
 /// Mass below which a layer counts as going, as a share of the air of the room.
@@ -54,13 +57,20 @@ impl<R: Real> Inside<R> {
         let lower_kg = self.lower_kg.at_least(least_kg);
         let per_kg = self.pressure_pa * (1.0 / GAS_CONSTANT_J_KGK);
         let going_kg = GOING * room.air_kg;
+        let raw = |volume: R, mass: R| (per_kg * volume / mass).at_least(50.0).at_most(9000.0);
+        let (hot_k, cool_k) = (raw(upper_m3, upper_kg), raw(lower_m3, lower_kg));
+        let own = [upper_kg, lower_kg].map(|mass| {
+            let squared = mass.squared();
+            squared / (squared + going_kg * going_kg)
+        });
         Derived {
-            upper_k: (per_kg * upper_m3 / upper_kg).at_least(100.0).at_most(6000.0),
-            lower_k: (per_kg * lower_m3 / lower_kg).at_least(100.0).at_most(6000.0),
+            upper_k: cool_k + (hot_k - cool_k) * own[0],
+            lower_k: hot_k + (cool_k - hot_k) * own[1],
             lower_m3,
             interface_m: lower_m3 * (1.0 / room.floor_area_m2),
             lower_there: lower_kg / (lower_kg + going_kg),
-            upper_there: upper_kg / (upper_kg + going_kg * 0.1),
+            upper_there: upper_kg / (upper_kg + going_kg),
+            own,
         }
     }
 }
