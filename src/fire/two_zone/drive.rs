@@ -14,7 +14,7 @@ use super::snapshot;
 use super::solver::Solver;
 
 /// Longest step, s: longer ones read badly between.
-const LONGEST_S: f64 = 20.0;
+const LONGEST_S: f64 = 30.0;
 /// First step after a jump, s.
 const FIRST_S: f64 = 0.05;
 /// Shortest step against the time reached.

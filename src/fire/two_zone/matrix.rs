@@ -63,12 +63,13 @@ pub(super) struct Matrix {
     ways: Vec<Way>,
     lifts: Vec<Lift>,
     faces: Vec<Faces>,
-    /// Factored chains: reduced diagonal of each node.
-    chain_diagonal: Vec<f64>,
+    /// Factored chains: one over the reduced diagonal of each node.
+    chain_inverse: Vec<f64>,
     d: f64,
     // Scratch.
     core: Vec<[f64; CORE]>,
-    pair: Vec<[f64; 2]>,
+    /// All species of both layers of each room, side by side.
+    pair: Vec<[[f64; SPECIES_MAX]; 2]>,
     face: Vec<[f64; SURFACES]>,
     moved: Vec<f64>,
     lifted: Vec<f64>,
@@ -176,10 +177,10 @@ impl Matrix {
             ways: Vec::new(),
             lifts: Vec::new(),
             faces: Vec::with_capacity(rooms),
-            chain_diagonal: vec![0.0; model.building.layout.len],
+            chain_inverse: vec![0.0; model.building.layout.len],
             d: 0.0,
             core: vec![[0.0; CORE]; rooms],
-            pair: vec![[0.0; 2]; rooms],
+            pair: vec![[[0.0; SPECIES_MAX]; 2]; rooms],
             face: vec![[0.0; SURFACES]; rooms],
             moved: Vec::new(),
             lifted: Vec::new(),
@@ -457,19 +458,20 @@ impl Matrix {
             let chain = &building.chains[chain];
             let first = room.nodes[face];
             let last = chain.len() - 1;
-            let mut below = 0.0;
+            let (mut below, mut face_diagonal) = (0.0, 0.0);
             for node in (0..=last).rev() {
                 let before = if node > 0 { chain.conductance[node - 1] } else { 0.0 };
                 let mut diagonal = chain.capacity[node] * d + before + chain.conductance[node];
                 if node < last {
-                    diagonal -= chain.conductance[node] * chain.conductance[node] / below;
+                    diagonal -= chain.conductance[node] * chain.conductance[node] * below;
                 }
-                self.chain_diagonal[first + node] = diagonal;
-                below = diagonal;
+                below = 1.0 / diagonal;
+                self.chain_inverse[first + node] = below;
+                face_diagonal = diagonal;
             }
             let per_area = 1.0 / room.areas_m2[face];
             let along = &inner.surfaces_w[face].along;
-            block[face][face] += below;
+            block[face][face] += face_diagonal;
             for other in 0..SURFACES {
                 if room.chains[other].is_some() {
                     block[face][other] -= along[CORE + other] * per_area;
@@ -500,8 +502,9 @@ impl Matrix {
                 for node in (0..=last).rev() {
                     let mut sum = chain.capacity[node] * right[first + node];
                     if node < last {
-                        sum += chain.conductance[node] * right[first + node + 1]
-                            / self.chain_diagonal[first + node + 1];
+                        sum += chain.conductance[node]
+                            * right[first + node + 1]
+                            * self.chain_inverse[first + node + 1];
                     }
                     right[first + node] = sum;
                 }
@@ -556,7 +559,7 @@ impl Matrix {
                 for node in 1..chain.len() {
                     right[first + node] = (right[first + node]
                         + chain.conductance[node - 1] * right[first + node - 1])
-                        / self.chain_diagonal[first + node];
+                        * self.chain_inverse[first + node];
                 }
             }
             let at = layout.pressure(index);
@@ -676,18 +679,19 @@ impl Matrix {
                 self.carried[base + ledger::SPECIES_OUT + building.species + reaction.fuel] += supply;
             }
         }
-        for species in 0..building.species {
-            for room in 0..building.rooms.len() {
-                for layer in 0..2 {
-                    let at = layout.species_of(room, layer) + species;
-                    self.pair[room][layer] = right[at] + self.carried[at];
+        for (room, pair) in self.pair.iter_mut().enumerate() {
+            for (layer, values) in pair.iter_mut().enumerate() {
+                let first = layout.species_of(room, layer);
+                for species in 0..building.species {
+                    values[species] = right[first + species] + self.carried[first + species];
                 }
             }
-            self.solve_pair();
-            for room in 0..building.rooms.len() {
-                for layer in 0..2 {
-                    right[layout.species_of(room, layer) + species] = self.pair[room][layer];
-                }
+        }
+        self.solve_pair();
+        for (room, pair) in self.pair.iter().enumerate() {
+            for (layer, values) in pair.iter().enumerate() {
+                let first = layout.species_of(room, layer);
+                right[first..first + building.species].copy_from_slice(&values[..building.species]);
             }
         }
     }
@@ -704,8 +708,7 @@ impl Matrix {
             let here = self.pair[room];
             for &later in &self.graph.after[step] {
                 let left = &self.pair_factors[self.graph.at(later, room)];
-                self.pair[later][0] -= left[0][0] * here[0] + left[0][1] * here[1];
-                self.pair[later][1] -= left[1][0] * here[0] + left[1][1] * here[1];
+                take_pair(&mut self.pair[later], left, &here);
             }
         }
         for step in (0..self.graph.order.len()).rev() {
@@ -713,13 +716,15 @@ impl Matrix {
             let mut here = self.pair[room];
             for &later in &self.graph.after[step] {
                 let right = &self.pair_factors[self.graph.at(room, later)];
-                let from = self.pair[later];
-                here[0] -= right[0][0] * from[0] + right[0][1] * from[1];
-                here[1] -= right[1][0] * from[0] + right[1][1] * from[1];
+                take_pair(&mut here, right, &self.pair[later]);
             }
             let own = &self.pair_factors[self.graph.at(room, room)];
-            self.pair[room] =
-                [own[0][0] * here[0] + own[0][1] * here[1], own[1][0] * here[0] + own[1][1] * here[1]];
+            let solved = &mut self.pair[room];
+            for species in 0..SPECIES_MAX {
+                let (hot, cool) = (here[0][species], here[1][species]);
+                solved[0][species] = own[0][0] * hot + own[0][1] * cool;
+                solved[1][species] = own[1][0] * hot + own[1][1] * cool;
+            }
         }
     }
 
@@ -818,6 +823,16 @@ fn times(a: &Block, b: &Block) -> Block {
         }
     }
     product
+}
+
+/// `target -= factor · from`, for all species.
+#[inline]
+fn take_pair(target: &mut [[f64; SPECIES_MAX]; 2], factor: &Pair, from: &[[f64; SPECIES_MAX]; 2]) {
+    for species in 0..SPECIES_MAX {
+        let (hot, cool) = (from[0][species], from[1][species]);
+        target[0][species] -= factor[0][0] * hot + factor[0][1] * cool;
+        target[1][species] -= factor[1][0] * hot + factor[1][1] * cool;
+    }
 }
 
 #[inline]

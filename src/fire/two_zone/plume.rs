@@ -4,7 +4,7 @@ use super::real::Real;
 
 /// A fire as its plume sees it.
 #[derive(Clone, Copy, Debug)]
-pub(super) struct Source {
+pub(super) struct Source<R> {
     /// Diameter, m.
     pub diameter_m: f64,
     /// Share of the heat that rises with the gas.
@@ -14,7 +14,7 @@ pub(super) struct Source {
     /// `(ρ²/T)^(1/3)` of the air drawn, against that of air at 293 K and 101 325 Pa.
     pub air_factor: f64,
     /// Draught across the plume, m/s.
-    pub draught_m_s: f64,
+    pub draught_m_s: R,
     /// Density of the air drawn, kg/m³.
     pub density_kg_m3: f64,
 }
@@ -44,7 +44,7 @@ pub(super) fn flame_height_m<R: Real>(heat_release_kw: R, diameter_m: f64) -> R 
 ///
 /// Sources: [`HESKESTAD_1984`](crate::fire::sources::HESKESTAD_1984), [`HOULT_1969`](crate::fire::sources::HOULT_1969).
 #[inline]
-pub(super) fn flow_kg_s<R: Real>(heat_release_kw: R, height_m: R, source: &Source) -> R {
+pub(super) fn flow_kg_s<R: Real>(heat_release_kw: R, height_m: R, source: &Source<R>) -> R {
     const CROSS_FLOW: f64 = 0.6;
     const WIDENS: f64 = 0.15;
 
@@ -71,6 +71,7 @@ pub(super) fn flow_kg_s<R: Real>(heat_release_kw: R, height_m: R, source: &Sourc
     let radius = height_m * (0.5 * WIDENS) + 0.5 * source.diameter_m;
     let across = height_m
         * radius
-        * (2.0 * std::f64::consts::PI * CROSS_FLOW * source.density_kg_m3 * source.draught_m_s / images);
+        * source.draught_m_s
+        * (2.0 * std::f64::consts::PI * CROSS_FLOW * source.density_kg_m3 / images);
     still * (source.air_factor / images) + across
 }

@@ -88,6 +88,9 @@ pub(super) struct Look {
     radiated_out_w: f64,
     mass: Vec<[f64; 2]>,
     heat: Vec<[f64; 2]>,
+    /// Species gained by each layer, and outside, kg/s.
+    gains: Vec<[[f64; SPECIES_MAX]; 2]>,
+    outside_gains: [f64; SPECIES_MAX],
     // With slopes.
     pub inner_slopes: Vec<Inner<Dual<ROOM_WAYS>>>,
     pub reaction_slopes: Vec<Vec<Reaction<Dual<ROOM_WAYS>>>>,
@@ -171,8 +174,11 @@ impl Look {
                 }
             }
             self.shares.push(shares);
-            let glow = [0, 1].map(|layer| glow(building, index, layer, state, &shares[layer]));
-            let around = Around { draught_m_s: 0.0, glow };
+            let glow = [
+                glow(building, index, 0, state, &shares[0]),
+                glow(building, index, 1, state, &shares[1]),
+            ];
+            let around = Around { inflow_m2_s: 0.0, glow };
             self.zones.push(radiation::zones(room, &now, &around, &inside.surfaces_k));
             self.inside.push(inside);
             self.now.push(now);
@@ -237,12 +243,14 @@ impl Look {
     fn flow<R: Real>(&self, model: Model<'_>, vent: &Vent, width_m: f64, share: f64) -> Flow<R> {
         let building = model.building;
         let outside_kg_m3 = building.outside_density_kg_m3;
-        let flanks = [0, 1].map(|end| match vent.rooms[end] {
+        let side = |end: usize| match vent.rooms[end] {
             Some(room) => flank::<R>(building, room, &self.inside[room], end * 4),
             None => outside::<R>(outside_kg_m3),
-        });
+        };
+        let flanks = [side(0), side(1)];
         // The wind stands on the outer face.
-        let wind_pa = [0, 1].map(|end| if vent.rooms[end].is_none() { vent.wind_pa } else { 0.0 });
+        let wind = |end: usize| if vent.rooms[end].is_none() { vent.wind_pa } else { 0.0 };
+        let wind_pa = [wind(0), wind(1)];
         let sides = [&flanks[0], &flanks[1]];
         match vent.lie {
             Lie::Vertical => {
@@ -279,7 +287,7 @@ impl Look {
                     None => model.building.ambient.temperature_k,
                 };
                 let from = vent.rooms[giver].map(|room| (room, layer));
-                let slopes = std::array::from_fn(|way| mass.slope(way));
+                let slopes: [f64; VENT_WAYS] = mass.slopes();
                 let mut send = |to: Place, share: f64| {
                     if share > 0.0 {
                         self.transfers.push(Transfer {
@@ -418,7 +426,7 @@ impl Look {
                 continue;
             };
             // What leaves and what comes is shared between gas and faces as the zone sends it.
-            let zones = self.zones[room];
+            let zones = &self.zones[room];
             let received_w = area_m2 * (power[1 - end] - power[end]);
             let mut taken = Inner {
                 lifted_kg_s: 0.0,
@@ -429,7 +437,7 @@ impl Look {
             for (zone, share) in [(0, hot_share[end]), (1, 1.0 - hot_share[end])] {
                 let part_w = received_w * share;
                 taken.heat_w[zone] += part_w * zones.takes[zone];
-                radiation::give(&zones, zone, part_w * (1.0 - zones.takes[zone]), &mut taken);
+                radiation::give(zones, zone, part_w * (1.0 - zones.takes[zone]), &mut taken);
             }
             for layer in 0..2 {
                 self.extra_heat_w[room][layer] += taken.heat_w[layer];
@@ -496,7 +504,7 @@ impl Look {
                 }
                 None => 0.0,
             };
-            let slopes: [f64; VENT_WAYS] = std::array::from_fn(|way| mass.slope(way));
+            let slopes: [f64; VENT_WAYS] = mass.slopes();
             let targets = match rooms[1] {
                 Some(room) => [(Some((room, 0)), upper), (Some((room, 1)), 1.0 - upper)],
                 None => [(None, 1.0), (None, 0.0)],
@@ -542,7 +550,7 @@ impl Look {
         }
     }
 
-    /// Draught across the plumes of each room, m/s: what comes in low spreads as a jet of the width of its opening, by
+    /// Draught across the plumes of each room: what comes in low spreads as a jet of the width of its opening, by
     /// [`SPREADS`] on either side, until it fills the width of the room; taken at half the length of the room.
     fn draughts(&mut self, model: Model<'_>, vent: &Vent, flow_in_kg_s: [f64; 2], temperatures_k: [f64; 2]) {
         for end in 0..2 {
@@ -555,8 +563,7 @@ impl Look {
             let (long_m, wide_m) = (data.length_m.max(data.width_m), data.length_m.min(data.width_m));
             let opening_m = vent.area_m2 / (vent.top_m - vent.bottom_m).max(1e-3);
             let across_m = (opening_m + 2.0 * SPREADS * 0.5 * long_m).min(wide_m);
-            let section_m2 = across_m * self.now[room].interface_m.max(0.1 * data.height_m);
-            self.around[room].draught_m_s += flow / density / section_m2;
+            self.around[room].inflow_m2_s += flow / density / across_m;
         }
     }
 
@@ -606,6 +613,9 @@ impl Look {
         self.mass.resize(building.rooms.len(), [0.0; 2]);
         self.heat.clear();
         self.heat.resize(building.rooms.len(), [0.0; 2]);
+        self.gains.clear();
+        self.gains.resize(building.rooms.len(), [[0.0; SPECIES_MAX]; 2]);
+        self.outside_gains = [0.0; SPECIES_MAX];
         for index in 0..self.inner.len() {
             let inner = self.inner[index];
             for layer in 0..2 {
@@ -627,6 +637,14 @@ impl Look {
             let transfer = self.transfers[index];
             self.carry(building, &transfer, out);
         }
+        for (room, gains) in self.gains.iter().enumerate() {
+            for (layer, gains) in gains.iter().enumerate() {
+                let first = layout.species_of(room, layer);
+                out[first..first + building.species].copy_from_slice(&gains[..building.species]);
+            }
+        }
+        let first = place(building, None);
+        out[first..first + building.species].copy_from_slice(&self.outside_gains[..building.species]);
         self.react(model, controls, out);
 
         for (index, room) in building.rooms.iter().enumerate() {
@@ -646,12 +664,15 @@ impl Look {
                 let received =
                     (self.inner[index].surfaces_w[surface] + self.extra_surfaces_w[index][surface]) / area;
                 let mut inward = received;
-                let last = chain.len() - 1;
-                for node in 0..=last {
-                    let here = state[first + node];
-                    let next = if node < last { state[first + node + 1] } else { building.ambient.temperature_k };
-                    let onward = chain.conductance[node] * (here - next);
-                    out[first + node] = (inward - onward) / chain.capacity[node];
+                let nodes = &state[first..first + chain.len()];
+                let rates = &mut out[first..first + chain.len()];
+                let next = nodes[1..].iter().chain(std::iter::once(&building.ambient.temperature_k));
+                let along = chain.conductance.iter().zip(&chain.per_capacity);
+                for (((here, next), rate), (conductance, per_capacity)) in
+                    nodes.iter().zip(next).zip(rates).zip(along)
+                {
+                    let onward = conductance * (here - next);
+                    *rate = (inward - onward) * per_capacity;
                     inward = onward;
                 }
                 out[layout.ledger + ledger::LOST] += inward * area;
@@ -661,6 +682,7 @@ impl Look {
     }
 
     /// Adds one transfer to both its ends.
+    #[inline]
     fn carry(&mut self, building: &Building, transfer: &Transfer, out: &mut [f64]) {
         let layout = &building.layout;
         let mass = transfer.mass_kg_s;
@@ -685,16 +707,26 @@ impl Look {
                 out[layout.ledger + ledger::ENTHALPY_OUT] += enthalpy_w;
             }
         }
-        let from = place(building, transfer.from);
-        let to = place(building, transfer.to);
-        let shares = match transfer.from {
-            Some((room, layer)) => &self.shares[room][layer],
-            None => &building.outside_air,
+        let mut moved = match transfer.from {
+            Some((room, layer)) => self.shares[room][layer],
+            None => building.outside_air,
         };
-        for (species, share) in shares[..building.species].iter().enumerate() {
-            let moved = mass * share;
-            out[from + species] -= moved;
-            out[to + species] += moved;
+        for share in &mut moved {
+            *share *= mass;
+        }
+        let from = match transfer.from {
+            Some((room, layer)) => &mut self.gains[room][layer],
+            None => &mut self.outside_gains,
+        };
+        for (gain, moved) in from.iter_mut().zip(&moved) {
+            *gain -= moved;
+        }
+        let to = match transfer.to {
+            Some((room, layer)) => &mut self.gains[room][layer],
+            None => &mut self.outside_gains,
+        };
+        for (gain, moved) in to.iter_mut().zip(&moved) {
+            *gain += moved;
         }
     }
 

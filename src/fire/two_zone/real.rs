@@ -25,8 +25,8 @@ pub(super) trait Real:
     fn value(self) -> f64;
     /// The variable of a direction.
     fn variable(value: f64, direction: usize) -> Self;
-    /// Derivative along a direction; none without derivatives.
-    fn slope(self, direction: usize) -> f64;
+    /// Derivatives along the first directions; none without derivatives.
+    fn slopes<const N: usize>(self) -> [f64; N];
     /// A function of this number, by its value and its derivative there.
     fn chain(self, value: f64, derivative: f64) -> Self;
 
@@ -141,8 +141,8 @@ impl Real for f64 {
     }
 
     #[inline]
-    fn slope(self, _direction: usize) -> f64 {
-        0.0
+    fn slopes<const N: usize>(self) -> [f64; N] {
+        [0.0; N]
     }
 
     #[inline]
@@ -199,8 +199,10 @@ impl<const N: usize> Real for Dual<N> {
     }
 
     #[inline]
-    fn slope(self, direction: usize) -> f64 {
-        self.along[direction]
+    fn slopes<const M: usize>(self) -> [f64; M] {
+        let mut slopes = [0.0; M];
+        slopes.copy_from_slice(&self.along[..M]);
+        slopes
     }
 
     #[inline]

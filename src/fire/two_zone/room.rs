@@ -59,10 +59,11 @@ impl<R: Real> Inside<R> {
         let going_kg = GOING * room.air_kg;
         let raw = |volume: R, mass: R| (per_kg * volume / mass).at_least(50.0).at_most(9000.0);
         let (hot_k, cool_k) = (raw(upper_m3, upper_kg), raw(lower_m3, lower_kg));
-        let own = [upper_kg, lower_kg].map(|mass| {
+        let own_of = |mass: R| {
             let squared = mass.squared();
             squared / (squared + going_kg * going_kg)
-        });
+        };
+        let own = [own_of(upper_kg), own_of(lower_kg)];
         Derived {
             upper_k: cool_k + (hot_k - cool_k) * own[0],
             lower_k: hot_k + (cool_k - hot_k) * own[1],
@@ -96,8 +97,8 @@ pub(super) struct Burning {
 /// What the room does not settle by itself.
 #[derive(Clone, Copy, Debug)]
 pub(super) struct Around {
-    /// Draught across the plumes, m/s.
-    pub draught_m_s: f64,
+    /// Cool gas that comes in per metre of the width it spreads over, m²/s.
+    pub inflow_m2_s: f64,
     /// Soot and gas that make the layers glow, absorption 1/m over the hot, the cool layer.
     pub glow: [Glow; 2],
 }
@@ -173,6 +174,8 @@ pub(super) fn inside<R: Real>(
     let upper_oxygen = (state.upper_oxygen_kg / upper_kg).at_least(0.0);
     let lower_oxygen = (state.lower_oxygen_kg / lower_kg).at_least(0.0);
 
+    // The cool inflow fills the cool layer: the lower that is, the faster the draught.
+    let draught_m_s = R::constant(around.inflow_m2_s) / now.interface_m.at_least(0.1 * room.height_m);
     for fire in fires {
         let fuel = &fuels[fire.fuel];
         let wanted_oxygen = fire.wanted_w / fuel.heat_per_oxygen_j_kg;
@@ -198,7 +201,7 @@ pub(super) fn inside<R: Real>(
             convective_share: 1.0 - fire.radiative,
             images: fire.images,
             air_factor: air_factor(now.lower_k.value(), state.pressure_pa.value()),
-            draught_m_s: around.draught_m_s,
+            draught_m_s,
             density_kg_m3: (state.pressure_pa / now.lower_k).value() / GAS_CONSTANT_J_KGK,
         };
         let clear_m = (now.interface_m - fire.base_m).at_least(0.0);

@@ -141,7 +141,6 @@ impl Solver {
             self.matrix.factor(model, &self.slopes, &self.slopes_state, d);
             self.factored = d;
         }
-        let len = self.state.len();
         for stage in 0..4 {
             let (before, rest) = self.increments.split_at_mut(stage);
             let increment = &mut rest[0];
@@ -151,9 +150,7 @@ impl Solver {
                 self.stage.copy_from_slice(&self.state);
                 for (earlier, weight) in before.iter().zip(&STAGES[stage]) {
                     if *weight != 0.0 {
-                        for index in 0..len {
-                            self.stage[index] += weight * earlier[index];
-                        }
+                        add(&mut self.stage, *weight, earlier);
                     }
                 }
                 self.stage_look.rates(
@@ -167,24 +164,18 @@ impl Solver {
                 self.evaluations += 1;
                 increment.copy_from_slice(&self.stage_rates);
                 for (earlier, weight) in before.iter().zip(&RIGHTS[stage]) {
-                    let weight = weight / step_s;
-                    for index in 0..len {
-                        increment[index] += weight * earlier[index];
-                    }
+                    add(increment, weight / step_s, earlier);
                 }
             }
             self.matrix.solve(model, &self.slopes, &self.slopes_state, increment);
         }
-        for index in 0..len {
-            self.reached[index] = self.stage[index] + self.increments[3][index];
-        }
+        self.reached.copy_from_slice(&self.stage);
+        add(&mut self.reached, 1.0, &self.increments[3]);
         // The error takes the place of the last stage: it is not needed any more.
         let [one, two, three, four] = &mut self.increments;
-        for index in 0..len {
-            four[index] = ERROR[0] * one[index]
-                + ERROR[1] * two[index]
-                + ERROR[2] * three[index]
-                + ERROR[3] * four[index];
+        four.iter_mut().for_each(|value| *value *= ERROR[3]);
+        for (earlier, weight) in [(one, ERROR[0]), (two, ERROR[1]), (three, ERROR[2])] {
+            add(four, weight, earlier);
         }
         measure(model.building, &self.state, &self.reached, four, tolerance)
     }
@@ -201,6 +192,14 @@ impl Solver {
         self.time_s = time_s;
         std::mem::swap(&mut self.state, &mut self.reached);
         self.age = usize::MAX;
+    }
+}
+
+/// `target += weight · from`.
+#[inline]
+fn add(target: &mut [f64], weight: f64, from: &[f64]) {
+    for (value, more) in target.iter_mut().zip(from) {
+        *value += weight * more;
     }
 }
 

@@ -20,6 +20,8 @@ pub(super) struct Chain {
     pub capacity: Vec<f64>,
     /// Conductance from each node to the next, W/(m² K); the last to the air behind.
     pub conductance: Vec<f64>,
+    /// One over each capacity.
+    pub per_capacity: Vec<f64>,
 }
 
 /// Fastest heating that the chain follows to within a thousandth, 1/s.
@@ -59,6 +61,11 @@ impl Chain {
             }
         }
         fine.reduced(&basis)
+    }
+
+    fn of(capacity: Vec<f64>, conductance: Vec<f64>) -> Self {
+        let per_capacity = capacity.iter().map(|c| 1.0 / c).collect();
+        Self { capacity, conductance, per_capacity }
     }
 
     /// Nodes.
@@ -201,7 +208,7 @@ impl FineGrid {
             seen.push(image);
             capacity.push(onwards * onwards / (capacity[node] * link * link));
         }
-        Chain { capacity, conductance }
+        Chain::of(capacity, conductance)
     }
 }
 
@@ -308,16 +315,16 @@ mod tests {
         let board = Slab { thickness_m: 0.0127, ..GYPSUM };
         for sheets in [vec![board], vec![steel], vec![steel, wool], vec![board, wool, board], vec![foil]] {
             let fine = FineGrid::new(&sheets);
-            let grid = Chain {
-                capacity: fine.root_capacity.iter().map(|r| r * r).collect(),
-                conductance: fine
+            let grid = Chain::of(
+                fine.root_capacity.iter().map(|r| r * r).collect(),
+                fine
                     .beside
                     .iter()
                     .enumerate()
                     .map(|(n, b)| -b * fine.root_capacity[n] * fine.root_capacity[n + 1])
                     .chain([OUTER_FILM_W_M2K])
                     .collect(),
-            };
+            );
             let chain = Chain::new(&sheets);
             assert!(chain.len() <= 8);
             for time_s in [5.0, 60.0, 600.0, 7200.0] {
