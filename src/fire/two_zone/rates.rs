@@ -13,6 +13,9 @@ use super::real::{Dual, Real};
 use super::room::{self, Around, Burning, Derived, Inner, Inside, Reaction, black_w_m2};
 use super::vents::{self, Flank, Flow};
 
+/// An opening that stands open by less than this share only leaks.
+const CRACKS_BELOW: f64 = 0.01;
+
 /// Tangent of the half angle at which a turbulent jet widens, 12°. Common practice.
 const SPREADS: f64 = 0.21;
 
@@ -221,10 +224,10 @@ impl Look {
         }
         if slopes {
             let flow = self.flow::<Dual<VENT_WAYS>>(model, vent, width_m, share);
-            self.pass(model, vent, &flow);
+            self.pass(model, vent, &flow, share < CRACKS_BELOW);
         } else {
             let flow = self.flow::<f64>(model, vent, width_m, share);
-            self.pass(model, vent, &flow);
+            self.pass(model, vent, &flow, share < CRACKS_BELOW);
         }
         if vent.lie == Lie::Vertical && share > 0.0 {
             self.shine(model, vent, vent.area_m2 * share);
@@ -260,7 +263,7 @@ impl Look {
     }
 
     /// Sends the gas of a flow where it belongs: hot gas to the hot layer beyond, cool gas to the cool one.
-    fn pass<R: Real>(&mut self, model: Model<'_>, vent: &Vent, flow: &Flow<R>) {
+    fn pass<R: Real>(&mut self, model: Model<'_>, vent: &Vent, flow: &Flow<R>, cracks: bool) {
         let mut low_kg_s = [0.0; 2];
         let mut low_k = [0.0; 2];
         for giver in 0..2 {
@@ -294,7 +297,15 @@ impl Look {
                 match vent.rooms[taker] {
                     None => send(None, 1.0),
                     Some(room) => {
-                        let upper = share_to_upper(&self.now[room], temperature_k);
+                        let upper = if cracks {
+                            // A jet as thin as a crack draws a hundred times its own flow within a metre:
+                            // what it brings is spread through the room.
+                            let inside = &self.inside[room];
+                            inside.upper_kg.max(0.0)
+                                / (inside.upper_kg.max(0.0) + inside.lower_kg.max(0.0)).max(1e-9)
+                        } else {
+                            share_to_upper(&self.now[room], temperature_k)
+                        };
                         send(Some((room, 0)), upper);
                         send(Some((room, 1)), 1.0 - upper);
                         low_kg_s[taker] += mass.value() * (1.0 - upper);

@@ -41,7 +41,7 @@ pub(super) struct Derived<R> {
 }
 
 /// Mass below which a layer counts as going, as a share of the air of the room.
-const GOING: f64 = 2e-3;
+const GOING: f64 = 1e-3;
 
 impl<R: Real> Inside<R> {
     /// Temperatures, heights, shares.
@@ -206,16 +206,26 @@ pub(super) fn inside<R: Real>(
             .at_least(0.5 * fire.diameter_m)
             .at_most((room.height_m - fire.base_m).max(0.05))
             .at_least(0.05);
-        // What the flame draws on its height: cool gas below the interface, hot gas above.
-        let low_kg_s = plume::flow_kg_s(wanted_kw, clear_m.min(tip_m), &source) * now.there[1];
-        let all_kg_s = plume::flow_kg_s(wanted_kw, tip_m, &source);
+        // What the flame draws on its height: cool gas below the interface, hot gas above. By itself, without the
+        // draught: fire, pressure and draught would answer each other within milliseconds.
+        let still = Source { draught_m_s: zero, ..source };
+        let low_kg_s = plume::flow_kg_s(wanted_kw, clear_m.min(tip_m), &still) * now.there[1];
+        let all_kg_s = plume::flow_kg_s(wanted_kw, tip_m, &still);
         let high_kg_s = (all_kg_s - low_kg_s).at_least(0.0);
         let drawn_kg_s = low_kg_s + high_kg_s + 1e-12;
         let drawn_oxygen_kg_s = low_kg_s * lower_oxygen + high_kg_s * upper_oxygen;
         let (flame, oxygen) = if fire.oxygen_limited {
             let mixed_k = (low_kg_s * now.lower_k + high_kg_s * now.upper_k) / drawn_kg_s;
             let share = flame_share(drawn_oxygen_kg_s / drawn_kg_s, mixed_k);
-            (share.value(), smooth_min(share * wanted_oxygen, drawn_oxygen_kg_s))
+            // In a room so hot that fuel gas lights wherever it meets air there is no going out.
+            let lives = share.value().max(lights(now.upper_k.value()));
+            // The fuel meets the cool gas first; what that leaves meets the hot gas higher up.
+            let wanted = R::constant(wanted_oxygen);
+            let in_low = smooth_min(wanted, low_kg_s * lower_oxygen) * flame_share(lower_oxygen, now.lower_k);
+            let lives = lives.max(in_low.value() / wanted_oxygen);
+            let rest = (wanted - in_low).at_least(0.0);
+            let in_high = smooth_min(rest, high_kg_s * upper_oxygen) * flame_share(upper_oxygen, now.upper_k);
+            (lives, in_low + in_high)
         } else {
             (1.0, R::constant(wanted_oxygen))
         };
@@ -254,7 +264,9 @@ pub(super) fn inside<R: Real>(
                 continue;
             }
             let wants = unburned_kg * (share * fuel.oxygen_need);
-            let oxygen = smooth_min(wants, state.upper_oxygen_kg.at_least(0.0)) * lit * (1.0 / MIXES_S);
+            // What is short decides; both fall together towards nothing.
+            let has = state.upper_oxygen_kg.at_least(0.0);
+            let oxygen = wants * has / (wants + has + 1e-12) * lit * (1.0 / MIXES_S);
             let heat_w = oxygen * fuel.heat_per_oxygen_j_kg;
             inner.released_w = inner.released_w + heat_w;
             inner.heat_w[0] = inner.heat_w[0] + heat_w;

@@ -229,7 +229,7 @@ fn measure(building: &Building, from: &[f64], to: &[f64], error: &[f64], toleran
             worst = Tried { error: of_room, room: index };
         }
         // A layer of less than nothing is no solution.
-        let least = -1e-5 * room.air_kg;
+        let least = -1e-3 * room.air_kg;
         let bad = to[at + 2] < least
             || to[at + 3] < least
             || to[at + 1] < -1e-2 * volume
