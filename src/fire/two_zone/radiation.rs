@@ -179,8 +179,7 @@ pub(super) fn exchange<R: Real>(zones: &Zones<R>, faces_k: &[R; SURFACES], inner
                     * ((-share[zone] + 1.0) * zones.faces_w_m2[zone]
                         + share[zone]
                             * (zones.takes[far] * zones.gas_w_m2[far] + clear[far] * zones.faces_w_m2[far]));
-            inner.surfaces_w[surface] =
-                inner.surfaces_w[surface] + (received - black) * area * EMISSIVITY;
+            inner.surfaces_w[surface] = inner.surfaces_w[surface] + (received - black) * area * EMISSIVITY;
         }
     }
     for zone in 0..2 {

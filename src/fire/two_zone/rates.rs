@@ -10,7 +10,7 @@ use super::jets;
 use super::network::{Fan, Lie, Network, Position, Side};
 use super::radiation::{self, Glow, Zones};
 use super::real::{Dual, Real};
-use super::room::{self, Around, Burning, Derived, Inner, Inside, Reaction, black_w_m2};
+use super::room::{self, Around, Burning, Derived, Fires, Inner, Inside, Reaction, black_w_m2};
 use super::vents::{self, Flank, Flow};
 
 /// An opening that stands open by less than this share only leaks.
@@ -579,12 +579,12 @@ impl Look {
             self.inner_slopes.clear();
         }
         for (index, room) in building.rooms.iter().enumerate() {
+            let burning = Fires { fuels: &building.fuels, fires: &self.burning[index] };
             let inner = room::inside(
                 room,
                 &self.inside[index],
                 &self.now[index],
-                &building.fuels,
-                &self.burning[index],
+                &burning,
                 &self.around[index],
                 &self.zones[index],
                 &mut self.reactions[index],
@@ -598,8 +598,7 @@ impl Look {
                     room,
                     &inside,
                     &now,
-                    &building.fuels,
-                    &self.burning[index],
+                    &burning,
                     &self.around[index],
                     &zones,
                     &mut self.reaction_slopes[index],

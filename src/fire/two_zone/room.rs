@@ -2,7 +2,7 @@
 
 use super::building::{CEILING, FLOOR, FuelData, LOWER_WALL, RoomData, SURFACES, UPPER_WALL};
 use super::combustion::{Products, flame_share, lights, products, smooth_min};
-use super::gas::{GAS_CONSTANT_J_KGK, SPECIFIC_HEAT_J_KGK, STEFAN_BOLTZMANN_W_M2K4};
+use super::gas::{GAS_CONSTANT_J_KGK, STEFAN_BOLTZMANN_W_M2K4};
 use super::plume::{self, Source};
 use super::radiation::{self, Glow, Zones};
 use super::real::Real;
@@ -90,6 +90,13 @@ pub(super) struct Burning {
     pub radiative: f64,
 }
 
+/// The fires of a room, and all fuels.
+#[derive(Clone, Copy, Debug)]
+pub(super) struct Fires<'a> {
+    pub fuels: &'a [FuelData],
+    pub fires: &'a [Burning],
+}
+
 /// What the room does not settle by itself.
 #[derive(Clone, Copy, Debug)]
 pub(super) struct Around {
@@ -155,8 +162,7 @@ pub(super) fn inside<R: Real>(
     room: &RoomData,
     state: &Inside<R>,
     now: &Derived<R>,
-    fuels: &[FuelData],
-    fires: &[Burning],
+    burning: &Fires<'_>,
     around: &Around,
     zones: &Zones<R>,
     reactions: &mut Vec<Reaction<R>>,
@@ -172,8 +178,8 @@ pub(super) fn inside<R: Real>(
 
     // The cool inflow fills the cool layer: the lower that is, the faster the draught.
     let draught_m_s = R::constant(around.inflow_m2_s) / now.interface_m.at_least(0.1 * room.height_m);
-    for fire in fires {
-        let fuel = &fuels[fire.fuel];
+    for fire in burning.fires {
+        let fuel = &burning.fuels[fire.fuel];
         let wanted_oxygen = fire.wanted_w / fuel.heat_per_oxygen_j_kg;
         let wanted_fuel = wanted_oxygen / fuel.oxygen_need;
         if !fire.alight || fire.wanted_w <= 0.0 {
@@ -258,7 +264,7 @@ pub(super) fn inside<R: Real>(
     if unburned_kg.value() > 0.0 && now.upper_k.value() > 700.0 {
         const MIXES_S: f64 = 1.0;
         let lit = lights(now.upper_k);
-        for (index, fuel) in fuels.iter().enumerate() {
+        for (index, fuel) in burning.fuels.iter().enumerate() {
             let share = around.glow[0].fuel_shares[index];
             if share <= 0.0 {
                 continue;
@@ -328,10 +334,4 @@ fn convection<R: Real>(room: &RoomData, state: &Inside<R>, now: &Derived<R>, inn
 #[inline]
 pub(super) fn black_w_m2<R: Real>(temperature_k: R) -> R {
     temperature_k.squared().squared() * STEFAN_BOLTZMANN_W_M2K4
-}
-
-/// Enthalpy that a flow carries, W.
-#[inline]
-pub(super) fn enthalpy_w(mass_kg_s: f64, temperature_k: f64) -> f64 {
-    mass_kg_s * SPECIFIC_HEAT_J_KGK * temperature_k
 }
