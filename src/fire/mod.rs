@@ -36,6 +36,7 @@ pub mod smoke_filling;
 pub mod glazing;
 pub mod radiation;
 pub mod spread;
+pub mod two_zone;
 
 pub mod leakage;
 pub mod oxygen;
@@ -44,6 +45,16 @@ pub mod excess_fuel;
 
 pub mod fire_flow;
 
+pub mod crew;
+pub mod tenability;
+
+pub mod door_burn_through;
+pub mod door_force;
+pub mod give_way;
+
+pub mod place;
+
+mod crossing;
 mod search;
 
 pub use design_fire::DesignFire;
