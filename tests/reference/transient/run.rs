@@ -48,7 +48,13 @@ impl<'a> Runner<'a> {
     }
 
     /// Runs a test. None: it failed, which the tally tells.
-    pub fn run(&self, series: super::point::Series, test: &str, network: &Network, plan: &Plan) -> Option<Course> {
+    pub fn run(
+        &self,
+        series: super::point::Series,
+        test: &str,
+        network: &Network,
+        plan: &Plan,
+    ) -> Option<Course> {
         let outcome = (self.engine)(network, plan);
         let mut tally = self.tally.lock().expect("no thread that holds it can panic");
         tally.runs += 1;
@@ -56,8 +62,11 @@ impl<'a> Runner<'a> {
             Ok((samples, ended)) => {
                 tally.steps += ended.work.steps;
                 let balance = &ended.balance;
-                let errors =
-                    [balance.mass_error_relative, balance.energy_error_relative, balance.element_error_relative];
+                let errors = [
+                    balance.mass_error_relative,
+                    balance.energy_error_relative,
+                    balance.element_error_relative,
+                ];
                 for (worst, error) in tally.worst_balance.iter_mut().zip(errors) {
                     *worst = worst.max(error.abs());
                 }

@@ -24,7 +24,10 @@ pub const VARIATIONS: [Variation; 13] = [
     Variation { name: "heat release × 1.1", vary: |choices| choices.heat_factor = 1.1 },
     Variation { name: "leakage 0.015 m² (2018 room shut)", vary: |choices| choices.leakage_2018_m2 = 0.015 },
     Variation { name: "hood lag 15 s (furniture)", vary: |choices| choices.hood_lag_s = 15.0 },
-    Variation { name: "layers of the engine, not seen by sensors", vary: |choices| choices.through_sensors = false },
+    Variation {
+        name: "layers of the engine, not seen by sensors",
+        vary: |choices| choices.through_sensors = false,
+    },
 ];
 
 /// What is watched: quantity and series.
@@ -49,6 +52,8 @@ pub fn biases(engine: &Engine, choices: &Choices) -> Vec<Option<f64>> {
     let points = super::validate(&series, engine, choices).points;
     WATCHED
         .iter()
-        .map(|&(quantity, series)| of_series(&points, quantity, series, &Point::ratio).map(|spread| spread.bias))
+        .map(|&(quantity, series)| {
+            of_series(&points, quantity, series, &Point::ratio).map(|spread| spread.bias)
+        })
         .collect()
 }

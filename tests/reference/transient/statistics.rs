@@ -153,7 +153,8 @@ mod tests_of_it {
 
     #[test]
     fn a_series_of_many_tests_weighs_as_one_of_few() {
-        let mut points: Vec<Point> = (0..9).map(|test| at(Series::Steckler, &test.to_string(), 1.1)).collect();
+        let mut points: Vec<Point> =
+            (0..9).map(|test| at(Series::Steckler, &test.to_string(), 1.1)).collect();
         points.push(at(Series::LargeRoom, "x", 0.9));
 
         let spread = pooled(&points, Quantity::UpperRise, &Point::ratio).unwrap();
@@ -171,7 +172,9 @@ mod tests_of_it {
         let points = vec![at(Series::Steckler, "a", 1.0), out, failed];
 
         let spread = of_series(&points, Quantity::UpperRise, Series::Steckler, &Point::ratio).unwrap();
-        let held = holding(&counting(&points, Quantity::UpperRise, Series::Steckler), &|point| point.computed.is_some());
+        let held = holding(&counting(&points, Quantity::UpperRise, Series::Steckler), &|point| {
+            point.computed.is_some()
+        });
 
         assert_eq!((spread.tests, spread.bias), (1, 1.0));
         // The failed one is a test all the same.

@@ -12,6 +12,11 @@ fn figures(spread: &Spread) -> String {
     )
 }
 
+/// Do the engine's own layers give another figure than the sensors see?
+fn differs(plain: &Spread, seen: &Spread) -> bool {
+    (plain.bias - seen.bias).abs() > 1e-9 || (plain.sd - seen.sd).abs() > 1e-9
+}
+
 /// The bars and what stands beside them.
 pub fn bars(validation: &Validation) -> String {
     let mut text = String::new();
@@ -45,7 +50,7 @@ fn bar(judged: &Judged, validation: &Validation) -> String {
             text.push_str(&format!("  without scatter {:.3}", pool.sd_without(scatter)));
         }
         if let Some(plain) = pooled(&validation.points, quantity, &plain_ratio)
-            && plain != *pool
+            && differs(&plain, pool)
         {
             text.push_str(&format!("  plain {:.3} ± {:.3}", plain.bias, plain.sd));
         }
@@ -63,12 +68,14 @@ fn bar(judged: &Judged, validation: &Validation) -> String {
         .collect();
     text.push_str(&format!("\n         must: {}\n", said.join(", ")));
     let proud: Vec<String> = judged.bar.proud.iter().map(|&demand| words(demand, quantity.unit())).collect();
-    text.push_str(&format!("         proud: {}\n", proud.join(", ")));
+    if !proud.is_empty() {
+        text.push_str(&format!("         proud: {}\n", proud.join(", ")));
+    }
     if judged.by_series.len() > 1 {
         for (series, spread) in &judged.by_series {
             text.push_str(&format!("         {:<14} {}", series.key(), figures(spread)));
             if let Some(plain) = of_series(&validation.points, quantity, *series, &plain_ratio)
-                && plain != *spread
+                && differs(&plain, spread)
             {
                 text.push_str(&format!("  plain {:.3} ± {:.3}", plain.bias, plain.sd));
             }

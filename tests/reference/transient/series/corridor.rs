@@ -3,7 +3,9 @@
 use sootline::fire::two_zone::{HeatRelease, Plan, Position, Side};
 
 use crate::transient::data::{Row, by_test};
-use crate::transient::inputs::{CALCIUM_SILICATE, CERAMIC_FIBRE, Choices, GYPSUM_BOARD, METHANE, air_at, network, room};
+use crate::transient::inputs::{
+    CALCIUM_SILICATE, CERAMIC_FIBRE, Choices, GYPSUM_BOARD, METHANE, air_at, network, room,
+};
 use crate::transient::point::{Point, Quantity, Series};
 use crate::transient::run::Runner;
 

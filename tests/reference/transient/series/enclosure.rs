@@ -55,8 +55,12 @@ fn test(name: &str, rows: &[Row], runner: &Runner, choices: &Choices) -> Vec<Poi
     let network = built(rows, choices);
     let time_s = last.number("time_s");
     let burn_end_s = last.number("burn_end_s");
-    let course =
-        runner.run(Series::Enclosure, name, &network, &Plan::every(20.0, if forced { time_s } else { burn_end_s.max(time_s) }));
+    let course = runner.run(
+        Series::Enclosure,
+        name,
+        &network,
+        &Plan::every(20.0, if forced { time_s } else { burn_end_s.max(time_s) }),
+    );
     let course = course.as_ref();
     let moment = format!("{time_s:.0} s");
     let left_out = if !forced && matches!(name, "51" | "52" | "55" | "60" | "61" | "62" | "63" | "64") {
@@ -64,7 +68,9 @@ fn test(name: &str, rows: &[Row], runner: &Runner, choices: &Choices) -> Vec<Poi
     } else if matches!(name, "43" | "45" | "47" | "48") {
         Some("sampling lag")
     } else if !forced {
-        Some("oxygen falls about 23 % slower than the nominal methane would: heat, volume or probe place unknown")
+        Some(
+            "oxygen falls about 23 % slower than the nominal methane would: heat, volume or probe place unknown",
+        )
     } else {
         None
     };
@@ -72,7 +78,8 @@ fn test(name: &str, rows: &[Row], runner: &Runner, choices: &Choices) -> Vec<Poi
         Point::new(Series::Enclosure, quantity, name, &moment, measured, computed).left_out_if(left_out)
     };
 
-    let quantity = if forced { Quantity::OxygenDecreaseForced } else { Quantity::OxygenDecreaseEnclosureShut };
+    let quantity =
+        if forced { Quantity::OxygenDecreaseForced } else { Quantity::OxygenDecreaseEnclosureShut };
     let decrease = 100.0 * (first.number("oxygen_mol") - last.number("oxygen_mol"));
     // Gas leaves by the duct out of the upper layer: that is what its analyser sees.
     let computed = course.and_then(|course| {
@@ -84,6 +91,7 @@ fn test(name: &str, rows: &[Row], runner: &Runner, choices: &Choices) -> Vec<Poi
     let start_k = first.number("west_mean_c") + 273.15;
     let measured_rise = 0.5 * (last.number("west_mean_c") + last.number("east_mean_c"))
         - 0.5 * (first.number("west_mean_c") + first.number("east_mean_c"));
-    let rise = course.and_then(|course| course.at(time_s, |sample| mean_k(&sample.rooms[0], HEIGHT_M) - start_k));
+    let rise =
+        course.and_then(|course| course.at(time_s, |sample| mean_k(&sample.rooms[0], HEIGHT_M) - start_k));
     vec![point(quantity, decrease, computed), point(Quantity::MeanRiseEnclosure, measured_rise, rise)]
 }

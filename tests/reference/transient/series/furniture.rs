@@ -65,8 +65,9 @@ pub fn points(runner: &Runner, choices: &Choices) -> Vec<Point> {
         let network = room_2018(true, FOAM, fire, ambient_c, choices);
         let course = runner.run(Series::Furniture, name, &network, &Plan::every(1.0, END_S));
         let course = course.as_ref();
-        let point =
-            |quantity, moment: &str, measured, computed| Point::new(Series::Furniture, quantity, name, moment, measured, computed);
+        let point = |quantity, moment: &str, measured, computed| {
+            Point::new(Series::Furniture, quantity, name, moment, measured, computed)
+        };
 
         let peak_c = course.and_then(|course| course.highest(top_c));
         points.push(point(
@@ -92,12 +93,16 @@ pub fn points(runner: &Runner, choices: &Choices) -> Vec<Point> {
                 continue;
             }
             let time_s = reading.number("time_s");
-            let plain =
-                course.and_then(|course| course.at(time_s, |sample| sample.rooms[0].upper.temperature_k - ambient_k));
-            let seen = course
-                .and_then(|course| course.at(time_s, |sample| TREE.seen(&sample.rooms[0]).upper_k - ambient_k));
+            let plain = course.and_then(|course| {
+                course.at(time_s, |sample| sample.rooms[0].upper.temperature_k - ambient_k)
+            });
+            let seen = course.and_then(|course| {
+                course.at(time_s, |sample| TREE.seen(&sample.rooms[0]).upper_k - ambient_k)
+            });
             let computed = if choices.through_sensors { seen } else { plain };
-            points.push(point(Quantity::UpperRise, &format!("{time_s:.0} s"), measured_k, computed).beside(plain));
+            points.push(
+                point(Quantity::UpperRise, &format!("{time_s:.0} s"), measured_k, computed).beside(plain),
+            );
         }
     }
     points

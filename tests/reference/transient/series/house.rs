@@ -10,8 +10,7 @@ use crate::transient::run::Runner;
 
 const WHY: &str = "doors not dimensioned, plan partly guessed";
 const HEIGHT_M: f64 = 2.44;
-const TREE: Tree =
-    Tree { sensors_m: &[0.30, 0.61, 0.91, 1.22, 1.52, 1.83, 2.13, 2.41], height_m: HEIGHT_M };
+const TREE: Tree = Tree { sensors_m: &[0.30, 0.61, 0.91, 1.22, 1.52, 1.83, 2.13, 2.41], height_m: HEIGHT_M };
 /// Leakage of the whole house, by blower door (seen), shared by floor area.
 const LEAKAGE_M2: f64 = 0.14;
 /// Propane radiates this share (Tewarson, 12.5 of 43.7, from memory).
@@ -93,7 +92,8 @@ fn built(rows: &[Row], choices: &Choices) -> Network {
     if vents.contains("front door open") {
         openings.push(choices.opening([Side::Room(LIVING), Side::Outside], 0.91, 2.03, 0.0));
     }
-    let initial_c = rows.iter().find(|row| index(row.text("room")) != fire_in).unwrap_or(first).number("initial_c");
+    let initial_c =
+        rows.iter().find(|row| index(row.text("room")) != fire_in).unwrap_or(first).number("initial_c");
     let fire = Fire {
         room: fire_in,
         radiative_fraction: PROPANE_RADIATES,
@@ -105,10 +105,13 @@ fn built(rows: &[Row], choices: &Choices) -> Network {
 
 /// Heat release as recorded at the times of the rows, else nominal; off with the gas.
 fn curve(rows: &[Row], choices: &Choices) -> Vec<(f64, f64)> {
-    let nominal_kw = rows[0].text("nominal_kw").split(' ').next().and_then(|kw| kw.parse().ok()).unwrap_or(110.0);
+    let nominal_kw =
+        rows[0].text("nominal_kw").split(' ').next().and_then(|kw| kw.parse().ok()).unwrap_or(110.0);
     let mut recorded: Vec<(f64, f64)> = rows
         .iter()
-        .map(|row| (row.number("time_s"), row.maybe("recorded_kw").unwrap_or(nominal_kw) * choices.heat_factor))
+        .map(|row| {
+            (row.number("time_s"), row.maybe("recorded_kw").unwrap_or(nominal_kw) * choices.heat_factor)
+        })
         .collect();
     recorded.sort_by(|a, b| a.0.total_cmp(&b.0));
     recorded.dedup_by(|a, b| a.0 == b.0);

@@ -65,7 +65,8 @@ fn test(name: &str, rows: &[Row], runner: &Runner, choices: &Choices) -> Vec<Poi
     }
     let course = runner.run(Series::LargeRoom, name, &network, &Plan::every(10.0, stop_s));
 
-    let left_out = (name == "17").then_some("toluene: the heat release is that of the fuel, of which it burns an unknown share");
+    let left_out = (name == "17")
+        .then_some("toluene: the heat release is that of the fuel, of which it burns an unknown share");
     let filled_s = filled_s(rows, stop_s);
     let mut points = Vec::new();
     for row in rows {

@@ -30,13 +30,16 @@ pub fn points(runner: &Runner, choices: &Choices) -> Vec<Point> {
         let measured = |kind: &str| {
             let near: Vec<f64> = rows
                 .iter()
-                .filter(|row| row.text("quantity").starts_with(kind) && (row.number("fuel_kw") - kw).abs() <= NEAR_KW)
+                .filter(|row| {
+                    row.text("quantity").starts_with(kind) && (row.number("fuel_kw") - kw).abs() <= NEAR_KW
+                })
                 .map(|row| row.number("value"))
                 .collect();
             near.iter().sum::<f64>() / count(near.len())
         };
         let point = |quantity, measured, computed| {
-            Point::new(Series::ReducedScale, quantity, &name, "steady", measured, computed).left_out_if(Some(WHY))
+            Point::new(Series::ReducedScale, quantity, &name, "steady", measured, computed)
+                .left_out_if(Some(WHY))
         };
         points.push(point(
             Quantity::UpperRise,

@@ -35,7 +35,8 @@ fn test(name: &str, rows: &[Row], runner: &Runner, choices: &Choices) -> Vec<Poi
         })
     };
     let point = |quantity, moment: &str, measured, computed| {
-        Point::new(Series::ShutBurner, quantity, name, moment, measured, computed).counted_as(configuration(name))
+        Point::new(Series::ShutBurner, quantity, name, moment, measured, computed)
+            .counted_as(configuration(name))
     };
 
     let mut points = Vec::new();
@@ -45,9 +46,9 @@ fn test(name: &str, rows: &[Row], runner: &Runner, choices: &Choices) -> Vec<Poi
             continue;
         }
         let moment = format!("{time_s:.0} s");
-        let rise = course.as_ref().and_then(|course| {
-            course.at(time_s, |sample| mean_k(&sample.rooms[0], HEIGHT_M) - ambient_k)
-        });
+        let rise = course
+            .as_ref()
+            .and_then(|course| course.at(time_s, |sample| mean_k(&sample.rooms[0], HEIGHT_M) - ambient_k));
         points.push(point(Quantity::MeanRiseShut, &moment, row.number("mean_c") - ambient_c, rise));
         if let Some(measured) = row.maybe("oxygen_upper_volpct") {
             let left = course.as_ref().and_then(|course| oxygen(course, time_s));

@@ -3,7 +3,9 @@
 use sootline::fire::two_zone::{Plan, Side};
 
 use crate::transient::data::{Row, table};
-use crate::transient::inputs::{CALCIUM_SILICATE, CERAMIC_FIBRE, Choices, METHANE, air_at, network, position, room};
+use crate::transient::inputs::{
+    CALCIUM_SILICATE, CERAMIC_FIBRE, Choices, METHANE, air_at, network, position, room,
+};
 use crate::transient::point::{Point, Quantity, Series};
 use crate::transient::profile::Tree;
 use crate::transient::run::Runner;
@@ -11,7 +13,8 @@ use crate::transient::run::Runner;
 /// The tree in the room, and the height that its archived reduction ran over.
 pub const TREE: Tree = Tree {
     sensors_m: &[
-        0.06, 0.17, 0.29, 0.40, 0.52, 0.63, 0.74, 0.86, 0.97, 1.09, 1.20, 1.31, 1.43, 1.54, 1.66, 1.77, 1.88, 2.0, 2.11,
+        0.06, 0.17, 0.29, 0.40, 0.52, 0.63, 0.74, 0.86, 0.97, 1.09, 1.20, 1.31, 1.43, 1.54, 1.66, 1.77, 1.88,
+        2.0, 2.11,
     ],
     height_m: 2.13,
 };
@@ -48,10 +51,13 @@ fn test(row: &Row, runner: &Runner, choices: &Choices) -> Vec<Point> {
 
     let wrong_flow = matches!(name, "242" | "542" | "544");
     let no_height = matches!(name, "41" | "541");
-    let flow = wrong_flow.then_some("flow carries more than the heat of the fire: wrong opening, heat or flow");
+    let flow =
+        wrong_flow.then_some("flow carries more than the heat of the fire: wrong opening, heat or flow");
     let height = no_height.then_some("velocity rows are shifted");
     let ambient_k = ambient_c + 273.15;
-    let point = |quantity, measured: f64, computed| Point::new(Series::Steckler, quantity, name, "steady", measured, computed);
+    let point = |quantity, measured: f64, computed| {
+        Point::new(Series::Steckler, quantity, name, "steady", measured, computed)
+    };
 
     let plain_rise = end.map(|end| end.rooms[0].upper.temperature_k - ambient_k);
     let plain_depth = end.map(|end| TREE.height_m - end.rooms[0].interface_height_m);
