@@ -29,6 +29,8 @@ pub struct Choices {
     pub heat_factor: f64,
     /// Lag of the oxygen points of the 2018 room, s: 10 to 20 s as the data say, middle.
     pub oxygen_lag_s: f64,
+    /// True: the oxygen points of the 2018 room read dried gas, which is common practice; not stated.
+    pub oxygen_dried: bool,
     /// Lag of the hood that measured the furniture, s. 0 to 25 s is unresolved: taken as logged.
     pub hood_lag_s: f64,
     /// True: layers are compared as the sensors of the test would see them. False: as the engine has them.
@@ -46,6 +48,7 @@ impl Default for Choices {
             discharge_coefficient: 0.7,
             heat_factor: 1.0,
             oxygen_lag_s: 15.0,
+            oxygen_dried: true,
             hood_lag_s: 0.0,
             through_sensors: true,
         }

@@ -1,7 +1,13 @@
 //! Published experiments beside the transient engine: the validation, and its record.
 
+/// Adds a line to a text.
+macro_rules! line {
+    ($text:expr, $($words:tt)*) => { crate::transient::add_line(&mut $text, format_args!($($words)*)) };
+}
+
 pub mod bars;
 pub mod data;
+pub mod evidence;
 pub mod inputs;
 pub mod misses;
 pub mod plots;
@@ -9,6 +15,7 @@ pub mod point;
 pub mod profile;
 pub mod range;
 pub mod record;
+pub mod repeat;
 pub mod run;
 pub mod sensitivity;
 pub mod series;
@@ -19,6 +26,12 @@ pub mod table;
 use inputs::Choices;
 use point::{Point, Series};
 use run::{Engine, Runner, Tally};
+
+/// See `line!`.
+pub fn add_line(text: &mut String, words: std::fmt::Arguments) {
+    use std::fmt::Write as _;
+    text.write_fmt(words).and_then(|()| text.write_char('\n')).expect("a string takes all that memory holds");
+}
 
 /// All that came out.
 pub struct Validation {

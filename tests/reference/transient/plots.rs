@@ -4,6 +4,7 @@ use std::fmt::Write as _;
 
 use super::bars::Judged;
 use super::point::{Point, Series};
+use super::statistics::counting;
 
 /// A drawing, px.
 const SIZE: f64 = 560.0;
@@ -24,9 +25,13 @@ const fn colour(series: Series) -> &'static str {
     }
 }
 
-fn mark(series: Series, x: f64, y: f64) -> String {
+fn mark(series: Series, x: f64, y: f64, counts: bool) -> String {
     let fill = colour(series);
-    let style = format!(r##"fill="{fill}" fill-opacity="0.65" stroke="{fill}" stroke-width="0.5""##);
+    let style = if counts {
+        format!(r##"fill="{fill}" fill-opacity="0.65" stroke="{fill}" stroke-width="0.5""##)
+    } else {
+        format!(r##"fill="none" stroke="{fill}" stroke-width="1.2""##)
+    };
     let corners = |points: &[(f64, f64)]| {
         let corners: Vec<String> =
             points.iter().map(|(dx, dy)| format!("{:.1},{:.1}", x + dx, y + dy)).collect();
@@ -122,7 +127,7 @@ pub fn scatter(judged: &Judged, points: &[Point]) -> String {
     let quantity = judged.bar.quantity;
     let shown: Vec<(&Point, f64)> = points
         .iter()
-        .filter(|point| point.quantity == quantity && point.left_out.is_none())
+        .filter(|point| point.quantity == quantity && !counting(points, quantity, point.series).is_empty())
         .filter_map(|point| Some((point, point.computed?)))
         .collect();
     let values: Vec<f64> = shown.iter().flat_map(|(point, computed)| [point.measured, *computed]).collect();
@@ -131,7 +136,8 @@ pub fn scatter(judged: &Judged, points: &[Point]) -> String {
     let across = |value: f64| LEFT + SIDE * axis.share(value);
     let up = |value: f64| TOP + SIDE * (1.0 - axis.share(value));
 
-    let legend_lines = series.len() + 3;
+    let hollow = shown.iter().find(|(point, _)| point.left_out.is_some()).map(|(point, _)| point.series);
+    let legend_lines = series.len() + 3 + usize::from(hollow.is_some());
     let height = TOP + SIDE + 62.0 + LEGEND_LINE * super::run::count(legend_lines);
     let mut svg = String::new();
     let mut put = |line: String| {
@@ -187,7 +193,7 @@ pub fn scatter(judged: &Judged, points: &[Point]) -> String {
         put(line(pool.bias * (1.0 + 2.0 * pool.sd), BAND));
     }
     for (point, computed) in &shown {
-        put(mark(point.series, across(point.measured), up(*computed)));
+        put(mark(point.series, across(point.measured), up(*computed), point.left_out.is_none()));
     }
     put(format!(
         r##"<rect x="{LEFT:.0}" y="{TOP:.0}" width="{SIDE:.0}" height="{SIDE:.0}" fill="none" stroke="#222222"/>"##
@@ -205,8 +211,13 @@ pub fn scatter(judged: &Judged, points: &[Point]) -> String {
     ));
     let mut y = TOP + SIDE + 60.0;
     for series in series {
-        put(mark(series, LEFT + 8.0, y - 4.0));
+        put(mark(series, LEFT + 8.0, y - 4.0, true));
         put(format!(r##"<text x="{:.0}" y="{y:.0}">{}</text>"##, LEFT + 34.0, series.title()));
+        y += LEGEND_LINE;
+    }
+    if let Some(series) = hollow {
+        put(mark(series, LEFT + 8.0, y - 4.0, false));
+        put(format!(r##"<text x="{:.0}" y="{y:.0}">left out of bias and band</text>"##, LEFT + 34.0));
         y += LEGEND_LINE;
     }
     let keys =

@@ -86,10 +86,12 @@ pub enum Quantity {
     OxygenDecreaseEnclosureShut,
     OxygenLeft,
     RemoteRise,
+    OxygenMeanShut,
+    OxygenFallShut,
 }
 
 impl Quantity {
-    pub const ALL: [Self; 18] = [
+    pub const ALL: [Self; 20] = [
         Self::UpperRise,
         Self::LayerDepth,
         Self::VentFlow,
@@ -108,6 +110,8 @@ impl Quantity {
         Self::OxygenDecreaseEnclosureShut,
         Self::OxygenLeft,
         Self::RemoteRise,
+        Self::OxygenMeanShut,
+        Self::OxygenFallShut,
     ];
 
     pub const fn key(self) -> &'static str {
@@ -130,6 +134,8 @@ impl Quantity {
             Self::OxygenDecreaseEnclosureShut => "oxygen_decrease_enclosure_shut",
             Self::OxygenLeft => "oxygen_left",
             Self::RemoteRise => "remote_rise",
+            Self::OxygenMeanShut => "oxygen_mean_decrease_shut",
+            Self::OxygenFallShut => "oxygen_fall_shut",
         }
     }
 
@@ -154,6 +160,10 @@ impl Quantity {
             Self::OxygenDecreaseEnclosureShut => "oxygen decrease, enclosure shut",
             Self::OxygenLeft => "oxygen left",
             Self::RemoteRise => "rise in rooms away from the fire",
+            Self::OxygenMeanShut => {
+                "oxygen decrease, shut, mean of both points against mean of the room (straight to the floor)"
+            }
+            Self::OxygenFallShut => "fall of that mean from 180 to 240 s, 100 kW",
         }
     }
 
@@ -172,7 +182,9 @@ impl Quantity {
             | Self::ExtinctionOxygen
             | Self::OxygenDecreaseOpen
             | Self::OxygenDecreaseEnclosureShut
-            | Self::OxygenLeft => "vol-%",
+            | Self::OxygenLeft
+            | Self::OxygenMeanShut
+            | Self::OxygenFallShut => "vol-%",
             Self::ExtinctionTime | Self::TimeTo500 => "s",
             Self::Reaches600 => "yes 1, no 0",
         }

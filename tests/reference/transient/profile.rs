@@ -87,6 +87,11 @@ pub fn layer_at(room: &RoomState, height_m: f64) -> &Layer {
 /// Oxygen as an analyser reads it: by volume of the dried gas, percent. That the sample is dried is
 /// common practice. Nitrogen stands with the argon of air, 28.15 g/mol.
 pub fn dry_oxygen_volpct(layer: &Layer, fuel_g_mol: f64) -> f64 {
+    oxygen_volpct(layer, fuel_g_mol, true)
+}
+
+/// Oxygen by volume, percent, of the gas dried or as it is.
+pub fn oxygen_volpct(layer: &Layer, fuel_g_mol: f64, dried: bool) -> f64 {
     let gas = &layer.gas;
     let rest = 1.0
         - gas.oxygen
@@ -97,13 +102,15 @@ pub fn dry_oxygen_volpct(layer: &Layer, fuel_g_mol: f64) -> f64 {
         - gas.soot
         - gas.unburned_fuel;
     let oxygen = gas.oxygen / 32.0;
-    let dry = oxygen
+    let water = if dried { 0.0 } else { gas.water / 18.015 };
+    let all = water
+        + oxygen
         + gas.carbon_dioxide / 44.01
         + gas.carbon_monoxide / 28.01
         + gas.hydrogen_cyanide / 27.03
         + gas.unburned_fuel / fuel_g_mol
         + rest.max(0.0) / 28.15;
-    100.0 * oxygen / dry
+    100.0 * oxygen / all
 }
 
 #[cfg(test)]
@@ -179,5 +186,9 @@ mod tests {
         };
         let got = dry_oxygen_volpct(&Layer { gas: burnt, ..Layer::default() }, 16.04);
         assert!((got - 6.53).abs() < 0.05, "{got}");
+
+        // The same with its 2 mol of water: 0.81 of 14.41 mol, 5.62 %.
+        let got = oxygen_volpct(&Layer { gas: burnt, ..Layer::default() }, 16.04, false);
+        assert!((got - 5.62).abs() < 0.05, "{got}");
     }
 }

@@ -6,81 +6,14 @@ use std::fmt::Write as _;
 
 use super::Validation;
 use super::bars::{BARS, Judged, judge, words};
+use super::evidence;
 use super::inputs::Choices;
 use super::point::{Point, Quantity, Series};
-use super::range::Measure;
+use super::range::numbers;
+use super::repeat::{choices, experiments, tests_one_by_one};
 use super::sensitivity::{VARIATIONS, WATCHED, biases};
 use super::statistics::{Spread, counting, of_series, plain_ratio};
 use super::summary::{barred, two_digits};
-
-/// Source, geometry and what is sure, of each series.
-const fn about(series: Series) -> [&'static str; 3] {
-    match series {
-        Series::Steckler => [
-            "Steckler, Quintiere, Rinkinen, NBSIR 82-2520 (1982)",
-            "2.8 × 2.8 × 2.18 m; doors and windows; methane, 32 to 158 kW, steady",
-            "profiles seen; opening, heat and place from memory, checked against flow, temperature and mass balance; lining from memory",
-        ],
-        Series::OpenBurner => [
-            "Willi, Madrzykowski, McKinnon, Dow, zenodo 5703475 (2021)",
-            "3.66 × 3.66 × 2.44 m; door 0.90 × 2.0 m; natural gas, 100 to 500 kW, four places",
-            "all seen but board and height of the burner",
-        ],
-        Series::ShutBurner => [
-            "the same",
-            "the same room, door shut; natural gas, 100 and 500 kW",
-            "all seen but board, height of the burner and leakage",
-        ],
-        Series::Furniture => [
-            "the same",
-            "the same room, door open; chair and sofa, heat release as the hood measured it",
-            "all seen but board and hood lag",
-        ],
-        Series::FurnitureShut => [
-            "the same",
-            "the same room, door shut; chair and sofa",
-            "heat release not measured: the curve of the same item in the open is burnt",
-        ],
-        Series::LargeRoom => [
-            "Hamins and others, NIST SP 1013-1 (2006)",
-            "21.7 × 7.0 × 3.8 m; door open or shut, fans on or off; heptane, 0.4 to 1.2 MW",
-            "layers seen; geometry, lining, heat and fans from memory (medium); ambient worked out from the first two rows",
-        ],
-        Series::Enclosure => [
-            "Foote, LLNL enclosure fire tests, UCID-21236 (1987)",
-            "6.0 × 4.0 × 4.5 m; fan 0.1 to 0.6 kg/s or shut; methane, 50 to 400 kW",
-            "channels seen; geometry and lining from memory (medium)",
-        ],
-        Series::Corridor => [
-            "Peacock, Davis, Lee, NBSIR 88-3752 (1988)",
-            "2.3 m burn room, stub, corridor of 12.2 m; gas, 100 kW",
-            "layers seen; geometry and lining from memory, and something of it does not fit",
-        ],
-        Series::House => [
-            "UL Fire Safety Research Institute (2022)",
-            "six rooms of 2.44 m on one floor, basement; propane, 110 and 280 kW",
-            "channels seen; doors not dimensioned, plan partly guessed",
-        ],
-        Series::ReducedScale => [
-            "Bryner, Johnsson, Pitts, NISTIR 5568 (1994)",
-            "0.98 × 1.46 × 0.98 m, door 0.48 × 0.81 m; natural gas, 50 to 600 kW",
-            "channels seen; geometry from memory (medium)",
-        ],
-        Series::ChairRoom => [
-            "Peacock, Davis, Babrauskas, J. Res. NIST 96 (1991) 411",
-            "2.26 × 3.94 × 2.31 m, window 2.0 × 1.13 m; chair",
-            "channels seen; geometry from memory (low)",
-        ],
-    }
-}
-
-fn line(text: &mut String, words: std::fmt::Arguments) {
-    text.write_fmt(words).and_then(|()| text.write_char('\n')).expect("a string takes all that memory holds");
-}
-
-macro_rules! line {
-    ($text:expr, $($words:tt)*) => { line(&mut $text, format_args!($($words)*)) };
-}
 
 fn plus_minus(spread: &Spread) -> String {
     format!("{:.2} ± {:.2}", spread.bias, spread.sd)
@@ -93,12 +26,15 @@ pub fn write(validation: &Validation, engine: &super::run::Engine) -> String {
         opening(),
         experiments(validation),
         choices(),
+        tests_one_by_one(),
         method(),
-        bars(&judged),
+        bars(&judged, &validation.points),
         missed(&judged),
+        evidence::write(validation),
         by_series(validation, &judged),
         reported(validation),
         left_out(validation),
+        put_back(validation),
         sensitivity(engine),
         range(validation),
         limits(),
@@ -121,94 +57,18 @@ fn opening() -> String {
          starved fire goes out.\n\n\
          Verification is apart from this record: closed forms, order of convergence, balances over random buildings, symmetry, limits and an \
          independent solver stand as tests beside the engine. Here every run must end, and keep mass, energy and elements within 1e-8.\n\n\
-         Kind of comparison: open in the sense of E1355, as the results were known. Constants of the engine come from publications, one \
-         set for all series; inputs that no report gives were chosen once, before any run, and are listed below with what each is worth. About a \
-         third of the tests of each series is kept back for a blind comparison without change. Two choices had the shut tests of 2018 in view: \
-         leakage of 0.03 m² was fitted by others to the pressure at 60 s, and the height at which the layer came to rest spoke for a \
-         burner top near 0.5 m.\n",
+         Kind of comparison: open in the sense of E1355: the measured results were known. Inputs that no report gives were chosen once, \
+         before the engine ran, and are listed below with what each is worth. About a third of the tests of each series is kept back for a blind \
+         comparison without change.\n\n\
+         What had open tests in view:\n\n\
+         - leakage of 0.03 m² of the 2018 room: fitted by others to the pressure at 60 s; its burner top near 0.5 m: spoken for by the height at which the \
+         layer came to rest in the shut tests;\n\
+         - of the engine: which of the published plumes is used, and that a wall and a corner enlarge a fire by the root of its mirror images (√2 and 2): full \
+         mirrors suit Steckler's room, none at all the 2018 room, and no publication gives the root;\n\
+         - of the engine, without a publication: a flame too weak to last lingers 30 s; the band of 0.06 kg/kg over which it weakens;\n\
+         - one reading of an exclusion rule was settled after the engine had run, and turns a missed bar into a met one: see *Left out of the bars*.\n\n\
+         Other constants of the engine come from publications named in its documentation, one set for all series.\n",
     )
-}
-
-fn experiments(validation: &Validation) -> String {
-    let mut text = String::from(
-        "## Experiments\n\n| series | source | what | how sure | tests run |\n|---|---|---|---|---|\n",
-    );
-    for series in Series::ALL {
-        let [source, what, sure] = about(series);
-        let mut tests: Vec<&str> = validation
-            .points
-            .iter()
-            .filter(|point| point.series == series)
-            .map(|point| point.test.as_str())
-            .collect();
-        tests.sort_unstable();
-        tests.dedup();
-        line!(text, "| {} | {source} | {what} | {sure} | {} |", series.title(), tests.len());
-    }
-    text
-}
-
-fn choices() -> String {
-    let chosen = Choices::default();
-    let mut text = String::from(
-        "## Inputs that no report gives\n\nOne choice each, for all series, made before any run.\n\n\
-         | input | value | from |\n|---|---|---|\n",
-    );
-    let rows = [
-        ("burner top, 2018 room", format!("{} m", chosen.burner_top_m), "not stated; middle of 0.3 to 0.7 m"),
-        (
-            "share radiated, methane and natural gas",
-            format!("{}", chosen.methane_radiates),
-            "gas burner of 0.37 m, NIST (from memory); 0.14 for small flames (Tewarson, from memory)",
-        ),
-        (
-            "share radiated, furniture",
-            format!("{}", chosen.furniture_radiates),
-            "common practice for mixed fuel",
-        ),
-        (
-            "share radiated, heptane spray; propane",
-            "0.44; 0.29".to_owned(),
-            "the report; Tewarson (both from memory)",
-        ),
-        (
-            "board of the 2018 room, house, corridor",
-            "gypsum, 15.9 mm, 0.17 W/(m K), 960 kg/m³, 1100 J/(kg K)".to_owned(),
-            "Karlsson and Quintiere, Table 6.1 (from memory)",
-        ),
-        (
-            "Steckler's lining",
-            "ceramic-fibre board, 25 mm, 0.09 W/(m K), 260 kg/m³, 1050 J/(kg K)".to_owned(),
-            "maker's values (from memory)",
-        ),
-        (
-            "large room's lining",
-            "calcium silicate, 12.7 mm, 0.12 W/(m K), 737 kg/m³, 1200 J/(kg K)".to_owned(),
-            "the report (from memory)",
-        ),
-        (
-            "enclosure's lining",
-            "refractory, 0.1 m, 0.39 W/(m K), 1440 kg/m³, 1000 J/(kg K)".to_owned(),
-            "the report (from memory)",
-        ),
-        ("leakage, 2018 room shut", format!("{} m²", chosen.leakage_2018_m2), "fits the pressure at 60 s"),
-        (
-            "discharge coefficient of openings",
-            format!("{}", chosen.discharge_coefficient),
-            "0.68 inwards, 0.73 outwards (Steckler), mean",
-        ),
-        ("lag of oxygen points, 2018", format!("{} s", chosen.oxygen_lag_s), "10 to 20 s, middle"),
-        (
-            "lag of the hood, furniture",
-            format!("{} s", chosen.hood_lag_s),
-            "0 to 25 s, unresolved: as logged",
-        ),
-        ("fuel of the furniture", "flexible foam GM23".to_owned(), "Tewarson (from memory)"),
-    ];
-    for (input, value, from) in rows {
-        line!(text, "| {input} | {value} | {from} |");
-    }
-    text
 }
 
 fn method() -> String {
@@ -220,7 +80,8 @@ fn method() -> String {
          series were reduced elsewhere with sensors not known here: plain layers.\n\
          - Flow through an opening: mean of in and out. Neutral plane: where the flow turns.\n\
          - Oxygen: by volume of the dried gas, at the height of the probe and with its lag; in the enclosure with a fan, in the gas that leaves.\n\
-         - Mean rise: over the whole height.\n\
+         - Mean rise: over the whole height, by volume.\n\
+         - First passing of a mark: by a straight line between samples of 1 s; measured: 5 s running mean.\n\
          - Self-extinction: the first time that the fire goes out for want of oxygen; oxygen 5 s before, each at its own time.\n\
          - Furniture: mean of what sensors 0.025, 0.3 and 0.6 m below the ceiling would read; history: every 10 s from a rise of 100 K on.\n\
          - Large room: from 180 s on with the door open, from the lowest interface on when shut, until the fuel was stopped.\n\n\
@@ -234,9 +95,25 @@ fn method() -> String {
     )
 }
 
-fn bars(judged: &[Judged]) -> String {
+/// The verdict, and the other one where it hangs on what was left out.
+fn verdict(judged: &Judged, points: &[Point]) -> String {
+    let again = judged_with_all(points, judged.bar.quantity).filter(|(_, again)| again.met() != judged.met());
+    match again.and_then(|(tests, again)| Some((tests.len(), again.pooled?))) {
+        Some((tests, pool)) => {
+            let other = if judged.met() { "missed" } else { "met" };
+            format!(
+                "{}; **{other}, {}, with the {tests} tests that are left out**",
+                judged.verdict(),
+                plus_minus(&pool)
+            )
+        }
+        None => judged.verdict().to_owned(),
+    }
+}
+
+fn bars(judged: &[Judged], points: &[Point]) -> String {
     let mut text = String::from(
-        "## Bars\n\nBias ± relative standard deviation, all series weighing the same, the measurement's scatter within. Set before the engine ran.\n\n\
+        "## Bars\n\nBias ± relative standard deviation, all series weighing the same, the measurement's scatter within. The bars were set before the engine ran.\n\n\
          | quantity | tests | bias ± sd | sd without s | s | tests right | must | | worth being proud of |\n|---|---|---|---|---|---|---|---|---|\n",
     );
     for one in judged {
@@ -265,7 +142,7 @@ fn bars(judged: &[Judged]) -> String {
             one.bar.scatter.map_or_else(String::new, |(scatter, _)| scatter.to_string()),
             one.held.map_or_else(String::new, |(right, of)| format!("{right} of {of}")),
             say(&one.must),
-            one.verdict(),
+            verdict(one, points),
             say(&one.proud),
         );
     }
@@ -391,9 +268,81 @@ fn left_out(validation: &Validation) -> String {
     }
     text.push_str(
         "\nNot compared at all: neutral plane and door flow of the 2018 room (scatter of 0.44 m and 30 %), its oxygen 1.8 m below the \
-         ceiling; the large room before 180 s.\n",
+         ceiling; the large room before 180 s.\n\n\
+         The rule for the enclosure came with the data: \"43, 45, 47, 48 and divided rows before 500 s: sampling lag\". Read to the letter it takes out none of \
+         the rows that are compared: the open tests have no divided row between 0 and 500 s. We read it as *up to and with* 500 s, the only way in which it \
+         says anything about these tests (those that are kept back may hold earlier rows). This was settled after the engine had run and with its figures \
+         known; it turns the bar from missed into met, so both figures stand below and in the summary. What speaks for it without the engine is in *Oxygen of \
+         the enclosure against an evenly mixed room*.\n",
     );
     text
+}
+
+/// The bars again with what was left out of series that count.
+fn put_back(validation: &Validation) -> String {
+    let mut text = String::from(
+        "### The bars with those put back\n\nOf series that count for the bar; whole series without a bar stay out.\n\n\
+         | quantity | as judged | put back | bias ± sd then | verdict then |\n|---|---|---|---|---|\n",
+    );
+    for judged in judge(&validation.points) {
+        let quantity = judged.bar.quantity;
+        let Some(again) = judged_with_all(&validation.points, quantity) else {
+            continue;
+        };
+        line!(
+            text,
+            "| {} | {} | {} | {} | {} |",
+            quantity.title(),
+            judged.pooled.as_ref().map_or_else(String::new, plus_minus),
+            again.0.join(", "),
+            again.1.pooled.as_ref().map_or_else(String::new, plus_minus),
+            again.1.verdict(),
+        );
+    }
+    text.push_str("\n| quantity | series | test | moment | measured | computed | ratio | why it is out |\n|---|---|---|---|---|---|---|---|\n");
+    for quantity in BARS.iter().map(|bar| bar.quantity) {
+        for point in out_of_counting(&validation.points, quantity) {
+            line!(
+                text,
+                "| {} | {} | {} | {} | {:.3} | {} | {} | {} |",
+                quantity.title(),
+                point.series.key(),
+                point.test,
+                point.moment,
+                point.measured,
+                point.computed.map_or_else(|| "none".to_owned(), |computed| format!("{computed:.2}")),
+                point.ratio().map_or_else(|| "none".to_owned(), |ratio| format!("{ratio:.2}")),
+                point.left_out.unwrap_or_default(),
+            );
+        }
+    }
+    text
+}
+
+/// What is left out of series that count for a quantity.
+fn out_of_counting(points: &[Point], quantity: Quantity) -> Vec<&Point> {
+    points
+        .iter()
+        .filter(|point| point.quantity == quantity && point.left_out.is_some())
+        .filter(|point| !counting(points, quantity, point.series).is_empty())
+        .collect()
+}
+
+/// A bar judged with everything of its series; none where nothing was left out.
+pub fn judged_with_all(points: &[Point], quantity: Quantity) -> Option<(Vec<String>, Judged)> {
+    let out = out_of_counting(points, quantity);
+    if out.is_empty() {
+        return None;
+    }
+    let mut tests: Vec<String> = out.iter().map(|point| point.test.clone()).collect();
+    tests.dedup();
+    let counted: Vec<Point> = points
+        .iter()
+        .filter(|point| !counting(points, point.quantity, point.series).is_empty())
+        .map(|point| Point { left_out: None, ..point.clone() })
+        .collect();
+    let judged = judge(&counted).into_iter().find(|judged| judged.bar.quantity == quantity)?;
+    Some((tests, judged))
 }
 
 fn sensitivity(engine: &super::run::Engine) -> String {
@@ -421,17 +370,19 @@ fn sensitivity(engine: &super::run::Engine) -> String {
 }
 
 fn range(validation: &Validation) -> String {
-    let mut text = String::from("## Range of the set\n\nSeries behind a bar.\n\n| measure ");
+    let mut text = String::from(
+        "## Range of the set\n\nSeries behind a bar, in the numbers by which a report places a room.\n\n| number ",
+    );
     let behind = barred(validation);
     for series in &behind {
         let _ = write!(text, "| {} ", series.key());
     }
     line!(text, "| all |\n|---{}|---|", "|---".repeat(behind.len()));
-    for measure in Measure::ALL {
-        let _ = write!(text, "| {} ", measure.title());
+    for (number, _, title) in numbers() {
+        let _ = write!(text, "| {title} ");
         let ranges = &validation.tally.ranges;
-        let cells = behind.iter().map(|&series| ranges.get(series, measure));
-        for cell in cells.chain([ranges.over(&behind, measure)]) {
+        let cells = behind.iter().map(|&series| ranges.get(series, number));
+        for cell in cells.chain([ranges.over(&behind, number)]) {
             let said = cell.map_or_else(String::new, |(low, high)| {
                 let (low, high) = (two_digits(low), two_digits(high));
                 if low == high { low } else { format!("{low} to {high}") }

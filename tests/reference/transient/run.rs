@@ -70,7 +70,7 @@ impl<'a> Runner<'a> {
                 for (worst, error) in tally.worst_balance.iter_mut().zip(errors) {
                     *worst = worst.max(error.abs());
                 }
-                tally.ranges.add(series, network, &samples);
+                tally.ranges.add(series, network);
                 Some(Course { samples, ended })
             }
             Err(failed) => {

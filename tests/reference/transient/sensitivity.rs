@@ -11,7 +11,7 @@ pub struct Variation {
     pub vary: fn(&mut Choices),
 }
 
-pub const VARIATIONS: [Variation; 13] = [
+pub const VARIATIONS: [Variation; 14] = [
     Variation { name: "burner top at 0.3 m (2018 room)", vary: |choices| choices.burner_top_m = 0.3 },
     Variation { name: "burner top at 0.7 m (2018 room)", vary: |choices| choices.burner_top_m = 0.7 },
     Variation { name: "methane radiates 0.14", vary: |choices| choices.methane_radiates = 0.14 },
@@ -23,6 +23,10 @@ pub const VARIATIONS: [Variation; 13] = [
     Variation { name: "heat release × 0.9", vary: |choices| choices.heat_factor = 0.9 },
     Variation { name: "heat release × 1.1", vary: |choices| choices.heat_factor = 1.1 },
     Variation { name: "leakage 0.015 m² (2018 room shut)", vary: |choices| choices.leakage_2018_m2 = 0.015 },
+    Variation {
+        name: "oxygen points read undried gas (2018 room)",
+        vary: |choices| choices.oxygen_dried = false,
+    },
     Variation { name: "hood lag 15 s (furniture)", vary: |choices| choices.hood_lag_s = 15.0 },
     Variation {
         name: "layers of the engine, not seen by sensors",
@@ -31,7 +35,7 @@ pub const VARIATIONS: [Variation; 13] = [
 ];
 
 /// What is watched: quantity and series.
-pub const WATCHED: [(Quantity, Series); 10] = [
+pub const WATCHED: [(Quantity, Series); 14] = [
     (Quantity::UpperRise, Series::Steckler),
     (Quantity::UpperRise, Series::OpenBurner),
     (Quantity::UpperRise, Series::LargeRoom),
@@ -39,9 +43,13 @@ pub const WATCHED: [(Quantity, Series); 10] = [
     (Quantity::LayerDepth, Series::Steckler),
     (Quantity::LayerDepth, Series::OpenBurner),
     (Quantity::VentFlow, Series::Steckler),
+    (Quantity::OxygenDecreaseForced, Series::Enclosure),
     (Quantity::OxygenDecreaseShut, Series::ShutBurner),
+    (Quantity::OxygenFallShut, Series::ShutBurner),
+    (Quantity::MeanRiseShut, Series::ShutBurner),
     (Quantity::ExtinctionTime, Series::ShutBurner),
     (Quantity::TimeTo500, Series::Furniture),
+    (Quantity::PeakRise, Series::Furniture),
 ];
 
 /// Bias of each watched quantity under a variation.

@@ -1,11 +1,10 @@
 //! The figures in short, as JSON, for those who ask the service what its methods are worth.
 
-use std::fmt::Write as _;
-
 use super::Validation;
-use super::bars::judge;
+use super::bars::{Judged, judge, words};
 use super::point::{Quantity, Series};
-use super::range::Measure;
+use super::range::numbers;
+use super::record::judged_with_all;
 
 /// Series that stand behind a bar.
 pub fn barred(validation: &Validation) -> Vec<Series> {
@@ -21,58 +20,80 @@ pub fn barred(validation: &Validation) -> Vec<Series> {
         .collect()
 }
 
-/// Per quantity: bias, scatter with and without that of the measurement, tests, series, met or not; then the
-/// range of the set. Rounded to what two machines agree on.
+/// Per quantity: bias, scatter with and without that of the measurement, tests, series, what was asked, met or
+/// not and why not, the figure with left-out tests put back; then the range of the set. Rounded to what two machines
+/// agree on.
 pub fn json(validation: &Validation) -> String {
-    let mut quantities = Vec::new();
-    for judged in judge(&validation.points) {
-        let quantity = judged.bar.quantity;
-        let mut fields =
-            vec![text("key", quantity.key()), text("title", quantity.title()), text("unit", quantity.unit())];
-        if let Some(pool) = &judged.pooled {
-            fields.push(format!(r#""bias": {:.2}"#, pool.bias));
-            fields.push(format!(r#""sd_relative": {:.2}"#, pool.sd));
-            if let Some((scatter, _)) = judged.bar.scatter {
-                fields.push(format!(r#""sd_relative_without_measurement": {:.2}"#, pool.sd_without(scatter)));
-            }
-        }
-        if let Some((right, of)) = judged.held {
-            fields.push(format!(r#""tests_right": {right}"#));
-            fields.push(format!(r#""tests": {of}"#));
-        } else if let Some(pool) = &judged.pooled {
-            fields.push(format!(r#""tests": {}"#, pool.tests));
-        }
-        let series: Vec<String> = if quantity == Quantity::Reaches600 {
-            vec![quoted(Series::Furniture.key())]
-        } else {
-            judged.by_series.iter().map(|(series, _)| quoted(series.key())).collect()
-        };
-        fields.push(format!(r#""series": [{}]"#, series.join(", ")));
-        fields.push(format!(r#""met": {}"#, judged.met()));
-        quantities.push(format!("    {{ {} }}", fields.join(", ")));
-    }
+    let quantities: Vec<String> =
+        judge(&validation.points).iter().map(|judged| quantity(judged, validation)).collect();
     let behind = barred(validation);
-    let ranges: Vec<String> = Measure::ALL
-        .into_iter()
-        .filter_map(|measure| {
-            let (low, high) = validation.tally.ranges.over(&behind, measure)?;
-            Some(format!(
-                "    {{ {}, {}, \"low\": {}, \"high\": {} }}",
-                text("key", measure.key()),
-                text("title", measure.title()),
-                two_digits(low),
-                two_digits(high)
-            ))
+    let ranges: Vec<String> = numbers()
+        .filter_map(|(number, key, title)| {
+            let (low, high) = validation.tally.ranges.over(&behind, number)?;
+            let fields = [
+                text("key", key),
+                text("title", title),
+                format!("\"low\": {}", two_digits(low)),
+                format!("\"high\": {}", two_digits(high)),
+            ];
+            Some(format!("    {{ {} }}", fields.join(", ")))
         })
         .collect();
-    let mut json = String::from("{\n  \"quantities\": [\n");
-    writeln!(json, "{}\n  ],\n  \"range\": [\n{}\n  ]\n}}", quantities.join(",\n"), ranges.join(",\n"))
-        .expect("a string takes all that memory holds");
-    json
+    format!(
+        "{{\n  \"quantities\": [\n{}\n  ],\n  \"range\": [\n{}\n  ]\n}}\n",
+        quantities.join(",\n"),
+        ranges.join(",\n")
+    )
+}
+
+fn quantity(judged: &Judged, validation: &Validation) -> String {
+    let quantity = judged.bar.quantity;
+    let mut fields =
+        vec![text("key", quantity.key()), text("title", quantity.title()), text("unit", quantity.unit())];
+    if let Some(pool) = &judged.pooled {
+        fields.push(format!("\"bias\": {:.2}", pool.bias));
+        fields.push(format!("\"sd_relative\": {:.2}", pool.sd));
+        if let Some((scatter, _)) = judged.bar.scatter {
+            fields.push(format!("\"sd_relative_without_measurement\": {:.2}", pool.sd_without(scatter)));
+        }
+    }
+    if let Some((right, of)) = judged.held {
+        fields.push(format!("\"tests_right\": {right}"));
+        fields.push(format!("\"tests\": {of}"));
+    } else if let Some(pool) = &judged.pooled {
+        fields.push(format!("\"tests\": {}", pool.tests));
+    }
+    let series: Vec<String> = if quantity == Quantity::Reaches600 {
+        vec![quoted(Series::Furniture.key())]
+    } else {
+        judged.by_series.iter().map(|(series, _)| quoted(series.key())).collect()
+    };
+    fields.push(format!("\"series\": [{}]", series.join(", ")));
+    let asked: Vec<String> = judged.bar.must.iter().map(|&demand| words(demand, quantity.unit())).collect();
+    fields.push(text("asked", &asked.join("; ")));
+    fields.push(format!("\"met\": {}", judged.met()));
+    fields.push(format!("\"better_bar_met\": {}", judged.proud()));
+    if let Some(miss) = judged.bar.miss.filter(|_| !judged.met()) {
+        fields.push(text("missed", miss.what));
+        fields.push(text("likely_cause", miss.cause));
+    }
+    if let Some((tests, again)) = judged_with_all(&validation.points, quantity)
+        && let Some(pool) = &again.pooled
+    {
+        let tests: Vec<String> = tests.iter().map(|test| quoted(test)).collect();
+        fields.push(format!(
+            "\"with_left_out\": {{ \"tests\": [{}], \"bias\": {:.2}, \"sd_relative\": {:.2}, \"met\": {} }}",
+            tests.join(", "),
+            pool.bias,
+            pool.sd,
+            again.met()
+        ));
+    }
+    format!("    {{ {} }}", fields.join(", "))
 }
 
 fn quoted(value: &str) -> String {
-    format!("\"{value}\"")
+    format!("\"{}\"", value.replace('\\', "\\\\").replace('"', "\\\""))
 }
 
 fn text(key: &str, value: &str) -> String {
@@ -91,7 +112,7 @@ pub fn two_digits(value: f64) -> String {
 
 #[cfg(test)]
 mod tests {
-    use super::two_digits;
+    use super::{quoted, two_digits};
 
     #[test]
     fn two_digits_are_what_is_left() {
@@ -99,5 +120,10 @@ mod tests {
         {
             assert_eq!(two_digits(value), expected);
         }
+    }
+
+    #[test]
+    fn quotation_marks_do_not_end_a_text() {
+        assert_eq!(quoted(r#"a "b" \"#), r#""a \"b\" \\""#);
     }
 }
