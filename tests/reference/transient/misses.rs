@@ -23,9 +23,9 @@ pub const OXYGEN_SHUT: Option<Miss> = Some(Miss {
     what: "The oxygen 0.6 m below the ceiling of the shut 2018 room falls a sixth too little, in all configurations alike; the scatter is within the bar.",
     cause: "several that add up, none of them enough alone. The engine keeps the gas below the burner as air (at 240 s about a third of the gas of the room) while the room \
             mixed: 1.8 m below the ceiling the oxygen had fallen by 60 to 80 % of what it had at the point, and the lowest sensor had warmed about four times as much as the \
-            computed lower layer (part of that may be radiation to a bare sensor). The burner gave more than its nominal 100 kW in some places: at least 101 to 127 kW by the oxygen \
-            that went. The point reads 1.05 to 1.11 times the mean of the layer that it lies in, which the engine has as one. Whether the gas was dried before it was read is \
-            not stated: if it was not, the figure is 0.95 and the bar met. Half the leakage makes the late fall steeper by a sixth and the figure 0.84. With 500 kW the computed \
+            computed lower layer (part of that may be radiation to a bare sensor). The burner gave more than its nominal 100 kW in some places: 101 to 127 kW by the oxygen \
+            that went, where the same balance makes 83 kW of the computed 100. The point reads 1.05 to 1.11 times the mean of the layer that it lies in, which the engine has as one. Whether the gas was dried before it was read is \
+            not stated: if it was not, the figure is 0.95 and within the bar, and the burner gave 93 to 118 kW. Half the leakage makes the late fall steeper by a sixth and the figure 0.84. With 500 kW the computed \
             flame is out while the real one goes on (see the mean rise).",
     experiment: "the same burn with the gas flow logged, the sample line described, and oxygen at four heights down to 0.1 m: a lower part that holds air would clear \
                  the mixing, a logged flow the burner.",

@@ -68,8 +68,10 @@ fn test(name: &str, rows: &[Row], runner: &Runner, choices: &Choices) -> Vec<Poi
             points.push(point(Quantity::OxygenMeanShut, &moment, mean, lagged(time_s, &of_room)));
         }
     }
-    if fuel_kw < 200.0 {
-        points.extend(fall(&points, &point));
+    if fuel_kw < 200.0
+        && let Some((measured, computed)) = fall(&points)
+    {
+        points.push(point(Quantity::OxygenFallShut, "180 to 240 s", measured, computed));
     }
     if let Some(last) = rows.iter().find(|row| row.number("before_off") > 0.5)
         && last.number("self_extinguished") > 0.5
@@ -86,12 +88,13 @@ fn test(name: &str, rows: &[Row], runner: &Runner, choices: &Choices) -> Vec<Poi
     points
 }
 
-/// How far the mean fell from 180 to 240 s: blind to lag and to where in the profile a point lies.
-fn fall(points: &[Point], point: &dyn Fn(Quantity, &str, f64, Option<f64>) -> Point) -> Option<Point> {
+/// How far the mean fell from 180 to 240 s, measured and computed: blind to lag and to where in the profile a point
+/// lies.
+fn fall(points: &[Point]) -> Option<(f64, Option<f64>)> {
     let at = |moment: &str| {
         points.iter().find(|point| point.quantity == Quantity::OxygenMeanShut && point.moment == moment)
     };
     let (early, late) = (at("180 s")?, at("240 s")?);
     let computed = late.computed.zip(early.computed).map(|(late, early)| late - early);
-    Some(point(Quantity::OxygenFallShut, "180 to 240 s", late.measured - early.measured, computed))
+    Some((late.measured - early.measured, computed))
 }
