@@ -7,6 +7,7 @@
 mod furniture;
 mod shut_room;
 mod test_room;
+mod transient;
 mod trends;
 
 use std::path::Path;
