@@ -318,25 +318,36 @@ impl Look {
                     self.jet(model, vent, giver, layer, mass.value(), temperature_k);
                 }
             }
-            // Hot gas that comes through an opening rises to the layer beyond and draws cool gas along.
-            if let (Some(room), Some(_)) = (vent.rooms[taker], vent.rooms[giver])
-                && hot_kg_s > 1e-6
-            {
-                let now = &self.now[room];
-                let hot_k = hot_heat / hot_kg_s;
-                let floor_m = model.building.rooms[room].floor_elevation_m;
-                let foot_m = flow.neutral_m.unwrap_or(vent.bottom_m).max(vent.bottom_m);
-                let from_m = 0.5 * (foot_m + vent.top_m) - floor_m;
-                let drawn =
-                    jets::drawn_kg_s(hot_kg_s, hot_k - now.lower_k, now.interface_m - from_m) * now.there[1];
-                if drawn > 0.0 {
+            let Some(room) = vent.rooms[taker] else { continue };
+            let now = &self.now[room];
+            let floor_m = model.building.rooms[room].floor_elevation_m;
+            let turn_m = flow.neutral_m.unwrap_or(vent.bottom_m).max(vent.bottom_m);
+            // Hot gas that comes from another room rises to the layer beyond and draws cool gas along.
+            let risen = if vent.rooms[giver].is_some() && hot_kg_s > 1e-6 {
+                let from_m = 0.5 * (turn_m + vent.top_m) - floor_m;
+                let rise_k = hot_heat / hot_kg_s - now.lower_k;
+                jets::drawn_kg_s(hot_kg_s, rise_k, now.interface_m - from_m) * now.there[1]
+            } else {
+                0.0
+            };
+            // Cool gas that comes in above the interface falls through the hot layer and draws of it.
+            let fallen = if low_kg_s[taker] > 1e-6 {
+                let head_m = flow.neutral_m.unwrap_or(vent.top_m).min(vent.top_m);
+                let from_m = 0.5 * (vent.bottom_m + head_m) - floor_m;
+                let falls_k = now.upper_k - low_k[taker];
+                jets::drawn_kg_s(low_kg_s[taker], falls_k, from_m - now.interface_m) * now.there[0]
+            } else {
+                0.0
+            };
+            for (from, mass_kg_s, temperature_k) in [(1, risen, now.lower_k), (0, fallen, now.upper_k)] {
+                if mass_kg_s > 0.0 {
                     self.transfers.push(Transfer {
-                        from: Some((room, 1)),
-                        to: Some((room, 0)),
-                        mass_kg_s: drawn,
+                        from: Some((room, from)),
+                        to: Some((room, 1 - from)),
+                        mass_kg_s,
                         slopes: [0.0; VENT_WAYS],
                         rooms: [None, None],
-                        temperature_k: now.lower_k,
+                        temperature_k,
                     });
                 }
             }
