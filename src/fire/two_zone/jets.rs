@@ -3,7 +3,10 @@
 
 use super::real::Real;
 
-/// Gas drawn by a jet on its way up, kg/s.
+/// Depth over which an interface blurs, m.
+const INTERFACE_M: f64 = 0.1;
+
+/// Gas drawn by a jet on its way up or down, kg/s.
 ///
 /// Taken as the far part of a fire plume of the same heat: a source below the opening that would have drawn the jet
 /// itself by the height of the opening.
@@ -23,6 +26,7 @@ pub(super) fn drawn_kg_s<R: Real>(jet_kg_s: R, rise_k: R, height_m: R) -> R {
     let origin_m = (jet_kg_s / strength).powf(0.6);
     // Fades in over the first kelvins, so that a draught of equal air draws nothing.
     let counts = ((rise_k - 1.0) / 4.0).at_most(1.0);
-    let reach_m = origin_m + height_m;
+    // An interface is not sharp: over its depth the jet is half in one layer, half in the other.
+    let reach_m = origin_m + height_m.squared() / (height_m + INTERFACE_M);
     (strength * reach_m * reach_m.cbrt().squared() - jet_kg_s).at_least(0.0) * counts
 }

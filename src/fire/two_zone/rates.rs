@@ -295,6 +295,10 @@ impl Look {
         cracks: bool,
     ) {
         let zero = R::constant(0.0);
+        let kelvin = [0, 1].map(|end: usize| {
+            let absolute = flanks[end].pressure_pa + model.building.ambient.pressure_pa;
+            move |density: R| absolute / density * (1.0 / GAS_CONSTANT_J_KGK)
+        });
         let mut low_kg_s = [zero; 2];
         let mut low_k = [0.0; 2];
         for giver in 0..2 {
@@ -313,36 +317,42 @@ impl Look {
                 };
                 let from = vent.rooms[giver].map(|room| (room, layer));
                 let slopes: [f64; VENT_WAYS] = mass.slopes();
-                let mut send = |to: Place, share: f64| {
-                    if share > 0.0 {
+                let mut send = |to: Place, mass: R| {
+                    if mass.value() > 0.0 {
                         self.transfers.push(Transfer {
                             from,
                             to,
-                            mass_kg_s: mass.value() * share,
-                            slopes: slopes.map(|slope| slope * share),
+                            mass_kg_s: mass.value(),
+                            slopes: mass.slopes(),
                             rooms: vent.rooms,
                             temperature_k,
                         });
                     }
                 };
                 match vent.rooms[taker] {
-                    None => send(None, 1.0),
+                    None => send(None, mass),
                     Some(room) => {
                         let upper = if cracks {
                             // A jet as thin as a crack draws a hundred times its own flow within a metre:
                             // what it brings is spread through the room.
                             let inside = &self.inside[room];
-                            inside.upper_kg.max(0.0)
-                                / (inside.upper_kg.max(0.0) + inside.lower_kg.max(0.0)).max(1e-9)
+                            let hot_kg = inside.upper_kg.max(0.0);
+                            R::constant(hot_kg / (hot_kg + inside.lower_kg.max(0.0)).max(1e-9))
                         } else {
-                            share_to_upper(&self.now[room], temperature_k)
+                            let from = &flanks[giver];
+                            let density = if layer == 0 { from.upper_kg_m3 } else { from.lower_kg_m3 };
+                            let arrives = kelvin[giver](density);
+                            let (hot, cool) = (&flanks[taker].upper_kg_m3, &flanks[taker].lower_kg_m3);
+                            share_to_upper(kelvin[taker](*hot), kelvin[taker](*cool), arrives)
                         };
-                        send(Some((room, 0)), upper);
-                        send(Some((room, 1)), 1.0 - upper);
-                        low_kg_s[taker] = low_kg_s[taker] + mass * (1.0 - upper);
+                        let to_upper = mass * upper;
+                        let to_lower = mass - to_upper;
+                        send(Some((room, 0)), to_upper);
+                        send(Some((room, 1)), to_lower);
+                        low_kg_s[taker] = low_kg_s[taker] + to_lower;
                         low_k[taker] = temperature_k;
-                        hot_kg_s = hot_kg_s + mass * upper;
-                        hot_heat += mass.value() * upper * temperature_k;
+                        hot_kg_s = hot_kg_s + to_upper;
+                        hot_heat += to_upper.value() * temperature_k;
                     }
                 }
                 if layer == 0 || self.now_is_hot(vent.rooms[giver], layer) {
@@ -351,8 +361,7 @@ impl Look {
             }
             let Some(room) = vent.rooms[taker] else { continue };
             let beyond = &flanks[taker];
-            let absolute = beyond.pressure_pa + model.building.ambient.pressure_pa;
-            let kelvin = |density: R| absolute / density * (1.0 / GAS_CONSTANT_J_KGK);
+            let kelvin = &kelvin[taker];
             // Hot gas that comes from another room rises to the layer beyond and draws cool gas along.
             let risen = if vent.rooms[giver].is_some() && hot_kg_s.value() > 1e-6 {
                 let foot_m = flow.neutral_m.unwrap_or(vent.bottom_m).max(vent.bottom_m);
@@ -558,7 +567,11 @@ impl Look {
                         // A jet from the wall mixes into the layer at its height; warmer gas rises.
                         let band_m = 0.05 * building.rooms[room].height_m;
                         let above = fan.outlet_height_m - self.now[room].interface_m;
-                        above.smooth_step(-band_m, band_m).max(share_to_upper(&self.now[room], temperature_k))
+                        above.smooth_step(-band_m, band_m).max(share_to_upper(
+                            self.now[room].upper_k,
+                            self.now[room].lower_k,
+                            temperature_k,
+                        ))
                     }
                     None => 0.0,
                 };
@@ -896,9 +909,9 @@ pub(super) fn held_kg(building: &Building, state: &[f64], room: usize, layer: us
 
 /// Share of arriving gas that goes to the hot layer, by its temperature between those of the layers.
 #[inline]
-fn share_to_upper(now: &Derived<f64>, temperature_k: f64) -> f64 {
-    let spread = (now.upper_k - now.lower_k).max(5.0);
-    ((temperature_k - now.lower_k) / spread).smooth_step(0.0, 1.0)
+fn share_to_upper<R: Real>(upper_k: R, lower_k: R, arrives_k: R) -> R {
+    let spread = (upper_k - lower_k).at_least(5.0);
+    ((arrives_k - lower_k) / spread).smooth_step(0.0, 1.0)
 }
 
 /// The variables of a room from the state.
