@@ -603,17 +603,20 @@ impl Look {
         for (index, room) in model.building.rooms.iter().enumerate() {
             let now = &self.now[index];
             let inside = &self.inside[index];
-            let least_kg = inside.upper_kg.min(inside.lower_kg).max(0.0);
             let share = if room.mixed { 1.0 } else { 1.0 - now.there[0].min(now.there[1]) };
             if share < 1e-4 {
                 continue;
             }
-            let mass_kg_s = share * least_kg / MIXES_S;
-            for (from, to, temperature_k) in [(0, 1, now.upper_k), (1, 0, now.lower_k)] {
+            // A mixed zone keeps two equal halves; a vanishing layer changes places with as much of the other.
+            let (hot_kg, cool_kg) = (inside.upper_kg.max(0.0), inside.lower_kg.max(0.0));
+            let (gives_hot, gives_cool) =
+                if room.mixed { (hot_kg, cool_kg) } else { (hot_kg.min(cool_kg), hot_kg.min(cool_kg)) };
+            for (from, gives_kg, temperature_k) in [(0, gives_hot, now.upper_k), (1, gives_cool, now.lower_k)]
+            {
                 self.transfers.push(Transfer {
                     from: Some((index, from)),
-                    to: Some((index, to)),
-                    mass_kg_s,
+                    to: Some((index, 1 - from)),
+                    mass_kg_s: share * gives_kg / MIXES_S,
                     slopes: [0.0; VENT_WAYS],
                     rooms: [None, None],
                     temperature_k,

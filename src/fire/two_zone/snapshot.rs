@@ -71,9 +71,15 @@ fn room_state(model: Model<'_>, look: &Look, state: &[f64], index: usize, fires:
     let inside = &look.inside[index];
     let zones = &look.zones[index];
     let layer = |layer: usize, temperature_k: f64, mass_kg: f64| {
-        let first = layout.species_of(index, layer);
-        let held = held_kg(building, state, index, layer);
-        Layer { temperature_k, mass_kg, gas: composition(&state[first..first + building.species], held) }
+        // A layer that is gone has the gas of the other.
+        let which = if now.there[layer] < 0.1 { 1 - layer } else { layer };
+        let first = layout.species_of(index, which);
+        let held = held_kg(building, state, index, which);
+        Layer {
+            temperature_k,
+            mass_kg: mass_kg.max(0.0),
+            gas: composition(&state[first..first + building.species], held),
+        }
     };
     let upper = layer(0, now.upper_k, inside.upper_kg);
     let lower = layer(1, now.lower_k, inside.lower_kg);

@@ -178,13 +178,18 @@ pub(super) fn through_ceiling<R: Real>(
     flow.from[giver][1 - layer] = mass - own;
 
     let heavier = above.lower_kg_m3 - below.upper_kg_m3;
-    if heavier.value() > 1e-6 && open_area_m2 > 0.0 {
+    if heavier.value() > 0.0 && open_area_m2 > 0.0 {
         const EXCHANGE: f64 = 0.055 * 4.0 / std::f64::consts::PI;
-        let flood = heavier * (0.25 * GRAVITY_M_S2 * side_m);
+        // Below a kelvin of difference it falls faster than the root, without slope at nothing, and pressures below
+        // SOFT_PA count for nothing: air at rest stays at rest.
+        const SOFT_KG_M3: f64 = 4e-3;
+        let flood = heavier * (0.25 * GRAVITY_M_S2 * side_m) + SOFT_PA;
         let free = (-(drive / flood) + 1.0).at_least(0.0);
         if free.value() > 0.0 {
             let mean = (above.lower_kg_m3 + below.upper_kg_m3) * 0.5;
-            let volume = (heavier / mean * (GRAVITY_M_S2 * side_m)).sqrt() * (EXCHANGE * open_area_m2) * free;
+            let pull = heavier * heavier.sqrt() / (heavier + SOFT_KG_M3);
+            let volume =
+                pull / mean.sqrt() * ((GRAVITY_M_S2 * side_m).sqrt() * EXCHANGE * open_area_m2) * free;
             // Equal volumes change places.
             for (end, density, gives, layer) in
                 [(0, below.upper_kg_m3, below.upper_gives, 0), (1, above.lower_kg_m3, above.lower_gives, 1)]
