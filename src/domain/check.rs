@@ -20,7 +20,7 @@ mod room;
 const ROUNDING: f64 = 1e-9;
 
 /// Whether `value` exceeds `limit` by more than rounding.
-fn exceeds(value: f64, limit: f64) -> bool {
+pub(super) fn exceeds(value: f64, limit: f64) -> bool {
     value > limit * (1.0 + ROUNDING) + ROUNDING
 }
 

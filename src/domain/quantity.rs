@@ -128,6 +128,38 @@ kinds! {
     Temperature = TemperatureKind, "C", -60.0..=1500.0, "climate to flame";
     /// A wind speed.
     WindSpeed = WindSpeedKind, "m/s", 0.0..=60.0, "up to a hurricane";
+    /// Heat release of a fire.
+    HeatRelease = HeatReleaseKind, "kW", 0.0..=500000.0, "up to a burning warehouse";
+    /// Heat that a fuel can give.
+    FuelEnergy = FuelEnergyKind, "MJ", 0.001..=5000000.0, "from a match to a full warehouse";
+    /// Growth coefficient of a t² fire.
+    FireGrowth = FireGrowthKind, "kW/s2", 0.0001..=50.0, "from smouldering to a dropped match in petrol";
+    /// Heat received per area.
+    HeatFlux = HeatFluxKind, "kW/m2", 0.1..=500.0, "from warmth on the skin to the inside of a flame";
+    /// Diameter of a fire's base.
+    FireDiameter = FireDiameterKind, "m", 0.01..=100.0, "from a burner to a hall on fire";
+    /// Share of its heat that a flame radiates.
+    RadiativeFraction = RadiativeFractionKind, "", 0.0..=0.9, "some heat must rise with the plume";
+    /// Temperature of air outside, or indoors before the fire.
+    AirTemperature = AirTemperatureKind, "C", -60.0..=80.0, "from polar night to an attic in the sun";
+    /// Pressure of outside air.
+    AirPressure = AirPressureKind, "Pa", 30000.0..=110000.0, "from the highest mountain to the Dead Sea";
+    /// Oxygen in air, by mass.
+    OxygenShare = OxygenShareKind, "", 0.05..=0.35, "from inerted rooms to enriched ones";
+    /// Water vapour in air, by mass.
+    WaterShare = WaterShareKind, "", 0.0..=0.05, "from dry to tropical";
+    /// Length of a transient run.
+    RunTime = RunTimeKind, "s", 1.0..=86400.0, "a second to a day";
+    /// Time between two outputs of a transient run.
+    OutputInterval = OutputIntervalKind, "s", 0.01..=86400.0, "a hundredth of a second to a day";
+    /// Relative tolerance of a transient run.
+    Tolerance = ToleranceKind, "", 0.000001..=0.01, "from far finer than the physics to about 10 K";
+    /// A pressure difference.
+    PressureDifference = PressureDifferenceKind, "Pa", 1.0..=1000000.0, "from a draught to a blast";
+    /// Water on the floor from sprinklers.
+    SprayDensity = SprayDensityKind, "mm/s", 0.001..=5.0, "from mist to more than any design";
+    /// Discharge coefficient of an opening.
+    DischargeCoefficient = DischargeCoefficientKind, "", 0.1..=1.0, "from a grille to a nozzle";
     /// A longitude.
     Longitude = LongitudeKind, "deg", -180.0..=180.0, "the globe";
     /// A latitude.

@@ -147,6 +147,24 @@ static FAMILIES: &[Family] = &[
     ),
     alone("an angle", &[unit(&["deg", "°", "degrees"], 1.0, 1.0)]),
     alone(
+        "a pressure",
+        &[
+            unit(&["Pa"], 1.0, 1.0),
+            unit(&["kPa"], 1000.0, 1.0),
+            unit(&["hPa", "mbar"], 100.0, 1.0),
+            unit(&["bar"], 100_000.0, 1.0),
+            unit(&["psi"], LB_KG * 9.806_65, 0.000_645_16),
+        ],
+    ),
+    alone(
+        "a water density",
+        &[
+            unit(&["mm/s"], 1.0, 1.0),
+            unit(&["mm/min"], 1.0, 60.0),
+            unit(&["gpm/ft2", "gpm/ft²"], 3.785_411_784, 60.0 * FT2_M2),
+        ],
+    ),
+    alone(
         "a speed",
         &[
             unit(&["m/s"], 1.0, 1.0),

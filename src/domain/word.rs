@@ -5,6 +5,7 @@ use super::building::{Coverage, SprinklerState};
 use super::opening::{Glazing, OpeningKind, Side, Swing};
 use super::properties::{DetectorKind, ExposedGrowth, IgnitionEase};
 use super::room::{Basis, CeilingForm, Hazard, Place, ReactionToFire, RoomKind};
+use super::simulation::{SupplyKind, Zoning};
 
 /// A value out of a closed list, each with its word.
 pub trait Word: Copy + PartialEq + std::fmt::Debug + 'static {
@@ -81,6 +82,8 @@ words! {
         SmokePoint = "smoke_point", SmokeBeam = "smoke_beam", SmokeAspirating = "smoke_aspirating",
         HeatFixed = "heat_fixed", HeatRateOfRise = "heat_rate_of_rise",
     }
+    Zoning { TwoLayers = "two_layers", Mixed = "mixed" }
+    SupplyKind { Fed = "fed", HeatFed = "heat_fed" }
 }
 
 #[cfg(test)]

@@ -11,10 +11,11 @@ use super::form::{Components, Form, Way};
 use super::json::{self, Json};
 use super::object::{self, member};
 use super::reader::Reader;
+use super::simulation;
 use crate::catalogue::Catalogue;
 use crate::domain::opening::Opening;
 use crate::domain::room::Room;
-use crate::domain::{self, Assumptions, Invalid, Key, Pointer};
+use crate::domain::{self, Assumptions, Invalid, Key, Pointer, Simulation};
 
 /// Why a body is refused.
 #[derive(Debug, Clone, PartialEq)]
@@ -52,6 +53,8 @@ pub struct AssumptionsInput;
 pub struct AssessInput;
 /// The assumptions under which to assess a building that is kept; the body may be empty.
 pub struct AssessmentRequest;
+/// A transient run, nothing kept; it becomes a [`domain::Simulation`].
+pub struct SimulationInput;
 
 /// What [`AssessInput`] becomes.
 #[derive(Debug, Clone, PartialEq)]
@@ -128,6 +131,14 @@ impl Input for AssessmentRequest {
         let root = Pointer::root();
         let members = object::open(json, &root, reader, &["assumptions"], &[])?;
         member::<Assumptions>(members, "assumptions", &root, reader, Some(Assumptions::default))
+    }
+}
+
+impl Input for SimulationInput {
+    type Checked = Simulation;
+
+    fn check(json: &Json, reader: &mut Reader<'_>) -> Option<Simulation> {
+        simulation::read(json, reader)
     }
 }
 
@@ -219,6 +230,7 @@ request_of_form! {
     RoomInput = Room,
     OpeningInput = Opening,
     AssumptionsInput = Assumptions,
+    SimulationInput = Simulation,
 }
 
 /// Adds components that are made apart: one that stands in `into` already may stand there

@@ -21,12 +21,13 @@ pub mod problem;
 mod reader;
 mod room;
 mod scalar;
+mod simulation;
 pub mod stored;
 mod text;
 
 pub use input::{
     Assess, AssessInput, AssessmentRequest, AssumptionsInput, BuildingInput, Input, OpeningInput, Part,
-    Refused, RoomInput, read, read_json, read_part, read_part_value, read_value,
+    Refused, RoomInput, SimulationInput, read, read_json, read_part, read_part_value, read_value,
 };
 pub use named::WrittenProperties;
 pub use output::{AssumptionsEcho, Building, Links, LocationEcho, Meta, Opening, Page, Room};

@@ -67,7 +67,7 @@ parts! {
 pub(super) struct OpenShare;
 
 impl OpenShare {
-    fn of_kind(kind: OpeningKind) -> Fraction {
+    pub(super) fn of_kind(kind: OpeningKind) -> Fraction {
         match kind {
             OpeningKind::Gap | OpeningKind::Vent => {
                 Fraction::new(1.0).expect("one lies within the limits of a share")

@@ -2,6 +2,7 @@
 
 use crate::catalogue::{Catalogue, Kind};
 use crate::domain::check::Outline;
+use crate::domain::simulation::check::Cross;
 use crate::domain::{Invalid, Pointer};
 
 use super::json::Json;
@@ -23,12 +24,21 @@ pub struct Reader<'c> {
     left_out: usize,
     /// What could be read of the parts that rules compare.
     pub(super) outline: Outline,
+    /// What the parts of a run name and measure of each other.
+    pub(super) cross: Cross,
 }
 
 impl<'c> Reader<'c> {
     /// Reads what a client sent.
     pub fn new(catalogue: &'c Catalogue) -> Self {
-        Self { catalogue, stored: false, faults: Vec::new(), left_out: 0, outline: Outline::default() }
+        Self {
+            catalogue,
+            stored: false,
+            faults: Vec::new(),
+            left_out: 0,
+            outline: Outline::default(),
+            cross: Cross::default(),
+        }
     }
 
     /// Reads what we have kept: catalogue names are not looked up again.
