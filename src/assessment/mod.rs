@@ -8,6 +8,7 @@
 
 pub mod findings;
 pub mod rules;
+pub mod simulation;
 
 mod assumed;
 mod backdraft;

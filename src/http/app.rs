@@ -49,6 +49,10 @@ impl Ids for UniqueIds {
 /// room at screening: the largest building fits, work of hours does not.
 pub const INTERACTIVE_STEPS: u64 = 100_000;
 
+/// Most work of a simulation that somebody waits for: solver steps times rooms. A day of the
+/// largest building that stays at rest fits, and so does an hour of it on fire.
+pub const SIMULATION_ROOM_STEPS: u64 = 2_000_000;
+
 /// What every handler works with; cheap to clone.
 #[derive(Clone)]
 pub struct App(Arc<Parts>);
@@ -67,6 +71,8 @@ pub struct Parts {
     pub ids: Box<dyn Ids>,
     /// Steps an assessment may take while somebody waits.
     pub interactive_steps: u64,
+    /// Steps times rooms that a simulation may take.
+    pub simulation_room_steps: u64,
     /// What is counted.
     pub metrics: Metrics,
 }
@@ -81,6 +87,7 @@ impl App {
             clock: Box::new(SystemClock),
             ids: Box::new(UniqueIds),
             interactive_steps: INTERACTIVE_STEPS,
+            simulation_room_steps: SIMULATION_ROOM_STEPS,
             metrics: Metrics::default(),
         })
     }

@@ -49,6 +49,26 @@ impl Ask {
         ))
     }
 
+    /// Whether a table is wanted more than JSON; refuses a caller who wants neither: 406.
+    pub fn prefers_csv(&self) -> Result<bool, ApiError> {
+        let wanted = |kind, sub| {
+            let lines = self.headers.get_all(ACCEPT);
+            media::quality(lines.iter().map(|line| line.to_str().unwrap_or_default()), kind, sub)
+        };
+        let (json, csv) = (wanted("application", "json"), wanted("text", "csv"));
+        if json > 0.0 || csv > 0.0 {
+            return Ok(csv > json);
+        }
+        let detail = "This address answers in application/json or text/csv.";
+        let left_out = "it leaves out application/json and text/csv";
+        Err(ApiError::new(Slug::NotAcceptable, detail).with_faults(vec![ProblemItem::header(
+            "Accept",
+            "not_acceptable",
+            left_out,
+            None,
+        )]))
+    }
+
     /// The conditions of the request.
     pub fn conditions(&self) -> Conditions {
         Conditions::of(&self.headers)

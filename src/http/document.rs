@@ -35,6 +35,7 @@ use crate::wire::problem::Problem;
         (name = "rooms", description = "Single rooms of a building. Work on two rooms never collides."),
         (name = "openings", description = "Single openings of a building: doors, windows, vents, hatches, gaps."),
         (name = "assessments", description = "Ratings of every room of a building; kept, never changed."),
+        (name = "simulations", description = "One fire in one set of rooms, minute by minute; nothing is kept."),
         (name = "catalogue", description = "What the names in a building stand for, each row with its source."),
         (name = "methods", description = "How the figures come about: equations, sources, ranges."),
     ),
@@ -223,6 +224,7 @@ mod tests {
     use utoipa::openapi::{RefOr, Schema};
 
     use super::super::summary::{AssessmentSummary, BuildingSummary};
+    use crate::report::simulation::SimulationResult;
     use crate::report::{BuildingReport, Methods, RoomReport};
     use crate::wire;
 
@@ -246,6 +248,8 @@ mod tests {
             schemas_of::<wire::OpeningInput>(),
             schemas_of::<wire::AssessInput>(),
             schemas_of::<wire::AssessmentRequest>(),
+            schemas_of::<wire::SimulationInput>(),
+            schemas_of::<SimulationResult>(),
             schemas_of::<wire::Problem>(),
             schemas_of::<BuildingSummary>(),
             schemas_of::<AssessmentSummary>(),

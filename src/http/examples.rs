@@ -75,3 +75,34 @@ pub fn assessment() -> Value {
 pub fn assess() -> Value {
     json!({ "building": building(), "assumptions": { "level": "screening" } })
 }
+
+/// A burner in a room with an open door.
+pub fn simulation() -> Value {
+    json!({
+        "rooms": [{
+            "key": "burn", "length_m": 2.8, "width_m": 2.8, "height_m": 2.13, "floor_elevation_m": 0.0,
+            "leakage_area_m2": 0.0, "leakage_split": { "low": 0.5, "high": 0.5 },
+            "linings": {
+                "walls": { "conductivity_w_mk": 0.14, "density_kg_m3": 240, "specific_heat_j_kgk": 1000, "thickness_m": 0.05 },
+                "ceiling": { "material": "gypsum_board", "thickness_m": 0.0127 },
+                "floor": { "material": "concrete", "thickness_m": 0.15 }
+            }
+        }],
+        "openings": [{
+            "key": "door", "kind": "door", "connects": ["burn", "outside"], "width_m": 0.74, "height_m": 1.83,
+            "sill_m": 0.0, "open_fraction": 1.0, "leakage_area_m2": 0.0
+        }],
+        "ambient": {
+            "temperature_c": 20, "indoor_temperature_c": null, "pressure_pa": 101_325,
+            "oxygen_mass_fraction": 0.232, "wind_m_s": 0, "wind_from_deg": 0
+        },
+        "fires": [{
+            "key": "burner", "room": "burn", "heat_release_kw": [[0, 62.9], [1800, 62.9]], "base_height_m": 0.0,
+            "diameter_m": 0.3, "position": "centre", "radiative_fraction": 0.24, "fuel": "methane",
+            "oxygen_limited": true, "ignites": { "at_s": 0 }
+        }],
+        "schedule": [{ "at_s": 600, "opening": "door", "open_fraction": 1.0 }],
+        "fans": [], "detectors": [], "sprinklers": [],
+        "duration_s": 1800, "output_interval_s": 10, "tolerance": null
+    })
+}

@@ -5,11 +5,12 @@ use serde_json::Value;
 use super::problem::ApiError;
 use super::refusal::invalid;
 use crate::catalogue::Catalogue;
-use crate::domain::{Assumptions, Building, Invalid, Key, Opening, Pointer, Room};
+use crate::domain::{Assumptions, Building, Invalid, Key, Opening, Pointer, Room, Simulation};
 use crate::store::SavedBuilding;
 use crate::wire::problem::Slug;
 use crate::wire::{
     self, AssessInput, AssessmentRequest, BuildingInput, Links, Meta, OpeningInput, Refused, RoomInput,
+    SimulationInput,
 };
 
 /// A building as answers and exports write it.
@@ -53,6 +54,11 @@ pub fn read_assumptions(bytes: &[u8], catalogue: &Catalogue) -> Result<Assumptio
 pub fn read_assess(bytes: &[u8], catalogue: &Catalogue) -> Result<(Building, Assumptions), ApiError> {
     let asked = wire::read::<AssessInput>(bytes, catalogue).map_err(refused)?;
     Ok((asked.building, asked.assumptions))
+}
+
+/// Reads a transient run.
+pub fn read_simulation(bytes: &[u8], catalogue: &Catalogue) -> Result<Simulation, ApiError> {
+    wire::read::<SimulationInput>(bytes, catalogue).map_err(refused)
 }
 
 /// A merge patch, read as strictly as any other body.

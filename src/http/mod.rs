@@ -35,6 +35,7 @@ mod probes;
 mod refusal;
 mod rooms;
 mod routes;
+mod simulations;
 mod summary;
 
 pub use app::{App, Clock, Ids, Parts, SystemClock, UniqueIds};

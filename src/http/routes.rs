@@ -8,7 +8,7 @@ use utoipa_axum::routes;
 use super::app::App;
 use super::{
     assessments, buildings, catalogue, docs, document, layers, methods, metrics, openings, pages, probes,
-    problem, rooms,
+    problem, rooms, simulations,
 };
 
 /// The operations of the interface. What is registered here is in the OpenAPI document too.
@@ -33,6 +33,7 @@ pub(super) fn operations() -> OpenApiRouter<App> {
         .routes(routes!(assessments::get_assessment))
         .routes(routes!(assessments::get_room_report))
         .routes(routes!(assessments::assess))
+        .routes(routes!(simulations::simulate))
         .routes(routes!(catalogue::list_uses))
         .routes(routes!(catalogue::list_items))
         .routes(routes!(catalogue::list_fuels))

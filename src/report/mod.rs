@@ -16,6 +16,7 @@ pub mod methods;
 pub mod number;
 pub mod protection;
 pub mod room;
+pub mod simulation;
 pub mod stored;
 pub mod table;
 pub mod text;

@@ -67,6 +67,7 @@ impl TestApp {
             clock: Box::new(StandingClock),
             ids: Box::new(CountedIds(AtomicU64::new(0))),
             interactive_steps: sootline::http::app::INTERACTIVE_STEPS,
+            simulation_room_steps: sootline::http::app::SIMULATION_ROOM_STEPS,
             metrics: Metrics::default(),
         };
         change(&mut parts);

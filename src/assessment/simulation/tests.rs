@@ -1,0 +1,1 @@
+//! Runs as the engine would take them.
