@@ -36,6 +36,11 @@ pub fn full() -> Value {
     serde_json::from_str(FULL).unwrap()
 }
 
+/// The run of the wire contract.
+pub fn simulation() -> Value {
+    serde_json::from_str(include_str!("simulation.json")).unwrap()
+}
+
 const FULL: &str = r#"{
         "reference": "417-B", "name": "Harbour Row 12",
         "address": { "line": "Harbour Row 12", "place": "Eastmere", "postcode": "" },

@@ -16,5 +16,6 @@ mod operations;
 mod parts;
 mod reading;
 mod reports;
+mod simulations;
 mod support;
 mod surface;

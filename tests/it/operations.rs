@@ -6,7 +6,7 @@ use axum::body::Body;
 use axum::http::Method;
 use serde_json::{Value, json};
 
-use crate::fixtures::{door, room, small, two_rooms};
+use crate::fixtures::{door, room, simulation, small, two_rooms};
 use crate::support::{Reply, TestApp, request, with_headers};
 
 /// What to send for an operation, and what comes back.
@@ -66,6 +66,7 @@ async fn rows(app: &TestApp) -> Vec<Row> {
         get("get_assessment", "{assessment}"),
         get("get_room_report", "{assessment}/rooms/store"),
         row("assess", Method::POST, "/v1/assess", &[], Some(json!({ "building": small() })), 200),
+        row("simulate", Method::POST, "/v1/simulations", &[], Some(simulation()), 200),
         get("list_uses", "/v1/catalogue/uses"),
         get("list_items", "/v1/catalogue/items"),
         get("list_fuels", "/v1/catalogue/fuels"),
@@ -289,4 +290,5 @@ async fn the_examples_of_the_document_are_accepted() {
     app.patch(&opening_path, "*", example("patch_opening")).await.expect(200);
     app.post(&format!("{path}/assessments"), example("create_assessment")).await.expect(201);
     app.post("/v1/assess", example("assess")).await.expect(200);
+    app.post("/v1/simulations", example("simulate")).await.expect(200);
 }

@@ -10,6 +10,9 @@ use crate::domain::simulation::{self as asked, HeatRelease, Ignition, Supply};
 use crate::fire::design_fire::{DECAY_FROM_SHARE, DesignFire};
 use crate::fire::two_zone as engine;
 
+/// Most fuels that the engine keeps apart in one run.
+const MAX_FUELS: usize = 4;
+
 impl Making<'_> {
     pub(super) fn fire(
         &mut self,
@@ -30,11 +33,18 @@ impl Making<'_> {
             }
         };
         self.fuel_notes(burns, at);
-        let known = fuels.iter().position(|fuel| *fuel == made);
-        let index = known.unwrap_or_else(|| {
-            fuels.push(made);
-            fuels.len() - 1
-        });
+        let index = match fuels.iter().position(|fuel| *fuel == made) {
+            Some(known) => known,
+            None if fuels.len() < MAX_FUELS => {
+                fuels.push(made);
+                fuels.len() - 1
+            }
+            None => {
+                let detail = format!("a run burns at most {MAX_FUELS} different fuels");
+                self.fault(at.member("fuel"), "too_many_fuels", detail);
+                return None;
+            }
+        };
         let radiative = fire.radiative_fraction.map_or(burns.radiative_fraction, |fraction| fraction.get());
         Some(engine::Fire {
             room: room?,

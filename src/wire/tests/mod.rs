@@ -9,3 +9,4 @@ mod contract;
 mod round_trip;
 mod rules;
 mod schema;
+mod simulation;

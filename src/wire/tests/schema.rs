@@ -24,6 +24,7 @@ fn components() -> BTreeMap<String, Value> {
     add::<wire::AssumptionsInput>(&mut all);
     add::<wire::AssessInput>(&mut all);
     add::<wire::AssessmentRequest>(&mut all);
+    add::<wire::SimulationInput>(&mut all);
     add::<wire::Building>(&mut all);
     add::<wire::Room>(&mut all);
     add::<wire::Opening>(&mut all);
