@@ -45,7 +45,8 @@ fn numbers(series: &Value) -> Vec<f64> {
 }
 
 fn last(answer: &Value, pointer: &str) -> f64 {
-    *numbers(answer.pointer(pointer).unwrap_or_else(|| panic!("no {pointer}"))).last().unwrap()
+    let series = answer.pointer(pointer).and_then(Value::as_array).unwrap_or_else(|| panic!("no {pointer}"));
+    series.last().and_then(Value::as_f64).unwrap_or_else(|| panic!("{pointer} ends without a number"))
 }
 
 /// A box of 4 × 3 × 2.4 m lined with gypsum, its door shut, and a fire of these points.
@@ -91,27 +92,27 @@ async fn the_example_of_the_contract_is_answered_with_its_members() {
     assert!(answer["notes"].is_array());
 }
 
-/// Steckler's room with this burner, door and these linings (NBSIR 82-2520, test 14 of the standard door):
-/// about 129 °C in the upper layer at 22 °C outside, interface near 1.0 m, 0.55 to 0.6 kg/s through the
-/// door, neutral plane near 1.03 m (from memory). The bounds are wide: the record of the experiments
-/// compares closely, this only holds the answer to the right room.
+/// The example is test 14 of Steckler, Quintiere and Rinkinen (NBSIR 82-2520, 1982): 62.9 kW in the middle,
+/// a door of 0.74 by 1.83 m. Measured, by the profiles of the public archive reduced to two layers: rise of the
+/// upper layer 88.9 K, interface at 0.78 m, neutral plane at 1.029 m, flow 0.573 kg/s ± 10 %. Bounds were set
+/// beforehand, as wide as one experiment asks; the comparison with whole series stands in `tests/reference`.
 #[tokio::test]
-async fn the_example_gives_what_was_measured_in_such_a_room_within_wide_bounds() {
+async fn the_example_gives_what_was_measured_in_such_a_room() {
     let app = TestApp::new().await;
 
     let answer = ran(&app, simulation()).await;
 
-    let upper_c = last(&answer, "/rooms/burn/upper_temperature_c");
-    assert!((95.0..180.0).contains(&upper_c), "{upper_c}");
+    let rise_k = last(&answer, "/rooms/burn/upper_temperature_c") - 20.0;
+    assert!((0.8..1.3).contains(&(rise_k / 88.9)), "{rise_k}");
     let interface_m = last(&answer, "/rooms/burn/interface_height_m");
-    assert!((0.7..1.4).contains(&interface_m), "{interface_m}");
+    assert!((interface_m - 0.78).abs() < 0.2, "{interface_m}");
     let (inflow, outflow) =
         (last(&answer, "/openings/door/inflow_kg_s"), last(&answer, "/openings/door/outflow_kg_s"));
-    assert!((0.4..0.75).contains(&inflow) && (outflow / inflow - 1.0).abs() < 0.05, "{inflow} {outflow}");
+    assert!((0.8..1.2).contains(&(inflow / 0.573)) && (outflow / inflow - 1.0).abs() < 0.02, "{inflow} {outflow}");
     let plane_m = last(&answer, "/openings/door/neutral_plane_m");
-    assert!((0.8..1.3).contains(&plane_m), "{plane_m}");
+    assert!((plane_m - 1.029).abs() < 0.1, "{plane_m}");
     let heat_kw = last(&answer, "/rooms/burn/heat_release_kw");
-    assert!((heat_kw - 62.9).abs() < 2.0, "{heat_kw}");
+    assert!((heat_kw - 62.9).abs() < 1.0, "{heat_kw}");
 }
 
 #[tokio::test]
@@ -351,35 +352,53 @@ async fn a_run_above_its_steps_is_over_budget() {
     app.post(PATH, simulation()).await.problem(422, "over-budget");
 }
 
-#[tokio::test]
-async fn a_caller_that_goes_away_stops_the_run() {
-    let compute = Compute::with(NonZeroUsize::MIN, 8).unwrap();
-    let app = TestApp::with(|parts| {
-        parts.compute = compute.clone();
-        parts.simulation_room_steps = u64::MAX;
-    })
-    .await;
-    // Fire in a long row of rooms for a day, at the finest tolerance: minutes of work.
-    let rooms: Vec<_> = (0..60)
-        .map(|n| json!({ "key": format!("r{n}"), "length_m": 4, "width_m": 3, "height_m": 2.4, "leakage_area_m2": 0.01,
+/// Sixty rooms, each with its own door to the outside and a fire that starts and stops every minute of a
+/// day: far more steps than `ENOUGH_STEPS`.
+fn long_run() -> Value {
+    let numbers = 0..60;
+    let rooms: Vec<_> = numbers
+        .clone()
+        .map(|n| json!({ "key": format!("r{n}"), "length_m": 4, "width_m": 3, "height_m": 2.4,
                          "linings": { "walls": { "material": "gypsum_board" } } }))
         .collect();
-    let doors: Vec<_> = (1..60)
-        .map(|n| json!({ "key": format!("d{n}"), "kind": "door", "connects": [format!("r{}", n - 1), format!("r{n}")],
+    let doors: Vec<_> = numbers
+        .clone()
+        .map(|n| json!({ "key": format!("d{n}"), "kind": "door", "connects": [format!("r{n}"), "outside"],
                          "width_m": 0.8, "height_m": 2, "open_fraction": 1 }))
         .collect();
-    let points: Vec<_> = (0..1440).map(|n| json!([n * 60, 100 + 400 * (n % 2)])).collect();
-    let run = json!({
-        "rooms": rooms, "openings": doors, "duration_s": "24 h", "output_interval_s": 600, "tolerance": 1e-6,
-        "fires": [{ "key": "f", "room": "r0", "fuel": "wood", "diameter_m": 0.5, "heat_release_kw": points }],
-    });
+    let points: Vec<_> = (0..1440).map(|n| json!([n * 60, 50 + 100 * (n % 2)])).collect();
+    let fires: Vec<_> = numbers
+        .map(|n| json!({ "key": format!("f{n}"), "room": format!("r{n}"), "fuel": "wood", "diameter_m": 0.5,
+                         "heat_release_kw": points }))
+        .collect();
+    json!({ "rooms": rooms, "openings": doors, "fires": fires, "duration_s": "24 h", "output_interval_s": 600 })
+}
 
-    let asked = tokio::time::timeout(Duration::from_millis(300), app.post(PATH, run)).await;
+#[tokio::test]
+async fn a_caller_that_goes_away_stops_the_run() {
+    const ENOUGH_STEPS: u64 = 1000;
+    let compute = Compute::with(NonZeroUsize::MIN, 8).unwrap();
+    let with_steps = async |steps| {
+        let compute = compute.clone();
+        TestApp::with(|parts| {
+            parts.compute = compute;
+            parts.simulation_room_steps = steps;
+        })
+        .await
+    };
+    // How long it takes at the least: until a budget breaks it off.
+    let began = Instant::now();
+    let reply = with_steps(60 * ENOUGH_STEPS).await.post(PATH, long_run()).await;
+    reply.problem(422, "over-budget");
+    let at_least = began.elapsed();
+
+    let app = with_steps(u64::MAX).await;
+    let asked = tokio::time::timeout(at_least / 4, app.post(PATH, long_run())).await;
 
     assert!(asked.is_err(), "the run ended before its caller could leave");
     let left = Instant::now();
     while compute.load().running > 0 {
-        assert!(left.elapsed() < Duration::from_secs(10), "the run goes on for nobody");
-        tokio::time::sleep(Duration::from_millis(10)).await;
+        assert!(left.elapsed() < at_least / 2, "the run goes on for nobody");
+        tokio::time::sleep(Duration::from_millis(5)).await;
     }
 }
