@@ -81,6 +81,20 @@ fn the_printed_trial_building_is_rated() {
 }
 
 #[test]
+fn the_printed_simulation_is_run() {
+    let commands = blocks("sh");
+    let request = commands.iter().find(|block| block.contains("/v1/simulations ")).unwrap();
+    let server = Server::start(&["--demo"]);
+
+    let answer = run(request, &server);
+
+    let upper_c = answer["rooms"]["den"]["upper_temperature_c"].as_array().unwrap();
+    assert_eq!(upper_c.len(), 61, "{answer}");
+    assert!(upper_c.iter().any(|c| c.as_f64().unwrap() > 100.0), "{upper_c:?}");
+    assert!(answer["events"].as_array().unwrap().iter().any(|event| event["kind"] == "opening_moved"));
+}
+
+#[test]
 fn the_greeting_names_address_documents_and_a_request_that_works() {
     let server = Server::start(&["--demo"]);
     let line = |word: &str| {
