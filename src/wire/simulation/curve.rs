@@ -1,12 +1,12 @@
 //! The form of a heat release: points in time, or growth, peak and energy.
 
 use serde::{Serialize, Serializer};
-use utoipa::openapi::RefOr;
-use utoipa::openapi::schema::{Array, Schema};
+use utoipa::openapi::schema::{Array, Schema, Type};
+use utoipa::openapi::{ObjectBuilder, RefOr};
 
-use crate::domain::Pointer;
-use crate::domain::quantity::{self, FireGrowth, FuelEnergy, Span};
+use crate::domain::quantity::{self, FireGrowth, FuelEnergy, Kind as _, Span};
 use crate::domain::simulation::{Growth, HeatRelease};
+use crate::domain::{Pointer, units};
 use crate::wire::form::{Components, Form, Way, Written};
 use crate::wire::json::Json;
 use crate::wire::object::{default_of, doc_of, either, name_of, object};
@@ -53,7 +53,17 @@ impl Form for HeatReleaseForm {
     }
 
     fn schema(way: Way) -> RefOr<Schema> {
-        let mut point = Array::new(either([Span::schema(way), quantity::HeatRelease::schema(way)]));
+        // One schema for both entries: a number would fit the schemas of both, and so neither's choice.
+        let number = ObjectBuilder::new()
+            .schema_type(Type::Number)
+            .minimum(Some(0))
+            .maximum(Some(quantity::HeatReleaseKind::MAX));
+        let text = ObjectBuilder::new()
+            .schema_type(Type::String)
+            .min_length(Some(1))
+            .max_length(Some(units::LONGEST_TEXT))
+            .pattern(Some(units::PATTERN));
+        let mut point = Array::new(either([number.into(), text.into()]));
         point.min_items = Some(2);
         point.max_items = Some(2);
         point.description = Some("Time since it was lit, s, and heat release, kW.".to_owned());
