@@ -108,7 +108,10 @@ async fn the_example_gives_what_was_measured_in_such_a_room() {
     assert!((interface_m - 0.78).abs() < 0.2, "{interface_m}");
     let (inflow, outflow) =
         (last(&answer, "/openings/door/inflow_kg_s"), last(&answer, "/openings/door/outflow_kg_s"));
-    assert!((0.8..1.2).contains(&(inflow / 0.573)) && (outflow / inflow - 1.0).abs() < 0.02, "{inflow} {outflow}");
+    assert!(
+        (0.8..1.2).contains(&(inflow / 0.573)) && (outflow / inflow - 1.0).abs() < 0.02,
+        "{inflow} {outflow}"
+    );
     let plane_m = last(&answer, "/openings/door/neutral_plane_m");
     assert!((plane_m - 1.029).abs() < 0.1, "{plane_m}");
     let heat_kw = last(&answer, "/rooms/burn/heat_release_kw");
@@ -358,18 +361,24 @@ fn long_run() -> Value {
     let numbers = 0..60;
     let rooms: Vec<_> = numbers
         .clone()
-        .map(|n| json!({ "key": format!("r{n}"), "length_m": 4, "width_m": 3, "height_m": 2.4,
-                         "linings": { "walls": { "material": "gypsum_board" } } }))
+        .map(|n| {
+            json!({ "key": format!("r{n}"), "length_m": 4, "width_m": 3, "height_m": 2.4,
+                         "linings": { "walls": { "material": "gypsum_board" } } })
+        })
         .collect();
     let doors: Vec<_> = numbers
         .clone()
-        .map(|n| json!({ "key": format!("d{n}"), "kind": "door", "connects": [format!("r{n}"), "outside"],
-                         "width_m": 0.8, "height_m": 2, "open_fraction": 1 }))
+        .map(|n| {
+            json!({ "key": format!("d{n}"), "kind": "door", "connects": [format!("r{n}"), "outside"],
+                         "width_m": 0.8, "height_m": 2, "open_fraction": 1 })
+        })
         .collect();
     let points: Vec<_> = (0..1440).map(|n| json!([n * 60, 50 + 100 * (n % 2)])).collect();
     let fires: Vec<_> = numbers
-        .map(|n| json!({ "key": format!("f{n}"), "room": format!("r{n}"), "fuel": "wood", "diameter_m": 0.5,
-                         "heat_release_kw": points }))
+        .map(|n| {
+            json!({ "key": format!("f{n}"), "room": format!("r{n}"), "fuel": "wood", "diameter_m": 0.5,
+                         "heat_release_kw": points })
+        })
         .collect();
     json!({ "rooms": rooms, "openings": doors, "fires": fires, "duration_s": "24 h", "output_interval_s": 600 })
 }
