@@ -23,14 +23,14 @@ impl<'a> Account<'a> {
         let line = |state: &[f64], line: usize| state[self.building.layout.ledger + line];
         let passed = |what: usize| line(end, what) - line(start, what);
 
-        let mass_error = self.mass_kg(end) - self.mass_kg(start) + passed(ledger::MASS_OUT) - passed(ledger::FUEL);
+        let mass_error =
+            self.mass_kg(end) - self.mass_kg(start) + passed(ledger::MASS_OUT) - passed(ledger::FUEL);
         let mass_size = self.mass_kg(start) + passed(ledger::FUEL).abs() + passed(ledger::MASS_OUT).abs();
 
-        let energy_error = self.energy_j(end) - self.energy_j(start)
-            + passed(ledger::ENTHALPY_OUT)
-            + passed(ledger::LOST)
-            - passed(ledger::RELEASED)
-            - passed(ledger::FUEL_ENTHALPY);
+        let energy_error =
+            self.energy_j(end) - self.energy_j(start) + passed(ledger::ENTHALPY_OUT) + passed(ledger::LOST)
+                - passed(ledger::RELEASED)
+                - passed(ledger::FUEL_ENTHALPY);
         // Against what the fire gave, not the warmth of the air at rest: that would hide an error.
         let energy_size = passed(ledger::RELEASED).abs().max(1e-3 * self.gas_j(start));
 

@@ -159,6 +159,9 @@ impl Building {
         not_negative(ambient.oxygen_mass_fraction, "oxygen of the air")?;
         not_negative(ambient.water_mass_fraction, "water of the air")?;
         not_negative(ambient.wind_m_s, "wind")?;
+        if !ambient.wind_from_deg.is_finite() {
+            return Err(malformed("direction of the wind"));
+        }
         if network.rooms.is_empty() {
             return Err(malformed("no room"));
         }
@@ -219,8 +222,8 @@ impl Building {
 
     /// The state before anything burns.
     pub(super) fn start(&self) -> Vec<f64> {
-        // A layer must exist to grow: the hot one begins as a thousandth of the room.
-        const FIRST_LAYER: f64 = 1e-3;
+        // A layer must exist to grow: the hot one begins as a two-hundredth of the room.
+        const FIRST_LAYER: f64 = 5e-3;
 
         let mut state = vec![0.0; self.layout.len];
         for (index, room) in self.rooms.iter().enumerate() {
@@ -308,6 +311,9 @@ fn room_data(room: &Room, open_m2: &[f64; SURFACES], density_kg_m3: f64) -> Resu
     let length_m = positive(room.length_m, "length of a room")?;
     let width_m = positive(room.width_m, "width of a room")?;
     let height_m = positive(room.height_m, "height of a room")?;
+    if !room.floor_elevation_m.is_finite() {
+        return Err(malformed("elevation of a floor"));
+    }
     not_negative(room.leakage_low_m2, "leakage of a room")?;
     not_negative(room.leakage_high_m2, "leakage of a room")?;
     let floor_area_m2 = length_m * width_m;
@@ -388,6 +394,13 @@ fn opening_vent(
     let height_m = positive(opening.height_m, "height of an opening")?;
     not_negative(opening.sill_m, "sill of an opening")?;
     not_negative(opening.leakage_area_m2, "leakage of an opening")?;
+    not_negative(opening.open_fraction, "open share of an opening")?;
+    let way = &opening.gives_way;
+    for value in [Some(way.open_fraction), way.gas_k, way.exposed_s, way.pressure_pa, opening.azimuth_deg] {
+        if value.is_some_and(|value| !value.is_finite()) {
+            return Err(malformed("number of an opening"));
+        }
+    }
     let coefficient = positive(opening.discharge_coefficient, "discharge coefficient")?;
     let floor_m = rooms[base].floor_elevation_m;
     let (bottom_m, top_m) = match opening.lie {
@@ -430,4 +443,3 @@ fn wind_pressure_pa(ambient: &Ambient, opening: &Opening, density_kg_m3: f64) ->
     let coefficient = if meets >= 0.0 { -0.5 + 1.2 * meets } else { -0.5 - 0.2 * meets };
     0.5 * coefficient * density_kg_m3 * ambient.wind_m_s * ambient.wind_m_s
 }
-

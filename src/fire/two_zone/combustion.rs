@@ -90,7 +90,8 @@ pub(super) fn smooth_min<R: Real>(a: R, b: R) -> R {
 /// the share rises smoothly over [`FLAME_BAND`] about it.
 #[inline]
 pub(super) fn flame_share<R: Real>(oxygen: R, temperature_k: R) -> R {
-    let room = ((-temperature_k + FLAME_LEAST_K) * (1.0 / (FLAME_LEAST_K - 293.0))).at_least(0.0).at_most(1.0);
+    let room =
+        ((-temperature_k + FLAME_LEAST_K) * (1.0 / (FLAME_LEAST_K - 293.0))).at_least(0.0).at_most(1.0);
     let limit = room * OXYGEN_LIMIT;
     // With a hot enough gas there is no limit; the band then shrinks with it.
     let band = room * FLAME_BAND + 1e-3;

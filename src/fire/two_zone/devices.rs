@@ -33,7 +33,10 @@ fn gas_at(network: &Network, detector: &Detector, sample: &Sample) -> (f64, f64)
         rise_k = rise_k.max(alpert_rise_k(burning.heat_release_kw, place).min(1100.0));
         velocity_m_s = velocity_m_s.max(alpert_velocity_m_s(burning.heat_release_kw, place));
     }
-    (state.lower.temperature_k + rise_k.max(state.upper.temperature_k - state.lower.temperature_k), velocity_m_s)
+    (
+        state.lower.temperature_k + rise_k.max(state.upper.temperature_k - state.lower.temperature_k),
+        velocity_m_s,
+    )
 }
 
 impl Device {
@@ -55,9 +58,7 @@ impl Device {
         let (gas_from_k, velocity_from) = gas_at(network, detector, from);
         let (gas_to_k, velocity_to) = gas_at(network, detector, to);
         match detector.element {
-            Element::Rise(rise_k) => {
-                (gas_to_k, gas_to_k - network.ambient.indoor_temperature_k - rise_k)
-            }
+            Element::Rise(rise_k) => (gas_to_k, gas_to_k - network.ambient.indoor_temperature_k - rise_k),
             Element::Heat { rti_m05s05, answers_k } => {
                 let step_s = to.time_s - from.time_s;
                 let per_s = (0.5 * (velocity_from + velocity_to)).sqrt() / rti_m05s05.max(1e-3);

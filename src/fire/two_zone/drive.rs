@@ -14,7 +14,7 @@ use super::snapshot;
 use super::solver::Solver;
 
 /// Longest step, s: longer ones read badly between.
-const LONGEST_S: f64 = 30.0;
+const LONGEST_S: f64 = 20.0;
 /// First step after a jump, s.
 const FIRST_S: f64 = 0.05;
 /// Shortest step against the time reached.
@@ -39,8 +39,7 @@ pub fn run(
 }
 
 fn check(network: &Network, plan: &Plan) -> Result<(), Failed> {
-    let malformed =
-        |what| Err(Failed { at_s: 0.0, room: None, reason: FailureReason::Malformed(what) });
+    let malformed = |what| Err(Failed { at_s: 0.0, room: None, reason: FailureReason::Malformed(what) });
     let rooms = network.rooms.len();
     if !(plan.duration_s.is_finite() && plan.duration_s >= 0.0) {
         return malformed("duration");
@@ -62,6 +61,14 @@ fn check(network: &Network, plan: &Plan) -> Result<(), Failed> {
         if sizes.iter().any(|size| !(size.is_finite() && *size >= 0.0)) || fire.radiative_fraction > 1.0 {
             return malformed("size of a fire");
         }
+        let lights_at = match fire.ignites {
+            super::network::Ignition::At(value)
+            | super::network::Ignition::Flux(value)
+            | super::network::Ignition::SurfaceTemperature(value) => value,
+        };
+        if lights_at.is_nan() {
+            return malformed("ignition of a fire");
+        }
         if let super::network::HeatRelease::Points(points) = &fire.heat_release {
             if points.iter().any(|p| !(p.0.is_finite() && p.1.is_finite())) {
                 return malformed("heat release of a fire");
@@ -71,7 +78,11 @@ fn check(network: &Network, plan: &Plan) -> Result<(), Failed> {
             }
         }
     }
-    if network.schedule.iter().any(|m| m.opening >= network.openings.len() || !m.at_s.is_finite()) {
+    if network
+        .schedule
+        .iter()
+        .any(|m| m.opening >= network.openings.len() || !m.at_s.is_finite() || !m.open_fraction.is_finite())
+    {
         return malformed("move of an opening that is not there");
     }
     let heads = network.sprinklers.iter().map(|s| &s.head);
@@ -86,7 +97,13 @@ fn check(network: &Network, plan: &Plan) -> Result<(), Failed> {
                 return malformed("fan to a room that is not there");
             }
         }
-        if fan.from == fan.to || !(fan.stall_pa > 0.0) || !fan.volume_flow_m3_s.is_finite() {
+        let heights = [fan.inlet_height_m, fan.outlet_height_m, fan.volume_flow_m3_s];
+        let times = [fan.starts_s, fan.stops_s];
+        if fan.from == fan.to
+            || !(fan.stall_pa > 0.0)
+            || heights.iter().any(|value| !value.is_finite())
+            || times.iter().any(|value| value.is_nan())
+        {
             return malformed("fan");
         }
     }
@@ -179,12 +196,8 @@ impl<'a> Run<'a> {
                     * if tried_s == left_s && tried_s < step_s { 1.0 } else { grow };
             }
             self.report(sample);
-            let clocked = self.pending.by_the_clock(
-                network,
-                &mut self.controls,
-                self.solver.time_s,
-                &mut self.events,
-            );
+            let clocked =
+                self.pending.by_the_clock(network, &mut self.controls, self.solver.time_s, &mut self.events);
             if happened || clocked {
                 step_s = FIRST_S;
                 self.settle();
@@ -257,8 +270,7 @@ impl<'a> Run<'a> {
             let cut_s = (share * step_s + 0.004).min(step_s);
             self.solver.go_back(from_s);
             self.solver.look(self.model, &self.controls);
-            let tried =
-                self.solver.attempt(self.model, &self.controls, cut_s, self.plan.tolerance);
+            let tried = self.solver.attempt(self.model, &self.controls, cut_s, self.plan.tolerance);
             if !(tried.error <= 1.0) {
                 // A shorter step from the same place can only fail where slopes changed: take it as it is, if finite.
                 if !tried.error.is_finite() {

@@ -235,9 +235,7 @@ impl Pending {
             }
             let hottest = |sample: &Sample| {
                 opening.between.iter().fold(0.0_f64, |most, side| match side {
-                    super::network::Side::Room(room) => {
-                        most.max(sample.rooms[*room].upper.temperature_k)
-                    }
+                    super::network::Side::Room(room) => most.max(sample.rooms[*room].upper.temperature_k),
                     super::network::Side::Outside => most,
                 })
             };

@@ -10,8 +10,7 @@ pub(super) const GAS_CONSTANT_J_KGK: f64 = 287.05;
 /// Specific heat at constant pressure, J/(kg K): `γ R/(γ - 1)`, 1004.7.
 pub(super) const SPECIFIC_HEAT_J_KGK: f64 = GAMMA * GAS_CONSTANT_J_KGK / (GAMMA - 1.0);
 /// Stefan-Boltzmann constant, W/(m² K⁴).
-pub(super) const STEFAN_BOLTZMANN_W_M2K4: f64 =
-    1000.0 * crate::fire::constants::STEFAN_BOLTZMANN_KW_M2K4;
+pub(super) const STEFAN_BOLTZMANN_W_M2K4: f64 = 1000.0 * crate::fire::constants::STEFAN_BOLTZMANN_KW_M2K4;
 
 /// Where each species stands in a layer's list; the fuels follow.
 pub(super) const OXYGEN: usize = 0;

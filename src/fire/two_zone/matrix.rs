@@ -8,7 +8,7 @@
 
 use super::building::{Building, SURFACES, ledger};
 use super::gas::{GAMMA, OXYGEN, PRODUCTS, SPECIES_MAX, SPECIFIC_HEAT_J_KGK};
-use super::rates::{CORE, Look, Model, Transfer, held_kg, place};
+use super::rates::{CORE, Look, Model, Transfer, held_kg, place, remnant_1_s};
 use super::room::Inner;
 
 type Block = [[f64; CORE]; CORE];
@@ -233,7 +233,7 @@ impl Matrix {
         for (room, inner) in look.inner_slopes.iter().enumerate() {
             self.add_inner(building, look, room, inner);
         }
-        self.to_rates(building, state, rates);
+        self.to_rates(building, look, state, rates);
     }
 
     fn add_way(&mut self, building: &Building, index: usize) {
@@ -346,7 +346,7 @@ impl Matrix {
     }
 
     /// Turns rows of heat into rows of pressure and volume.
-    fn to_rates(&mut self, building: &Building, state: &[f64], rates: &[f64]) {
+    fn to_rates(&mut self, building: &Building, look: &Look, state: &[f64], rates: &[f64]) {
         let layout = &building.layout;
         let gain = GAMMA - 1.0;
         for (at, &(row, column)) in self.graph.blocks.iter().enumerate() {
@@ -361,7 +361,7 @@ impl Matrix {
                 block[1][way] = gain * (hot - volume * all / room.volume_m3) / (GAMMA * pressure);
             }
             if row == column {
-                block[1][1] -= rates[offset] / (GAMMA * pressure);
+                block[1][1] -= rates[offset] / (GAMMA * pressure) + remnant_1_s(&look.now[row]);
                 block[1][0] -= rates[offset + 1] / pressure;
             }
         }
@@ -751,9 +751,8 @@ impl Matrix {
                 }
             }
             self.carried[base + ledger::MASS_OUT] += sign * moved;
-            self.carried[base + ledger::ENTHALPY_OUT] += sign
-                * SPECIFIC_HEAT_J_KGK
-                * (moved * transfer.temperature_k + transfer.mass_kg_s * warms);
+            self.carried[base + ledger::ENTHALPY_OUT] +=
+                sign * SPECIFIC_HEAT_J_KGK * (moved * transfer.temperature_k + transfer.mass_kg_s * warms);
         }
         for room in &building.rooms {
             for face in 0..SURFACES {
@@ -780,15 +779,18 @@ fn heat_to_rates(building: &Building, state: &[f64], room: usize) -> (f64, [f64;
     let volume_m3 = building.rooms[room].volume_m3;
     let pressure = (building.ambient.pressure_pa + state[at]).max(1.0);
     let gain = GAMMA - 1.0;
-    (
-        gain / volume_m3,
-        [gain / (GAMMA * pressure), -gain * state[at + 1] / (volume_m3 * GAMMA * pressure)],
-    )
+    (gain / volume_m3, [gain / (GAMMA * pressure), -gain * state[at + 1] / (volume_m3 * GAMMA * pressure)])
 }
 
 /// Slopes of the temperature of a layer along pressure, volume of the hot layer, both masses.
 #[inline]
-fn temperature_slopes(building: &Building, look: &Look, state: &[f64], room: usize, layer: usize) -> [f64; 4] {
+fn temperature_slopes(
+    building: &Building,
+    look: &Look,
+    state: &[f64],
+    room: usize,
+    layer: usize,
+) -> [f64; 4] {
     let at = building.layout.pressure(room);
     let data = &building.rooms[room];
     let pressure = (building.ambient.pressure_pa + state[at]).max(1.0);
@@ -801,7 +803,7 @@ fn temperature_slopes(building: &Building, look: &Look, state: &[f64], room: usi
         (now.lower_k, data.volume_m3 - state[at + 1], state[at + 3])
     };
     // A layer that goes has little warmth of its own.
-    let own = now.own[layer];
+    let own = now.there[layer];
     let by_volume = if volume > least_m3 { own * temperature / volume } else { 0.0 };
     let by_mass = if kg > least_kg { -own * temperature / kg } else { 0.0 };
     if layer == 0 {
@@ -897,4 +899,3 @@ fn gauss_jordan<const N: usize>(block: &[[f64; N]; N]) -> [[f64; N]; N] {
     }
     result
 }
-

@@ -25,12 +25,12 @@ mod surfaces;
 mod vents;
 
 pub use drive::run;
-pub use right_side::RightSide;
 pub use network::{
-    Ambient, Detector, Element, Fan, Fire, Fuel, GivesWay, HeatRelease, Ignition, Lie, Linings, Move, Network,
-    Opening, Position, Room, Side, Slab, Sprinkler, Supply, Zoning,
+    Ambient, Detector, Element, Fan, Fire, Fuel, GivesWay, HeatRelease, Ignition, Lie, Linings, Move,
+    Network, Opening, Position, Room, Side, Slab, Sprinkler, Supply, Zoning,
 };
 pub use outcome::{
     Balance, Composition, Ended, Event, EventKind, Failed, FailureReason, FireState, Layer, Note,
     OpeningState, Plan, RoomState, Sample, Work,
 };
+pub use right_side::RightSide;

@@ -15,7 +15,7 @@ pub struct Plan {
 
 impl Plan {
     /// Usual tolerance.
-    pub const TOLERANCE: f64 = 1e-3;
+    pub const TOLERANCE: f64 = 7e-4;
     /// Usual budget, far above what a run of a day takes.
     pub const STEP_BUDGET: usize = 400_000;
 

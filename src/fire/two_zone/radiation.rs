@@ -151,11 +151,7 @@ impl<R: Real> Zones<R> {
 }
 
 /// Exchange among layers and faces.
-pub(super) fn exchange<R: Real>(
-    zones: &Zones<R>,
-    faces_k: &[R; SURFACES],
-    inner: &mut Inner<R>,
-) {
+pub(super) fn exchange<R: Real>(zones: &Zones<R>, faces_k: &[R; SURFACES], inner: &mut Inner<R>) {
     if !zones.any {
         return;
     }
@@ -163,10 +159,7 @@ pub(super) fn exchange<R: Real>(
     let plane = [zones.through_plane(0), zones.through_plane(1)];
     // The plane passes what the smaller zone can send: both partners use the same area.
     let plane_m2 = (plane[0] * zones.area_m2[0]).min(plane[1] * zones.area_m2[1]);
-    let share = [
-        plane_m2 / zones.area_m2[0].at_least(1e-9),
-        plane_m2 / zones.area_m2[1].at_least(1e-9),
-    ];
+    let share = [plane_m2 / zones.area_m2[0].at_least(1e-9), plane_m2 / zones.area_m2[1].at_least(1e-9)];
 
     for surface in 0..SURFACES {
         let black = black_w_m2(faces_k[surface]);
@@ -181,8 +174,7 @@ pub(super) fn exchange<R: Real>(
                 + clear[zone]
                     * ((-share[zone] + 1.0) * zones.faces_w_m2[zone]
                         + share[zone]
-                            * (zones.takes[far] * zones.gas_w_m2[far]
-                                + clear[far] * zones.faces_w_m2[far]));
+                            * (zones.takes[far] * zones.gas_w_m2[far] + clear[far] * zones.faces_w_m2[far]));
             inner.surfaces_w[surface] = inner.surfaces_w[surface] + (received - black) * area;
         }
     }

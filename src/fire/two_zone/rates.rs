@@ -1,6 +1,6 @@
 //! Rates of change of the whole state, and how they change with it.
 
-use super::building::{Building, SURFACES, Vent, ledger};
+use super::building::{Building, RoomData, SURFACES, Vent, ledger};
 use super::controls::Controls;
 use super::gas::{
     CARBON_DIOXIDE, FUELS_MAX, GAMMA, GAS_CONSTANT_J_KGK, OXYGEN, PRODUCTS, SOOT, SPECIES_MAX,
@@ -174,10 +174,8 @@ impl Look {
                 }
             }
             self.shares.push(shares);
-            let glow = [
-                glow(building, index, 0, state, &shares[0]),
-                glow(building, index, 1, state, &shares[1]),
-            ];
+            let glow =
+                [glow(building, index, 0, state, &shares[0]), glow(building, index, 1, state, &shares[1])];
             let around = Around { inflow_m2_s: 0.0, glow };
             self.zones.push(radiation::zones(room, &now, &around, &inside.surfaces_k));
             self.inside.push(inside);
@@ -215,14 +213,7 @@ impl Look {
         }
     }
 
-    fn vent(
-        &mut self,
-        model: Model<'_>,
-        controls: &Controls,
-        time_s: f64,
-        vent: &Vent,
-        slopes: bool,
-    ) {
+    fn vent(&mut self, model: Model<'_>, controls: &Controls, time_s: f64, vent: &Vent, slopes: bool) {
         let share = vent.opening.map_or(0.0, |index| controls.leaves[index].open_fraction(time_s));
         let width_m = vent.effective_width_m(share);
         if width_m <= 0.0 {
@@ -325,8 +316,8 @@ impl Look {
                 let floor_m = model.building.rooms[room].floor_elevation_m;
                 let foot_m = flow.neutral_m.unwrap_or(vent.bottom_m).max(vent.bottom_m);
                 let from_m = 0.5 * (foot_m + vent.top_m) - floor_m;
-                let drawn = jets::drawn_kg_s(hot_kg_s, hot_k - now.lower_k, now.interface_m - from_m)
-                    * now.lower_there;
+                let drawn =
+                    jets::drawn_kg_s(hot_kg_s, hot_k - now.lower_k, now.interface_m - from_m) * now.there[1];
                 if drawn > 0.0 {
                     self.transfers.push(Transfer {
                         from: Some((room, 1)),
@@ -386,7 +377,7 @@ impl Look {
                     let lower_kg = self.inside[beyond].lower_kg.max(1e-8 * building.rooms[beyond].air_kg);
                     let oxygen = (self.inside[beyond].lower_oxygen_kg / lower_kg).max(0.0);
                     // A jet draws about as much as it brings on its way to the layer.
-                    let there = mass_kg_s * oxygen * self.now[beyond].lower_there;
+                    let there = mass_kg_s * oxygen * self.now[beyond].there[1];
                     let burns = super::combustion::smooth_min(wants, there);
                     if burns > 0.0 {
                         self.jet_burns.push((beyond, index, burns));
@@ -428,12 +419,8 @@ impl Look {
             // What leaves and what comes is shared between gas and faces as the zone sends it.
             let zones = &self.zones[room];
             let received_w = area_m2 * (power[1 - end] - power[end]);
-            let mut taken = Inner {
-                lifted_kg_s: 0.0,
-                heat_w: [0.0; 2],
-                surfaces_w: [0.0; SURFACES],
-                released_w: 0.0,
-            };
+            let mut taken =
+                Inner { lifted_kg_s: 0.0, heat_w: [0.0; 2], surfaces_w: [0.0; SURFACES], released_w: 0.0 };
             for (zone, share) in [(0, hot_share[end]), (1, 1.0 - hot_share[end])] {
                 let part_w = received_w * share;
                 taken.heat_w[zone] += part_w * zones.takes[zone];
@@ -493,32 +480,39 @@ impl Look {
             } else {
                 (side.lower_kg_m3, side.lower_gives)
             };
-            let mass = density * works * gives * (fan.volume_flow_m3_s * share);
-            let temperature_k = drawn[layer];
-            let upper = match rooms[1] {
-                Some(room) => {
-                    // A jet from the wall mixes into the layer at its height; warmer gas rises.
-                    let band_m = 0.05 * building.rooms[room].height_m;
-                    let above = fan.outlet_height_m - self.now[room].interface_m;
-                    above.smooth_step(-band_m, band_m).max(share_to_upper(&self.now[room], temperature_k))
+            let whole = density * works * (fan.volume_flow_m3_s * share);
+            let own = whole * gives;
+            // What its layer does not give comes from the other.
+            for (layer, mass) in [(layer, own), (1 - layer, whole - own)] {
+                if mass.value() <= 0.0 {
+                    continue;
                 }
-                None => 0.0,
-            };
-            let slopes: [f64; VENT_WAYS] = mass.slopes();
-            let targets = match rooms[1] {
-                Some(room) => [(Some((room, 0)), upper), (Some((room, 1)), 1.0 - upper)],
-                None => [(None, 1.0), (None, 0.0)],
-            };
-            for (to, part) in targets {
-                if part > 0.0 {
-                    self.transfers.push(Transfer {
-                        from: rooms[0].map(|room| (room, layer)),
-                        to,
-                        mass_kg_s: mass.value() * part,
-                        slopes: slopes.map(|slope| slope * part),
-                        rooms,
-                        temperature_k,
-                    });
+                let temperature_k = drawn[layer];
+                let upper = match rooms[1] {
+                    Some(room) => {
+                        // A jet from the wall mixes into the layer at its height; warmer gas rises.
+                        let band_m = 0.05 * building.rooms[room].height_m;
+                        let above = fan.outlet_height_m - self.now[room].interface_m;
+                        above.smooth_step(-band_m, band_m).max(share_to_upper(&self.now[room], temperature_k))
+                    }
+                    None => 0.0,
+                };
+                let slopes: [f64; VENT_WAYS] = mass.slopes();
+                let targets = match rooms[1] {
+                    Some(room) => [(Some((room, 0)), upper), (Some((room, 1)), 1.0 - upper)],
+                    None => [(None, 1.0), (None, 0.0)],
+                };
+                for (to, part) in targets {
+                    if part > 0.0 {
+                        self.transfers.push(Transfer {
+                            from: rooms[0].map(|room| (room, layer)),
+                            to,
+                            mass_kg_s: mass.value() * part,
+                            slopes: slopes.map(|slope| slope * part),
+                            rooms,
+                            temperature_k,
+                        });
+                    }
                 }
             }
         }
@@ -532,7 +526,7 @@ impl Look {
             let now = &self.now[index];
             let inside = &self.inside[index];
             let least_kg = inside.upper_kg.min(inside.lower_kg).max(0.0);
-            let share = if room.mixed { 1.0 } else { 1.0 - now.own[0].min(now.own[1]) };
+            let share = if room.mixed { 1.0 } else { 1.0 - now.there[0].min(now.there[1]) };
             if share < 1e-4 {
                 continue;
             }
@@ -618,8 +612,9 @@ impl Look {
         self.outside_gains = [0.0; SPECIES_MAX];
         for index in 0..self.inner.len() {
             let inner = self.inner[index];
+            let extra_w = room::to_what_is_there(self.extra_heat_w[index], self.now[index].there);
             for layer in 0..2 {
-                self.heat[index][layer] += inner.heat_w[layer] + self.extra_heat_w[index][layer];
+                self.heat[index][layer] += inner.heat_w[layer] + extra_w[layer];
             }
             if inner.lifted_kg_s > 0.0 {
                 let lift = Transfer {
@@ -654,6 +649,8 @@ impl Look {
             let pressure_rate = (GAMMA - 1.0) * (upper_w + lower_w) / room.volume_m3;
             out[at] = pressure_rate;
             out[at + 1] = ((GAMMA - 1.0) * upper_w - state[at + 1] * pressure_rate) / (GAMMA * pressure_pa);
+            out[at + 1] += remnant_1_s(&self.now[index])
+                * (remnant_m3(room, &self.now[index], &self.inside[index]) - state[at + 1]);
             out[at + 2] += self.mass[index][0];
             out[at + 3] += self.mass[index][1];
             for surface in 0..SURFACES {
@@ -776,8 +773,7 @@ impl Look {
                 fire.wanted_w = burning.wanted_w;
                 let wanted_kg_s = burning.wanted_w / fuel.heat_per_oxygen_j_kg / fuel.oxygen_need;
                 // A starved solid keeps what it does not give: its own clock slows.
-                fire.clock_rate =
-                    if wanted_kg_s > 0.0 { fire.supply_kg_s / wanted_kg_s } else { 1.0 };
+                fire.clock_rate = if wanted_kg_s > 0.0 { fire.supply_kg_s / wanted_kg_s } else { 1.0 };
                 if controls.fires[burning.fire].spent {
                     fire.clock_rate = 0.0;
                 }
@@ -795,6 +791,27 @@ impl Look {
             out[upper + PRODUCTS + index] -= burnt;
             out[layout.ledger + ledger::RELEASED] += oxygen * fuel.heat_per_oxygen_j_kg;
         }
+    }
+}
+
+/// Rate at which the volume of a layer that is nearly gone is led back to what its gas takes up, 1/s: the
+/// volume and the mass of a remnant drift apart by the errors of the steps, and their ratio would mean nothing.
+#[inline]
+pub(super) fn remnant_1_s(now: &Derived<f64>) -> f64 {
+    const LEADS_BACK_1_S: f64 = 1.0;
+    (1.0 - now.there[0].min(now.there[1])) * LEADS_BACK_1_S
+}
+
+/// Volume of the hot layer by what the smaller layer takes up, m³.
+#[inline]
+fn remnant_m3(room: &RoomData, now: &Derived<f64>, inside: &Inside<f64>) -> f64 {
+    let takes_m3 = |mass_kg: f64, temperature_k: f64| {
+        mass_kg.max(0.0) * GAS_CONSTANT_J_KGK * temperature_k / inside.pressure_pa
+    };
+    if now.there[0] < now.there[1] {
+        takes_m3(inside.upper_kg, now.upper_k)
+    } else {
+        room.volume_m3 - takes_m3(inside.lower_kg, now.lower_k)
     }
 }
 
@@ -881,8 +898,8 @@ fn flank<R: Real>(building: &Building, index: usize, inside: &Inside<f64>, first
         interface_m: now.interface_m + room.floor_elevation_m,
         upper_kg_m3: dense / now.upper_k,
         lower_kg_m3: dense / now.lower_k,
-        upper_gives: now.upper_there,
-        lower_gives: now.lower_there,
+        upper_gives: now.there[0],
+        lower_gives: now.there[1],
     }
 }
 
@@ -899,13 +916,7 @@ fn outside<R: Real>(density_kg_m3: f64) -> Flank<R> {
 }
 
 /// What makes a layer glow.
-fn glow(
-    building: &Building,
-    room: usize,
-    layer: usize,
-    state: &[f64],
-    shares: &[f64; SPECIES_MAX],
-) -> Glow {
+fn glow(building: &Building, room: usize, layer: usize, state: &[f64], shares: &[f64; SPECIES_MAX]) -> Glow {
     // Mole fractions in gas of the molar mass of air.
     let water = shares[WATER].clamp(0.0, 1.0) * (28.96 / 18.015);
     let mut fuel_shares = [0.0; FUELS_MAX];

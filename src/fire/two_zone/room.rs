@@ -34,12 +34,10 @@ pub(super) struct Derived<R> {
     pub lower_m3: R,
     /// Interface above the floor, m.
     pub interface_m: R,
-    /// How much of its part the cool, the hot layer still plays: 1, falling to 0 as the layer goes.
-    pub lower_there: R,
-    pub upper_there: R,
-    /// How far the temperature of the hot, the cool layer is its own: the ratio of two remnants means nothing,
-    /// so a layer that goes takes on the other's.
-    pub own: [R; 2],
+    /// How much of its part the hot, the cool layer still plays: 1, falling to 0 as the layer goes. A layer that
+    /// goes gives nothing, takes no heat, and has the temperature of the other: the ratio of two
+    /// remnants means nothing.
+    pub there: [R; 2],
 }
 
 /// Mass below which a layer counts as going, as a share of the air of the room.
@@ -51,7 +49,7 @@ impl<R: Real> Inside<R> {
     pub(super) fn derived(&self, room: &RoomData) -> Derived<R> {
         let least_m3 = 1e-7 * room.volume_m3;
         let least_kg = 1e-8 * room.air_kg;
-        let upper_m3 = self.upper_m3.at_least(least_m3);
+        let upper_m3 = self.upper_m3.at_least(least_m3).at_most(room.volume_m3);
         let lower_m3 = (-self.upper_m3 + room.volume_m3).at_least(least_m3);
         let upper_kg = self.upper_kg.at_least(least_kg);
         let lower_kg = self.lower_kg.at_least(least_kg);
@@ -59,19 +57,17 @@ impl<R: Real> Inside<R> {
         let going_kg = GOING * room.air_kg;
         let raw = |volume: R, mass: R| (per_kg * volume / mass).at_least(50.0).at_most(9000.0);
         let (hot_k, cool_k) = (raw(upper_m3, upper_kg), raw(lower_m3, lower_kg));
-        let own_of = |mass: R| {
+        let there_of = |mass: R| {
             let squared = mass.squared();
             squared / (squared + going_kg * going_kg)
         };
-        let own = [own_of(upper_kg), own_of(lower_kg)];
+        let there = [there_of(upper_kg), there_of(lower_kg)];
         Derived {
-            upper_k: cool_k + (hot_k - cool_k) * own[0],
-            lower_k: hot_k + (cool_k - hot_k) * own[1],
+            upper_k: cool_k + (hot_k - cool_k) * there[0],
+            lower_k: hot_k + (cool_k - hot_k) * there[1],
             lower_m3,
             interface_m: lower_m3 * (1.0 / room.floor_area_m2),
-            lower_there: lower_kg / (lower_kg + going_kg),
-            upper_there: upper_kg / (upper_kg + going_kg),
-            own,
+            there,
         }
     }
 }
@@ -211,7 +207,7 @@ pub(super) fn inside<R: Real>(
             .at_most((room.height_m - fire.base_m).max(0.05))
             .at_least(0.05);
         // What the flame draws on its height: cool gas below the interface, hot gas above.
-        let low_kg_s = plume::flow_kg_s(wanted_kw, clear_m.min(tip_m), &source) * now.lower_there;
+        let low_kg_s = plume::flow_kg_s(wanted_kw, clear_m.min(tip_m), &source) * now.there[1];
         let all_kg_s = plume::flow_kg_s(wanted_kw, tip_m, &source);
         let high_kg_s = (all_kg_s - low_kg_s).at_least(0.0);
         let drawn_kg_s = low_kg_s + high_kg_s + 1e-12;
@@ -239,7 +235,7 @@ pub(super) fn inside<R: Real>(
 
         let heat_w = oxygen * fuel.heat_per_oxygen_j_kg;
         inner.released_w = inner.released_w + heat_w;
-        let lifted = plume::flow_kg_s(heat_w * 1e-3, clear_m, &source) * now.lower_there;
+        let lifted = plume::flow_kg_s(heat_w * 1e-3, clear_m, &source) * now.there[1];
         inner.lifted_kg_s = inner.lifted_kg_s + lifted;
         // A layer that is nearly gone cannot take the heat of the plume: then all of the room is hot.
         inner.heat_w[0] = inner.heat_w[0] + heat_w * (1.0 - fire.radiative);
@@ -277,7 +273,15 @@ pub(super) fn inside<R: Real>(
 
     convection(room, state, now, &mut inner);
     radiation::exchange(zones, &state.surfaces_k, &mut inner);
+    inner.heat_w = to_what_is_there(inner.heat_w, now.there);
     inner
+}
+
+/// Heat meant for a layer that is nearly gone goes to the other.
+#[inline]
+pub(super) fn to_what_is_there<R: Real>(heat_w: [R; 2], there: [R; 2]) -> [R; 2] {
+    let kept = [heat_w[0] * there[0], heat_w[1] * there[1]];
+    [kept[0] + heat_w[1] - kept[1], kept[1] + heat_w[0] - kept[0]]
 }
 
 /// `(ρ²/T)^(1/3)` against air at 293 K and 101 325 Pa: plume laws grow with it.
@@ -302,10 +306,10 @@ fn convection<R: Real>(room: &RoomData, state: &Inside<R>, now: &Derived<R>, inn
         inner.heat_w[1] = inner.heat_w[1] - cool;
         inner.surfaces_w[surface] = inner.surfaces_w[surface] + hot + cool;
     };
-    give(CEILING, LEVEL_FILM, now.upper_there);
+    give(CEILING, LEVEL_FILM, now.there[0]);
     give(UPPER_WALL, UPRIGHT_FILM, share_in_hot(now.interface_m, half_m, room.height_m));
     give(LOWER_WALL, UPRIGHT_FILM, share_in_hot(now.interface_m, 0.0, half_m));
-    give(FLOOR, LEVEL_FILM, -now.lower_there + 1.0);
+    give(FLOOR, LEVEL_FILM, -now.there[1] + 1.0);
 }
 
 /// Emissive power of a black face, W/m².

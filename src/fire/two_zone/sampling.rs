@@ -15,8 +15,7 @@ impl Between {
     /// The building at a time between.
     pub(super) fn at(&mut self, time_s: f64, before: &Sample, after: &Sample) -> &Sample {
         let step_s = after.time_s - before.time_s;
-        let share =
-            if step_s > 0.0 { ((time_s - before.time_s) / step_s).clamp(0.0, 1.0) } else { 1.0 };
+        let share = if step_s > 0.0 { ((time_s - before.time_s) / step_s).clamp(0.0, 1.0) } else { 1.0 };
         let line = |from: f64, to: f64| from + (to - from) * share;
         let mut sample = std::mem::take(&mut self.sample);
         sample.clone_from(if share < 0.5 { before } else { after });
@@ -25,10 +24,9 @@ impl Between {
             let (from, to) = (&before.rooms[index], &after.rooms[index]);
             room.pressure_pa = line(from.pressure_pa, to.pressure_pa);
             room.interface_height_m = line(from.interface_height_m, to.interface_height_m);
-            for (mine, (a, b)) in [
-                (&mut room.upper, (&from.upper, &to.upper)),
-                (&mut room.lower, (&from.lower, &to.lower)),
-            ] {
+            for (mine, (a, b)) in
+                [(&mut room.upper, (&from.upper, &to.upper)), (&mut room.lower, (&from.lower, &to.lower))]
+            {
                 mine.temperature_k = line(a.temperature_k, b.temperature_k);
                 mine.mass_kg = line(a.mass_kg, b.mass_kg);
             }

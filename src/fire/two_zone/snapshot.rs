@@ -73,11 +73,7 @@ fn room_state(model: Model<'_>, look: &Look, state: &[f64], index: usize, fires:
     let layer = |layer: usize, temperature_k: f64, mass_kg: f64| {
         let first = layout.species_of(index, layer);
         let held = held_kg(building, state, index, layer);
-        Layer {
-            temperature_k,
-            mass_kg,
-            gas: composition(&state[first..first + building.species], held),
-        }
+        Layer { temperature_k, mass_kg, gas: composition(&state[first..first + building.species], held) }
     };
     let upper = layer(0, now.upper_k, inside.upper_kg);
     let lower = layer(1, now.lower_k, inside.lower_kg);
@@ -129,8 +125,7 @@ fn room_state(model: Model<'_>, look: &Look, state: &[f64], index: usize, fires:
         upper_wall_k: inside.surfaces_k[UPPER_WALL],
         lower_wall_k: inside.surfaces_k[LOWER_WALL],
         floor_k: inside.surfaces_k[FLOOR],
-        floor_flux_kw_m2: 1e-3
-            * (zones.floor_receives_w_m2(sees_plane) + flame_w_m2 - ambient_w_m2).max(0.0),
+        floor_flux_kw_m2: 1e-3 * (zones.floor_receives_w_m2(sees_plane) + flame_w_m2 - ambient_w_m2).max(0.0),
         heat_release_kw: released_kw,
         layer_heat_release_kw: (released_kw - own_kw).max(0.0),
         upper_extinction_1_m: EXTINCTION_M2_KG * soot_kg_m3(0, inside.upper_m3),
@@ -143,4 +138,3 @@ fn room_state(model: Model<'_>, look: &Look, state: &[f64], index: usize, fires:
 fn inside_released_w(look: &Look, index: usize) -> f64 {
     look.inner[index].released_w + look.jet_released_w(index)
 }
-

@@ -123,14 +123,7 @@ impl Solver {
         use coefficients::{ERROR, GAMMA, RIGHTS, STAGES, TIMES};
         if self.age >= SLOPES_SERVE {
             self.slopes_state.copy_from_slice(&self.state);
-            self.slopes.rates(
-                model,
-                controls,
-                self.time_s,
-                &self.state,
-                true,
-                &mut self.slopes_rates,
-            );
+            self.slopes.rates(model, controls, self.time_s, &self.state, true, &mut self.slopes_rates);
             self.matrix.take(model, &self.slopes, &self.slopes_state, &self.slopes_rates);
             self.jacobians += 1;
             self.age = 0;

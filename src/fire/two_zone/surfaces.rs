@@ -317,8 +317,7 @@ mod tests {
             let fine = FineGrid::new(&sheets);
             let grid = Chain::of(
                 fine.root_capacity.iter().map(|r| r * r).collect(),
-                fine
-                    .beside
+                fine.beside
                     .iter()
                     .enumerate()
                     .map(|(n, b)| -b * fine.root_capacity[n] * fine.root_capacity[n + 1])

@@ -52,7 +52,7 @@ pub(super) struct Flow<R> {
 }
 
 /// Pressure under which flow falls below the root law, Pa: the root of nothing has no slope.
-const SOFT_PA: f64 = 0.01;
+const SOFT_PA: f64 = 0.004;
 
 /// `∫ Δ/√(Δ + ε) dz` over a height on which `Δ` runs straight from `first` to `last`, none below zero. Exact.
 #[inline]
@@ -186,10 +186,9 @@ pub(super) fn through_ceiling<R: Real>(
             let mean = (above.lower_kg_m3 + below.upper_kg_m3) * 0.5;
             let volume = (heavier / mean * (GRAVITY_M_S2 * side_m)).sqrt() * (EXCHANGE * open_area_m2) * free;
             // Equal volumes change places.
-            for (end, density, gives, layer) in [
-                (0, below.upper_kg_m3, below.upper_gives, 0),
-                (1, above.lower_kg_m3, above.lower_gives, 1),
-            ] {
+            for (end, density, gives, layer) in
+                [(0, below.upper_kg_m3, below.upper_gives, 0), (1, above.lower_kg_m3, above.lower_gives, 1)]
+            {
                 let mass = volume * density;
                 let own = mass * gives;
                 flow.from[end][layer] = flow.from[end][layer] + own;
@@ -254,7 +253,9 @@ mod tests {
         );
 
         let law = |density: f64, height: f64| {
-            0.7 * 0.8 * 2.0 / 3.0 * (2.0 * GRAVITY_M_S2 * density * (cold - hot)).sqrt() * f64::powf(height, 1.5)
+            0.7 * 0.8 * 2.0 / 3.0
+                * (2.0 * GRAVITY_M_S2 * density * (cold - hot)).sqrt()
+                * f64::powf(height, 1.5)
         };
         assert_relative_eq!(flow.neutral_m.unwrap(), neutral_m, max_relative = 1e-9);
         assert_relative_eq!(flow.from[0][1], law(hot, 1.1), max_relative = 6e-3);
