@@ -538,6 +538,86 @@ pub const CLANCEY_1972: Source = Source {
     provenance: Provenance::Seen,
 };
 
+/// A plume in a draught.
+pub const HOULT_1969: Source = Source {
+    key: "hoult_1969",
+    citation: "Hoult, D. P., Fay, J. A., Forney, L. J.: A theory of plume rise compared with field observations, Journal of the Air Pollution Control Association 19 (1969) 585-590",
+    locator: "entrainment of a bent-over plume by the wind across it, coefficient 0.6; from memory",
+    provenance: Provenance::Memory,
+};
+
+/// Hot and cold gas that change places through a hole in a floor.
+pub const EPSTEIN_1988: Source = Source {
+    key: "epstein_1988",
+    citation: "Epstein, M.: Buoyancy-driven exchange flow through small openings in horizontal partitions, Journal of Heat Transfer 110 (1988) 885-893",
+    locator: "exchange 0.055 sqrt(g D^5 drho/rho) of a short square opening; from memory",
+    provenance: Provenance::Memory,
+};
+
+/// The same under pressure.
+pub const COOPER_1995: Source = Source {
+    key: "cooper_1995",
+    citation: "Cooper, L. Y.: Combined buoyancy- and pressure-driven flow through a horizontal vent, NISTIR 5384 (1994) and Fire Safety Journal (1995)",
+    locator: "exchange stops from a flooding pressure on; the order of it, from memory",
+    provenance: Provenance::Memory,
+};
+
+/// Carbon monoxide of starved fires.
+pub const GOTTUK_LATTIMER: Source = Source {
+    key: "gottuk_lattimer",
+    citation: "Gottuk, D. T., Lattimer, B. Y.: Effect of combustion conditions on species production, SFPE Handbook of Fire Protection Engineering",
+    locator: "carbon monoxide against the equivalence ratio, cold and hot layers; from memory",
+    provenance: Provenance::Memory,
+};
+
+/// Soot that glows.
+pub const TIEN_1979: Source = Source {
+    key: "tien_1979",
+    citation: "Tien, C. L., Lee, K. Y., Stretton, A. J.: Radiation heat transfer, SFPE Handbook of Fire Protection Engineering",
+    locator: "mean absorption of soot, about 1300 f_v T per metre; from memory",
+    provenance: Provenance::Memory,
+};
+
+/// Gases that glow.
+pub const BLOKH_1988: Source = Source {
+    key: "blokh_1988",
+    citation: "Blokh, A. G.: Heat transfer in steam boiler furnaces, Hemisphere (1988)",
+    locator: "grey absorption of carbon dioxide and water vapour in furnaces; from memory",
+    provenance: Provenance::Memory,
+};
+
+/// Free convection.
+pub const HOLMAN: Source = Source {
+    key: "holman",
+    citation: "Holman, J. P.: Heat Transfer, McGraw-Hill, simplified equations for free convection in air",
+    locator: "1.31 dT^(1/3) upright and 1.52 dT^(1/3) level plates, turbulent; from memory",
+    provenance: Provenance::Memory,
+};
+
+/// Hot gas that rises from a door.
+pub const CETEGEN_1984: Source = Source {
+    key: "cetegen_1984",
+    citation: "Cetegen, B. M., Zukoski, E. E., Kubota, T.: Entrainment in the near and far field of fire plumes, Combustion Science and Technology 39 (1984) 305-331",
+    locator: "a jet through a door treated as the far part of a plume; the treatment from memory",
+    provenance: Provenance::Memory,
+};
+
+/// The method of steps.
+pub const RANG_ANGERMANN_2005: Source = Source {
+    key: "rang_angermann_2005",
+    citation: "Rang, J., Angermann, L.: New Rosenbrock W-methods of order 3 for partial differential algebraic equations of index 1, BIT Numerical Mathematics 45 (2005) 761-787",
+    locator: "coefficients of ROS34PW2 from memory; their order conditions are checked by a test",
+    provenance: Provenance::Memory,
+};
+
+/// Short chains for thick sheets.
+pub const DRUSKIN_KNIZHNERMAN_2000: Source = Source {
+    key: "druskin_knizhnerman_2000",
+    citation: "Druskin, V., Knizhnerman, L.: Gaussian spectral rules for the three-point second differences, SIAM Journal on Numerical Analysis 37 (2000) 403-422",
+    locator: "a short chain that answers at its face as the sheet does; the idea, from memory",
+    provenance: Provenance::Memory,
+};
+
 /// All publications, in the order of this file.
 pub const ALL: &[&Source] = &[
     &HUGGETT_1980,
@@ -604,6 +684,16 @@ pub const ALL: &[&Source] = &[
     &HARRIS_1983,
     &SLOW_PRESSURE,
     &CLANCEY_1972,
+    &HOULT_1969,
+    &EPSTEIN_1988,
+    &COOPER_1995,
+    &GOTTUK_LATTIMER,
+    &TIEN_1979,
+    &BLOKH_1988,
+    &HOLMAN,
+    &CETEGEN_1984,
+    &RANG_ANGERMANN_2005,
+    &DRUSKIN_KNIZHNERMAN_2000,
 ];
 
 /// The publication of a key.

@@ -222,8 +222,8 @@ impl Building {
 
     /// The state before anything burns.
     pub(super) fn start(&self) -> Vec<f64> {
-        // A layer must exist to grow: the hot one begins as a two-hundredth of the room.
-        const FIRST_LAYER: f64 = 5e-3;
+        // A layer must exist to grow: the hot one begins as a five-hundredth of the room.
+        const FIRST_LAYER: f64 = 2e-3;
 
         let mut state = vec![0.0; self.layout.len];
         for (index, room) in self.rooms.iter().enumerate() {

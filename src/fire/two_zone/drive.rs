@@ -35,7 +35,7 @@ pub fn run(
 ) -> Result<Ended, Failed> {
     check(network, plan)?;
     let building = Building::new(network)?;
-    Run::new(Model { network, building: &building }, plan).to_the_end(sample, watch)
+    Run::new(Model { network, building: &building }, plan).through(sample, watch)
 }
 
 fn check(network: &Network, plan: &Plan) -> Result<(), Failed> {
@@ -47,7 +47,7 @@ fn check(network: &Network, plan: &Plan) -> Result<(), Failed> {
     if !(plan.tolerance.is_finite() && plan.tolerance > 0.0) {
         return malformed("tolerance");
     }
-    if plan.samples_s.windows(2).any(|two| !(two[0] <= two[1])) {
+    if plan.samples_s.windows(2).any(|two| two[0].is_nan() || two[1].is_nan() || two[0] > two[1]) {
         return malformed("sample times must rise");
     }
     for fire in &network.fires {
@@ -100,7 +100,8 @@ fn check(network: &Network, plan: &Plan) -> Result<(), Failed> {
         let heights = [fan.inlet_height_m, fan.outlet_height_m, fan.volume_flow_m3_s];
         let times = [fan.starts_s, fan.stops_s];
         if fan.from == fan.to
-            || !(fan.stall_pa > 0.0)
+            || fan.stall_pa.is_nan()
+            || fan.stall_pa <= 0.0
             || heights.iter().any(|value| !value.is_finite())
             || times.iter().any(|value| value.is_nan())
         {
@@ -146,7 +147,7 @@ impl<'a> Run<'a> {
         }
     }
 
-    fn to_the_end(
+    fn through(
         mut self,
         sample: &mut dyn FnMut(&Sample),
         watch: &mut dyn FnMut() -> ControlFlow<()>,
@@ -176,7 +177,7 @@ impl<'a> Run<'a> {
             }
             let tried = self.solver.attempt(self.model, &self.controls, tried_s, self.plan.tolerance);
             let factor = (0.9 * tried.error.max(1e-6).powf(-1.0 / 3.0)).clamp(0.2, 4.0);
-            if !(tried.error <= 1.0) {
+            if tried.error > 1.0 {
                 self.work.rejected += 1;
                 self.solver.forget_slopes();
                 step_s = tried_s * if tried.error.is_finite() { factor.min(0.7) } else { 0.2 };
@@ -261,7 +262,7 @@ impl<'a> Run<'a> {
             let late_s = (1.0 - share) * step_s;
             // Within a hundredth of a second is on time.
             if attempt + 1 == PIN_TRIES || late_s <= 0.01 || share <= 0.0 || reached.from >= 0.0 {
-                self.pending.follow(self.model.building, network, &self.before, &self.after);
+                self.pending.follow(network, &self.before, &self.after);
                 self.pending.happen(network, &mut self.controls, reached.kind, &self.after);
                 self.events.push(Event { at_s: self.solver.time_s, kind: reached.kind });
                 return Ok(true);
@@ -271,7 +272,7 @@ impl<'a> Run<'a> {
             self.solver.go_back(from_s);
             self.solver.look(self.model, &self.controls);
             let tried = self.solver.attempt(self.model, &self.controls, cut_s, self.plan.tolerance);
-            if !(tried.error <= 1.0) {
+            if tried.error > 1.0 {
                 // A shorter step from the same place can only fail where slopes changed: take it as it is, if finite.
                 if !tried.error.is_finite() {
                     return Err(self.failed(FailureReason::StepTooSmall, Some(tried.room)));
@@ -279,7 +280,7 @@ impl<'a> Run<'a> {
             }
             self.take(from_s + cut_s);
         }
-        self.pending.follow(self.model.building, network, &self.before, &self.after);
+        self.pending.follow(network, &self.before, &self.after);
         Ok(false)
     }
 

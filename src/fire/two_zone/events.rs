@@ -1,6 +1,5 @@
 //! What happens by itself: things catch fire, go out, fall, give way, answer.
 
-use super::building::Building;
 use super::combustion::{FLAME_BAND, OXYGEN_LIMIT};
 use super::controls::{Controls, FireControl, Leaf};
 use super::devices::Device;
@@ -21,12 +20,11 @@ pub(super) struct Pending {
     moves: Vec<super::network::Move>,
 }
 
-/// How far an event is at the end of a step: below zero not yet, zero or above: it happens.
+/// An event that happens within a step, and how far it was at its start: below zero not yet.
 #[derive(Clone, Copy, Debug)]
 pub(super) struct Reached {
     pub kind: EventKind,
     pub from: f64,
-    pub to: f64,
 }
 
 /// Share of a flame below which it is out: the limit itself; the band about it only keeps the rates smooth.
@@ -126,12 +124,12 @@ impl Pending {
     ) -> Option<(Reached, f64)> {
         let mut first: Option<(Reached, f64)> = None;
         let mut consider = |kind: EventKind, before: f64, after: f64| {
-            if !(after >= 0.0) {
+            if after < 0.0 || after.is_nan() {
                 return;
             }
             let share = if before < 0.0 { before / (before - after) } else { 0.0 };
             if first.is_none_or(|(_, earliest)| share < earliest) {
-                first = Some((Reached { kind, from: before, to: after }, share));
+                first = Some((Reached { kind, from: before }, share));
             }
         };
         self.fires(network, controls, clocks, from, to, &mut consider);
@@ -255,8 +253,7 @@ impl Pending {
     }
 
     /// Follows what changes slowly over a step that stands.
-    pub(super) fn follow(&mut self, building: &Building, network: &Network, from: &Sample, to: &Sample) {
-        let _ = building;
+    pub(super) fn follow(&mut self, network: &Network, from: &Sample, to: &Sample) {
         for (index, opening) in network.openings.iter().enumerate() {
             if opening.gives_way.exposed_s.is_none() {
                 continue;

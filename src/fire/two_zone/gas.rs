@@ -57,12 +57,6 @@ pub(super) fn fuel_elements(fuel: &Fuel) -> [f64; 4] {
     [fuel.carbon, fuel.hydrogen, fuel.oxygen, fuel.nitrogen]
 }
 
-/// Temperature of a gas of one layer, K.
-#[inline]
-pub(super) fn temperature_k(pressure_pa: f64, volume_m3: f64, mass_kg: f64) -> f64 {
-    pressure_pa * volume_m3 / (GAS_CONSTANT_J_KGK * mass_kg)
-}
-
 /// The list of masses of a layer as named fractions.
 pub(super) fn composition(species_kg: &[f64], mass_kg: f64) -> Composition {
     let share = |kg: f64| (kg / mass_kg).clamp(0.0, 1.0);

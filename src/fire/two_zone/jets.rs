@@ -1,4 +1,5 @@
-//! Hot gas that comes through a door rises to the layer beyond and draws cool gas along.
+//! Gas that comes through an opening into a layer it does not belong to rises or falls to its own, and draws of the
+//! layer it passes.
 
 /// Gas drawn by a jet on its way up, kg/s.
 ///

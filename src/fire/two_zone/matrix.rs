@@ -233,7 +233,7 @@ impl Matrix {
         for (room, inner) in look.inner_slopes.iter().enumerate() {
             self.add_inner(building, look, room, inner);
         }
-        self.to_rates(building, look, state, rates);
+        self.turn_to_rates(building, look, state, rates);
     }
 
     fn add_way(&mut self, building: &Building, index: usize) {
@@ -346,7 +346,7 @@ impl Matrix {
     }
 
     /// Turns rows of heat into rows of pressure and volume.
-    fn to_rates(&mut self, building: &Building, look: &Look, state: &[f64], rates: &[f64]) {
+    fn turn_to_rates(&mut self, building: &Building, look: &Look, state: &[f64], rates: &[f64]) {
         let layout = &building.layout;
         let gain = GAMMA - 1.0;
         for (at, &(row, column)) in self.graph.blocks.iter().enumerate() {

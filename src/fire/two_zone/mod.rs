@@ -1,5 +1,7 @@
 //! The transient engine: two layers in every room of a network.
 
+#![expect(clippy::needless_range_loop, reason = "rows, columns and layers are told by their numbers")]
+
 mod balance;
 mod building;
 mod combustion;

@@ -1,8 +1,9 @@
-//! Radiation in a room: flame, two grey layers, black faces.
+//! Radiation in a room: flame, two grey layers, grey faces.
 //!
 //! Two zones meet at the plane of the interface. Within a zone what a face sends is spread over the
 //! zone as if well mixed: a share goes through the plane, the rest to the faces of the zone by
-//! their area; gas takes its share on the way. Every exchange is written once for both partners, so
+//! their area; gas takes its share on the way. Faces send and take [`EMISSIVITY`] of what black ones would; what they
+//! throw back is taken as gone to where the rest goes. Every exchange is written once for both partners, so
 //! that nothing is lost.
 
 use super::building::{CEILING, FLOOR, LOWER_WALL, RoomData, SURFACES, UPPER_WALL};
@@ -22,6 +23,9 @@ pub(super) struct Glow {
     pub fuel_shares: [f64; FUELS_MAX],
 }
 
+/// Share of what falls on a lining that it takes, and of a black face's power that it sends. Handbook value of
+/// plaster, brick, concrete, wood; EN 1991-1-2 takes 0.8.
+const EMISSIVITY: f64 = 0.9;
 /// Density of soot, kg/m³.
 const SOOT_KG_M3: f64 = 1800.0;
 /// Absorption by soot per volume fraction and kelvin, 1/(m K).
@@ -175,15 +179,15 @@ pub(super) fn exchange<R: Real>(zones: &Zones<R>, faces_k: &[R; SURFACES], inner
                     * ((-share[zone] + 1.0) * zones.faces_w_m2[zone]
                         + share[zone]
                             * (zones.takes[far] * zones.gas_w_m2[far] + clear[far] * zones.faces_w_m2[far]));
-            inner.surfaces_w[surface] = inner.surfaces_w[surface] + (received - black) * area;
+            inner.surfaces_w[surface] = inner.surfaces_w[surface] + (received - black) * area * EMISSIVITY;
         }
     }
     for zone in 0..2 {
         let far = 1 - zone;
         let gas = zones.gas_w_m2[zone];
-        let own = zones.area_m2[zone] * zones.takes[zone] * (zones.faces_w_m2[zone] - gas);
+        let own = zones.area_m2[zone] * zones.takes[zone] * (zones.faces_w_m2[zone] - gas) * EMISSIVITY;
         let through = plane_m2 * zones.takes[zone];
-        let far_faces = through * clear[far] * (zones.faces_w_m2[far] - gas);
+        let far_faces = through * clear[far] * (zones.faces_w_m2[far] - gas) * EMISSIVITY;
         let far_gas = through * zones.takes[far] * (zones.gas_w_m2[far] - gas);
         inner.heat_w[zone] = inner.heat_w[zone] + own + far_faces + far_gas;
     }

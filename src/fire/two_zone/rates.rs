@@ -10,8 +10,11 @@ use super::jets;
 use super::network::{Fan, Lie, Network, Position, Side};
 use super::radiation::{self, Glow, Zones};
 use super::real::{Dual, Real};
-use super::room::{self, Around, Burning, Derived, Inner, Inside, Reaction, black_w_m2};
+use super::room::{self, Around, Burning, Derived, Fires, Inner, Inside, Reaction, black_w_m2};
 use super::vents::{self, Flank, Flow};
+
+/// An opening that stands open by less than this share only leaks.
+const CRACKS_BELOW: f64 = 0.01;
 
 /// Tangent of the half angle at which a turbulent jet widens, 12°. Common practice.
 const SPREADS: f64 = 0.21;
@@ -221,10 +224,10 @@ impl Look {
         }
         if slopes {
             let flow = self.flow::<Dual<VENT_WAYS>>(model, vent, width_m, share);
-            self.pass(model, vent, &flow);
+            self.pass(model, vent, &flow, share < CRACKS_BELOW);
         } else {
             let flow = self.flow::<f64>(model, vent, width_m, share);
-            self.pass(model, vent, &flow);
+            self.pass(model, vent, &flow, share < CRACKS_BELOW);
         }
         if vent.lie == Lie::Vertical && share > 0.0 {
             self.shine(model, vent, vent.area_m2 * share);
@@ -260,7 +263,7 @@ impl Look {
     }
 
     /// Sends the gas of a flow where it belongs: hot gas to the hot layer beyond, cool gas to the cool one.
-    fn pass<R: Real>(&mut self, model: Model<'_>, vent: &Vent, flow: &Flow<R>) {
+    fn pass<R: Real>(&mut self, model: Model<'_>, vent: &Vent, flow: &Flow<R>, cracks: bool) {
         let mut low_kg_s = [0.0; 2];
         let mut low_k = [0.0; 2];
         for giver in 0..2 {
@@ -294,7 +297,15 @@ impl Look {
                 match vent.rooms[taker] {
                     None => send(None, 1.0),
                     Some(room) => {
-                        let upper = share_to_upper(&self.now[room], temperature_k);
+                        let upper = if cracks {
+                            // A jet as thin as a crack draws a hundred times its own flow within a metre:
+                            // what it brings is spread through the room.
+                            let inside = &self.inside[room];
+                            inside.upper_kg.max(0.0)
+                                / (inside.upper_kg.max(0.0) + inside.lower_kg.max(0.0)).max(1e-9)
+                        } else {
+                            share_to_upper(&self.now[room], temperature_k)
+                        };
                         send(Some((room, 0)), upper);
                         send(Some((room, 1)), 1.0 - upper);
                         low_kg_s[taker] += mass.value() * (1.0 - upper);
@@ -307,25 +318,36 @@ impl Look {
                     self.jet(model, vent, giver, layer, mass.value(), temperature_k);
                 }
             }
-            // Hot gas that comes through an opening rises to the layer beyond and draws cool gas along.
-            if let (Some(room), Some(_)) = (vent.rooms[taker], vent.rooms[giver])
-                && hot_kg_s > 1e-6
-            {
-                let now = &self.now[room];
-                let hot_k = hot_heat / hot_kg_s;
-                let floor_m = model.building.rooms[room].floor_elevation_m;
-                let foot_m = flow.neutral_m.unwrap_or(vent.bottom_m).max(vent.bottom_m);
-                let from_m = 0.5 * (foot_m + vent.top_m) - floor_m;
-                let drawn =
-                    jets::drawn_kg_s(hot_kg_s, hot_k - now.lower_k, now.interface_m - from_m) * now.there[1];
-                if drawn > 0.0 {
+            let Some(room) = vent.rooms[taker] else { continue };
+            let now = &self.now[room];
+            let floor_m = model.building.rooms[room].floor_elevation_m;
+            let turn_m = flow.neutral_m.unwrap_or(vent.bottom_m).max(vent.bottom_m);
+            // Hot gas that comes from another room rises to the layer beyond and draws cool gas along.
+            let risen = if vent.rooms[giver].is_some() && hot_kg_s > 1e-6 {
+                let from_m = 0.5 * (turn_m + vent.top_m) - floor_m;
+                let rise_k = hot_heat / hot_kg_s - now.lower_k;
+                jets::drawn_kg_s(hot_kg_s, rise_k, now.interface_m - from_m) * now.there[1]
+            } else {
+                0.0
+            };
+            // Cool gas that comes in above the interface falls through the hot layer and draws of it.
+            let fallen = if low_kg_s[taker] > 1e-6 {
+                let head_m = flow.neutral_m.unwrap_or(vent.top_m).min(vent.top_m);
+                let from_m = 0.5 * (vent.bottom_m + head_m) - floor_m;
+                let falls_k = now.upper_k - low_k[taker];
+                jets::drawn_kg_s(low_kg_s[taker], falls_k, from_m - now.interface_m) * now.there[0]
+            } else {
+                0.0
+            };
+            for (from, mass_kg_s, temperature_k) in [(1, risen, now.lower_k), (0, fallen, now.upper_k)] {
+                if mass_kg_s > 0.0 {
                     self.transfers.push(Transfer {
-                        from: Some((room, 1)),
-                        to: Some((room, 0)),
-                        mass_kg_s: drawn,
+                        from: Some((room, from)),
+                        to: Some((room, 1 - from)),
+                        mass_kg_s,
                         slopes: [0.0; VENT_WAYS],
                         rooms: [None, None],
-                        temperature_k: now.lower_k,
+                        temperature_k,
                     });
                 }
             }
@@ -568,12 +590,12 @@ impl Look {
             self.inner_slopes.clear();
         }
         for (index, room) in building.rooms.iter().enumerate() {
+            let burning = Fires { fuels: &building.fuels, fires: &self.burning[index] };
             let inner = room::inside(
                 room,
                 &self.inside[index],
                 &self.now[index],
-                &building.fuels,
-                &self.burning[index],
+                &burning,
                 &self.around[index],
                 &self.zones[index],
                 &mut self.reactions[index],
@@ -587,8 +609,7 @@ impl Look {
                     room,
                     &inside,
                     &now,
-                    &building.fuels,
-                    &self.burning[index],
+                    &burning,
                     &self.around[index],
                     &zones,
                     &mut self.reaction_slopes[index],

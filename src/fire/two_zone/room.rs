@@ -2,7 +2,7 @@
 
 use super::building::{CEILING, FLOOR, FuelData, LOWER_WALL, RoomData, SURFACES, UPPER_WALL};
 use super::combustion::{Products, flame_share, lights, products, smooth_min};
-use super::gas::{GAS_CONSTANT_J_KGK, SPECIFIC_HEAT_J_KGK, STEFAN_BOLTZMANN_W_M2K4};
+use super::gas::{GAS_CONSTANT_J_KGK, STEFAN_BOLTZMANN_W_M2K4};
 use super::plume::{self, Source};
 use super::radiation::{self, Glow, Zones};
 use super::real::Real;
@@ -41,7 +41,7 @@ pub(super) struct Derived<R> {
 }
 
 /// Mass below which a layer counts as going, as a share of the air of the room.
-const GOING: f64 = 2e-3;
+const GOING: f64 = 1e-3;
 
 impl<R: Real> Inside<R> {
     /// Temperatures, heights, shares.
@@ -88,6 +88,13 @@ pub(super) struct Burning {
     pub diameter_m: f64,
     pub images: f64,
     pub radiative: f64,
+}
+
+/// The fires of a room, and all fuels.
+#[derive(Clone, Copy, Debug)]
+pub(super) struct Fires<'a> {
+    pub fuels: &'a [FuelData],
+    pub fires: &'a [Burning],
 }
 
 /// What the room does not settle by itself.
@@ -155,8 +162,7 @@ pub(super) fn inside<R: Real>(
     room: &RoomData,
     state: &Inside<R>,
     now: &Derived<R>,
-    fuels: &[FuelData],
-    fires: &[Burning],
+    burning: &Fires<'_>,
     around: &Around,
     zones: &Zones<R>,
     reactions: &mut Vec<Reaction<R>>,
@@ -172,8 +178,8 @@ pub(super) fn inside<R: Real>(
 
     // The cool inflow fills the cool layer: the lower that is, the faster the draught.
     let draught_m_s = R::constant(around.inflow_m2_s) / now.interface_m.at_least(0.1 * room.height_m);
-    for fire in fires {
-        let fuel = &fuels[fire.fuel];
+    for fire in burning.fires {
+        let fuel = &burning.fuels[fire.fuel];
         let wanted_oxygen = fire.wanted_w / fuel.heat_per_oxygen_j_kg;
         let wanted_fuel = wanted_oxygen / fuel.oxygen_need;
         if !fire.alight || fire.wanted_w <= 0.0 {
@@ -206,16 +212,26 @@ pub(super) fn inside<R: Real>(
             .at_least(0.5 * fire.diameter_m)
             .at_most((room.height_m - fire.base_m).max(0.05))
             .at_least(0.05);
-        // What the flame draws on its height: cool gas below the interface, hot gas above.
-        let low_kg_s = plume::flow_kg_s(wanted_kw, clear_m.min(tip_m), &source) * now.there[1];
-        let all_kg_s = plume::flow_kg_s(wanted_kw, tip_m, &source);
+        // What the flame draws on its height: cool gas below the interface, hot gas above. By itself, without the
+        // draught: fire, pressure and draught would answer each other within milliseconds.
+        let still = Source { draught_m_s: zero, ..source };
+        let low_kg_s = plume::flow_kg_s(wanted_kw, clear_m.min(tip_m), &still) * now.there[1];
+        let all_kg_s = plume::flow_kg_s(wanted_kw, tip_m, &still);
         let high_kg_s = (all_kg_s - low_kg_s).at_least(0.0);
         let drawn_kg_s = low_kg_s + high_kg_s + 1e-12;
         let drawn_oxygen_kg_s = low_kg_s * lower_oxygen + high_kg_s * upper_oxygen;
         let (flame, oxygen) = if fire.oxygen_limited {
             let mixed_k = (low_kg_s * now.lower_k + high_kg_s * now.upper_k) / drawn_kg_s;
             let share = flame_share(drawn_oxygen_kg_s / drawn_kg_s, mixed_k);
-            (share.value(), smooth_min(share * wanted_oxygen, drawn_oxygen_kg_s))
+            // In a room so hot that fuel gas lights wherever it meets air there is no going out.
+            let lives = share.value().max(lights(now.upper_k.value()));
+            // The fuel meets the cool gas first; what that leaves meets the hot gas higher up.
+            let wanted = R::constant(wanted_oxygen);
+            let in_low = smooth_min(wanted, low_kg_s * lower_oxygen) * flame_share(lower_oxygen, now.lower_k);
+            let lives = lives.max(in_low.value() / wanted_oxygen);
+            let rest = (wanted - in_low).at_least(0.0);
+            let in_high = smooth_min(rest, high_kg_s * upper_oxygen) * flame_share(upper_oxygen, now.upper_k);
+            (lives, in_low + in_high)
         } else {
             (1.0, R::constant(wanted_oxygen))
         };
@@ -248,13 +264,15 @@ pub(super) fn inside<R: Real>(
     if unburned_kg.value() > 0.0 && now.upper_k.value() > 700.0 {
         const MIXES_S: f64 = 1.0;
         let lit = lights(now.upper_k);
-        for (index, fuel) in fuels.iter().enumerate() {
+        for (index, fuel) in burning.fuels.iter().enumerate() {
             let share = around.glow[0].fuel_shares[index];
             if share <= 0.0 {
                 continue;
             }
             let wants = unburned_kg * (share * fuel.oxygen_need);
-            let oxygen = smooth_min(wants, state.upper_oxygen_kg.at_least(0.0)) * lit * (1.0 / MIXES_S);
+            // What is short decides; both fall together towards nothing.
+            let has = state.upper_oxygen_kg.at_least(0.0);
+            let oxygen = wants * has / (wants + has + 1e-12) * lit * (1.0 / MIXES_S);
             let heat_w = oxygen * fuel.heat_per_oxygen_j_kg;
             inner.released_w = inner.released_w + heat_w;
             inner.heat_w[0] = inner.heat_w[0] + heat_w;
@@ -316,10 +334,4 @@ fn convection<R: Real>(room: &RoomData, state: &Inside<R>, now: &Derived<R>, inn
 #[inline]
 pub(super) fn black_w_m2<R: Real>(temperature_k: R) -> R {
     temperature_k.squared().squared() * STEFAN_BOLTZMANN_W_M2K4
-}
-
-/// Enthalpy that a flow carries, W.
-#[inline]
-pub(super) fn enthalpy_w(mass_kg_s: f64, temperature_k: f64) -> f64 {
-    mass_kg_s * SPECIFIC_HEAT_J_KGK * temperature_k
 }

@@ -3,6 +3,8 @@
 //! ROS34PW2 of Rang and Angermann: four stages, third order with any matrix (a W-method), stiffly
 //! accurate, an embedded second order for the error. No iteration: a step always ends. The
 //! coefficients are checked against their order conditions by a test.
+//!
+//! Source: [`RANG_ANGERMANN_2005`](crate::fire::sources::RANG_ANGERMANN_2005).
 
 use super::building::{Building, SURFACES};
 use super::controls::Controls;
@@ -18,8 +20,8 @@ mod coefficients {
     pub const STAGES: [[f64; 3]; 4] = [
         [0.0, 0.0, 0.0],
         [2.0, 0.0, 0.0],
-        [1.419_217_317_455_765, -0.259_232_211_672_969_78, 0.0],
-        [4.184_760_482_319_161, -0.285_192_017_355_495_98, 2.294_280_360_279_042],
+        [1.419_217_317_455_765, -0.259_232_211_672_969_8, 0.0],
+        [4.184_760_482_319_161, -0.285_192_017_355_496, 2.294_280_360_279_042],
     ];
     /// What earlier stages add to the right side of a stage, over the step.
     pub const RIGHTS: [[f64; 3]; 4] = [
@@ -225,11 +227,11 @@ fn measure(building: &Building, from: &[f64], to: &[f64], error: &[f64], toleran
             }
         }
         let of_room = (sum / f64::from(count)).sqrt();
-        if !(of_room <= worst.error) {
+        if of_room > worst.error {
             worst = Tried { error: of_room, room: index };
         }
         // A layer of less than nothing is no solution.
-        let least = -1e-5 * room.air_kg;
+        let least = -1e-3 * room.air_kg;
         let bad = to[at + 2] < least
             || to[at + 3] < least
             || to[at + 1] < -1e-2 * volume
@@ -247,8 +249,10 @@ mod tests {
     use super::coefficients::{ERROR, GAMMA, RIGHTS, STAGES, TIMES};
     use approx::assert_abs_diff_eq;
 
+    type Square = [[f64; 4]; 4];
+
     /// The method in its usual form: sums `a`, matrix `g` with the implicit part, weights `b` and embedded `e`.
-    fn usual_form() -> ([[f64; 4]; 4], [[f64; 4]; 4], [f64; 4], [f64; 4]) {
+    fn usual_form() -> (Square, Square, [f64; 4], [f64; 4]) {
         // c = 1/γ - G⁻¹, stages = a G⁻¹: so G⁻¹ from c, then G by forward substitution.
         let mut inverse = [[0.0; 4]; 4];
         for row in 0..4 {

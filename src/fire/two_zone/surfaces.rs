@@ -6,6 +6,8 @@
 //! a fine grid by projection on the answers to steady and to slowly fading heating at a handful of
 //! rates (a rational Krylov space, after Druskin and Knizhnerman's Gaussian spectral rules), so
 //! six or seven nodes do what sixty of a grid do, and thin, thick and layered sheets alike.
+//!
+//! Source: [`DRUSKIN_KNIZHNERMAN_2000`](crate::fire::sources::DRUSKIN_KNIZHNERMAN_2000).
 
 use super::network::Slab;
 
