@@ -8,7 +8,7 @@
 
 use super::building::{Building, SURFACES, ledger};
 use super::gas::{GAMMA, OXYGEN, PRODUCTS, SPECIES_MAX, SPECIFIC_HEAT_J_KGK};
-use super::rates::{CORE, Look, Model, Transfer, held_kg, place, remnant_1_s};
+use super::rates::{CORE, JetBurn, Look, Model, Transfer, held_kg, place, remnant_1_s};
 use super::room::Inner;
 
 type Block = [[f64; CORE]; CORE];
@@ -62,6 +62,7 @@ pub(super) struct Matrix {
     pair_factors: Vec<Pair>,
     ways: Vec<Way>,
     lifts: Vec<Lift>,
+    jets: Vec<JetBurn>,
     faces: Vec<Faces>,
     /// Factored chains: one over the reduced diagonal of each node.
     chain_inverse: Vec<f64>,
@@ -176,6 +177,7 @@ impl Matrix {
             pair_factors: vec![[[0.0; 2]; 2]; len],
             ways: Vec::new(),
             lifts: Vec::new(),
+            jets: Vec::new(),
             faces: Vec::with_capacity(rooms),
             chain_inverse: vec![0.0; model.building.layout.len],
             d: 0.0,
@@ -232,6 +234,11 @@ impl Matrix {
         }
         for (room, inner) in look.inner_slopes.iter().enumerate() {
             self.add_inner(building, look, room, inner);
+        }
+        self.jets.clear();
+        self.jets.extend_from_slice(&look.jet_burns);
+        for index in 0..self.jets.len() {
+            self.add_jet(building, index);
         }
         self.turn_to_rates(building, look, state, rates);
     }
@@ -341,6 +348,23 @@ impl Matrix {
                 block[2][column] += supply;
                 block[4][column] -= oxygen;
                 block[6][column] += supply - oxygen * per_oxygen;
+            }
+        }
+    }
+
+    fn add_jet(&mut self, building: &Building, index: usize) {
+        let jet = self.jets[index];
+        let heat = building.fuels[jet.fuel].heat_per_oxygen_j_kg;
+        let per_oxygen = 1.0 / jet.products.oxygen();
+        for end in 0..2 {
+            let Some(column) = jet.rooms[end] else { continue };
+            let at = self.graph.at(jet.room, column);
+            let block = &mut self.blocks[at];
+            for (way, slope) in jet.slopes[end * 4..end * 4 + 4].iter().enumerate() {
+                block[0][way] += heat * slope;
+                block[1][way] += heat * slope;
+                block[4][way] -= slope;
+                block[6][way] -= slope * per_oxygen;
             }
         }
     }
@@ -678,6 +702,24 @@ impl Matrix {
                     supply * SPECIFIC_HEAT_J_KGK * building.ambient.indoor_temperature_k;
                 self.carried[base + ledger::SPECIES_OUT + building.species + reaction.fuel] += supply;
             }
+        }
+        for jet in &self.jets {
+            let mut oxygen = 0.0;
+            for end in 0..2 {
+                if let Some(room) = jet.rooms[end] {
+                    for direction in 0..4 {
+                        oxygen += jet.slopes[end * 4 + direction] * self.core[room][direction];
+                    }
+                }
+            }
+            let burnt = oxygen / jet.products.oxygen();
+            let upper = layout.species_of(jet.room, 0);
+            for species in 0..PRODUCTS {
+                self.carried[upper + species] += burnt * jet.products.made[species];
+            }
+            self.carried[upper + PRODUCTS + jet.fuel] -= burnt;
+            self.carried[layout.ledger + ledger::RELEASED] +=
+                oxygen * building.fuels[jet.fuel].heat_per_oxygen_j_kg;
         }
         for (room, pair) in self.pair.iter_mut().enumerate() {
             for (layer, values) in pair.iter_mut().enumerate() {

@@ -1,6 +1,7 @@
 //! Rates of change of the whole state, and how they change with it.
 
 use super::building::{Building, RoomData, SURFACES, Vent, ledger};
+use super::combustion::Products;
 use super::controls::Controls;
 use super::gas::{
     CARBON_DIOXIDE, FUELS_MAX, GAMMA, GAS_CONSTANT_J_KGK, OXYGEN, PRODUCTS, SOOT, SPECIES_MAX,
@@ -41,6 +42,21 @@ pub(super) struct Transfer {
     pub rooms: [Option<usize>; 2],
     /// Temperature of what is drawn, K.
     pub temperature_k: f64,
+}
+
+/// Fuel gas that burns as it comes hot into a room.
+#[derive(Clone, Copy, Debug)]
+pub(super) struct JetBurn {
+    /// Room it comes into.
+    pub room: usize,
+    pub fuel: usize,
+    pub oxygen_kg_s: f64,
+    /// Slopes along the vent's directions: it goes with the flow, the flow with the pressure, and the pressure with
+    /// what burns; without them the three would chase each other.
+    pub slopes: [f64; VENT_WAYS],
+    /// Whose directions they are.
+    pub rooms: [Option<usize>; 2],
+    pub products: Products,
 }
 
 /// What a fire does, as the last look at it found.
@@ -85,8 +101,8 @@ pub(super) struct Look {
     burning: Vec<Vec<Burning>>,
     pub fires: Vec<FireRates>,
     pub openings: Vec<OpeningRates>,
-    /// Burning of fuel gas beyond openings: room, fuel, oxygen, kg/s.
-    jet_burns: Vec<(usize, usize, f64)>,
+    /// Burning of fuel gas beyond openings.
+    pub jet_burns: Vec<JetBurn>,
     jet_heat_w: Vec<f64>,
     radiated_out_w: f64,
     mass: Vec<[f64; 2]>,
@@ -223,18 +239,24 @@ impl Look {
             return;
         }
         if slopes {
-            let flow = self.flow::<Dual<VENT_WAYS>>(model, vent, width_m, share);
-            self.pass(model, vent, &flow, share < CRACKS_BELOW);
+            let (flow, flanks) = self.flow::<Dual<VENT_WAYS>>(model, vent, width_m, share);
+            self.pass(model, vent, &flow, &flanks, share < CRACKS_BELOW);
         } else {
-            let flow = self.flow::<f64>(model, vent, width_m, share);
-            self.pass(model, vent, &flow, share < CRACKS_BELOW);
+            let (flow, flanks) = self.flow::<f64>(model, vent, width_m, share);
+            self.pass(model, vent, &flow, &flanks, share < CRACKS_BELOW);
         }
         if vent.lie == Lie::Vertical && share > 0.0 {
             self.shine(model, vent, vent.area_m2 * share);
         }
     }
 
-    fn flow<R: Real>(&self, model: Model<'_>, vent: &Vent, width_m: f64, share: f64) -> Flow<R> {
+    fn flow<R: Real>(
+        &self,
+        model: Model<'_>,
+        vent: &Vent,
+        width_m: f64,
+        share: f64,
+    ) -> (Flow<R>, [Flank<R>; 2]) {
         let building = model.building;
         let outside_kg_m3 = building.outside_density_kg_m3;
         let side = |end: usize| match vent.rooms[end] {
@@ -246,7 +268,7 @@ impl Look {
         let wind = |end: usize| if vent.rooms[end].is_none() { vent.wind_pa } else { 0.0 };
         let wind_pa = [wind(0), wind(1)];
         let sides = [&flanks[0], &flanks[1]];
-        match vent.lie {
+        let flow = match vent.lie {
             Lie::Vertical => {
                 vents::through_wall(sides, vent.bottom_m, vent.top_m, width_m, wind_pa, outside_kg_m3)
             }
@@ -259,16 +281,29 @@ impl Look {
                 wind_pa,
                 outside_kg_m3,
             ),
-        }
+        };
+        (flow, flanks)
     }
 
     /// Sends the gas of a flow where it belongs: hot gas to the hot layer beyond, cool gas to the cool one.
-    fn pass<R: Real>(&mut self, model: Model<'_>, vent: &Vent, flow: &Flow<R>, cracks: bool) {
-        let mut low_kg_s = [0.0; 2];
+    fn pass<R: Real>(
+        &mut self,
+        model: Model<'_>,
+        vent: &Vent,
+        flow: &Flow<R>,
+        flanks: &[Flank<R>; 2],
+        cracks: bool,
+    ) {
+        let zero = R::constant(0.0);
+        let kelvin = [0, 1].map(|end: usize| {
+            let absolute = flanks[end].pressure_pa + model.building.ambient.pressure_pa;
+            move |density: R| absolute / density * (1.0 / GAS_CONSTANT_J_KGK)
+        });
+        let mut low_kg_s = [zero; 2];
         let mut low_k = [0.0; 2];
         for giver in 0..2 {
             let taker = 1 - giver;
-            let mut hot_kg_s = 0.0;
+            let mut hot_kg_s = zero;
             let mut hot_heat = 0.0;
             for layer in 0..2 {
                 let mass = flow.from[giver][layer];
@@ -282,78 +317,85 @@ impl Look {
                 };
                 let from = vent.rooms[giver].map(|room| (room, layer));
                 let slopes: [f64; VENT_WAYS] = mass.slopes();
-                let mut send = |to: Place, share: f64| {
-                    if share > 0.0 {
+                let mut send = |to: Place, mass: R| {
+                    if mass.value() > 0.0 {
                         self.transfers.push(Transfer {
                             from,
                             to,
-                            mass_kg_s: mass.value() * share,
-                            slopes: slopes.map(|slope| slope * share),
+                            mass_kg_s: mass.value(),
+                            slopes: mass.slopes(),
                             rooms: vent.rooms,
                             temperature_k,
                         });
                     }
                 };
                 match vent.rooms[taker] {
-                    None => send(None, 1.0),
+                    None => send(None, mass),
                     Some(room) => {
                         let upper = if cracks {
                             // A jet as thin as a crack draws a hundred times its own flow within a metre:
                             // what it brings is spread through the room.
                             let inside = &self.inside[room];
-                            inside.upper_kg.max(0.0)
-                                / (inside.upper_kg.max(0.0) + inside.lower_kg.max(0.0)).max(1e-9)
+                            let hot_kg = inside.upper_kg.max(0.0);
+                            R::constant(hot_kg / (hot_kg + inside.lower_kg.max(0.0)).max(1e-9))
                         } else {
-                            share_to_upper(&self.now[room], temperature_k)
+                            let from = &flanks[giver];
+                            let density = if layer == 0 { from.upper_kg_m3 } else { from.lower_kg_m3 };
+                            let arrives = kelvin[giver](density);
+                            let (hot, cool) = (&flanks[taker].upper_kg_m3, &flanks[taker].lower_kg_m3);
+                            share_to_upper(kelvin[taker](*hot), kelvin[taker](*cool), arrives)
                         };
-                        send(Some((room, 0)), upper);
-                        send(Some((room, 1)), 1.0 - upper);
-                        low_kg_s[taker] += mass.value() * (1.0 - upper);
+                        let to_upper = mass * upper;
+                        let to_lower = mass - to_upper;
+                        send(Some((room, 0)), to_upper);
+                        send(Some((room, 1)), to_lower);
+                        low_kg_s[taker] = low_kg_s[taker] + to_lower;
                         low_k[taker] = temperature_k;
-                        hot_kg_s += mass.value() * upper;
-                        hot_heat += mass.value() * upper * temperature_k;
+                        hot_kg_s = hot_kg_s + to_upper;
+                        hot_heat += to_upper.value() * temperature_k;
                     }
                 }
                 if layer == 0 || self.now_is_hot(vent.rooms[giver], layer) {
-                    self.jet(model, vent, giver, layer, mass.value(), temperature_k);
+                    self.jet(model, vent, giver, layer, mass.value(), &slopes);
                 }
             }
             let Some(room) = vent.rooms[taker] else { continue };
-            let now = &self.now[room];
-            let floor_m = model.building.rooms[room].floor_elevation_m;
-            let turn_m = flow.neutral_m.unwrap_or(vent.bottom_m).max(vent.bottom_m);
+            let beyond = &flanks[taker];
+            let kelvin = &kelvin[taker];
             // Hot gas that comes from another room rises to the layer beyond and draws cool gas along.
-            let risen = if vent.rooms[giver].is_some() && hot_kg_s > 1e-6 {
-                let from_m = 0.5 * (turn_m + vent.top_m) - floor_m;
-                let rise_k = hot_heat / hot_kg_s - now.lower_k;
-                jets::drawn_kg_s(hot_kg_s, rise_k, now.interface_m - from_m) * now.there[1]
+            let risen = if vent.rooms[giver].is_some() && hot_kg_s.value() > 1e-6 {
+                let foot_m = flow.neutral_m.unwrap_or(vent.bottom_m).max(vent.bottom_m);
+                let climbs_m = beyond.interface_m - 0.5 * (foot_m + vent.top_m);
+                let warmer_k = -kelvin(beyond.lower_kg_m3) + hot_heat / hot_kg_s.value();
+                jets::drawn_kg_s(hot_kg_s, warmer_k, climbs_m) * beyond.lower_gives
             } else {
-                0.0
+                zero
             };
             // Cool gas that comes in above the interface falls through the hot layer and draws of it.
-            let fallen = if low_kg_s[taker] > 1e-6 {
+            let fallen = if low_kg_s[taker].value() > 1e-6 {
                 let head_m = flow.neutral_m.unwrap_or(vent.top_m).min(vent.top_m);
-                let from_m = 0.5 * (vent.bottom_m + head_m) - floor_m;
-                let falls_k = now.upper_k - low_k[taker];
-                jets::drawn_kg_s(low_kg_s[taker], falls_k, from_m - now.interface_m) * now.there[0]
+                let falls_m = -beyond.interface_m + 0.5 * (vent.bottom_m + head_m);
+                let cooler_k = kelvin(beyond.upper_kg_m3) - low_k[taker];
+                jets::drawn_kg_s(low_kg_s[taker], cooler_k, falls_m) * beyond.upper_gives
             } else {
-                0.0
+                zero
             };
-            for (from, mass_kg_s, temperature_k) in [(1, risen, now.lower_k), (0, fallen, now.upper_k)] {
-                if mass_kg_s > 0.0 {
+            let now = &self.now[room];
+            for (from, mass, temperature_k) in [(1, risen, now.lower_k), (0, fallen, now.upper_k)] {
+                if mass.value() > 0.0 {
                     self.transfers.push(Transfer {
                         from: Some((room, from)),
                         to: Some((room, 1 - from)),
-                        mass_kg_s,
-                        slopes: [0.0; VENT_WAYS],
-                        rooms: [None, None],
+                        mass_kg_s: mass.value(),
+                        slopes: mass.slopes(),
+                        rooms: vent.rooms,
                         temperature_k,
                     });
                 }
             }
         }
         if vent.opening.is_some() && vent.lie == Lie::Vertical {
-            self.draughts(model, vent, low_kg_s, low_k);
+            self.draughts(model, vent, low_kg_s.map(Real::value), low_k);
         }
         if let Some(index) = vent.opening {
             let out = flow.from[0][0].value() + flow.from[0][1].value();
@@ -378,9 +420,11 @@ impl Look {
         giver: usize,
         layer: usize,
         mass_kg_s: f64,
-        temperature_k: f64,
+        slopes: &[f64; VENT_WAYS],
     ) {
         let Some(room) = vent.rooms[giver] else { return };
+        let now = &self.now[room];
+        let temperature_k = if layer == 0 { now.upper_k } else { now.lower_k };
         if temperature_k <= 700.0 || mass_kg_s <= 0.0 {
             return;
         }
@@ -402,7 +446,15 @@ impl Look {
                     let there = mass_kg_s * oxygen * self.now[beyond].there[1];
                     let burns = super::combustion::smooth_min(wants, there);
                     if burns > 0.0 {
-                        self.jet_burns.push((beyond, index, burns));
+                        let per_mass = burns / mass_kg_s;
+                        self.jet_burns.push(JetBurn {
+                            room: beyond,
+                            fuel: index,
+                            oxygen_kg_s: burns,
+                            slopes: slopes.map(|slope| slope * per_mass),
+                            rooms: vent.rooms,
+                            products: super::combustion::products(&fuel.fuel, 0.5, self.now[beyond].upper_k),
+                        });
                         self.jet_heat_w[beyond] += burns * fuel.heat_per_oxygen_j_kg;
                         self.extra_heat_w[beyond][0] += burns * fuel.heat_per_oxygen_j_kg;
                     }
@@ -515,7 +567,11 @@ impl Look {
                         // A jet from the wall mixes into the layer at its height; warmer gas rises.
                         let band_m = 0.05 * building.rooms[room].height_m;
                         let above = fan.outlet_height_m - self.now[room].interface_m;
-                        above.smooth_step(-band_m, band_m).max(share_to_upper(&self.now[room], temperature_k))
+                        above.smooth_step(-band_m, band_m).max(share_to_upper(
+                            self.now[room].upper_k,
+                            self.now[room].lower_k,
+                            temperature_k,
+                        ))
                     }
                     None => 0.0,
                 };
@@ -801,11 +857,11 @@ impl Look {
                 out[layout.clocks + burning.fire] = fire.clock_rate;
             }
         }
-        for &(room, index, oxygen) in &self.jet_burns {
-            let fuel = &building.fuels[index];
-            let products = super::combustion::products(&fuel.fuel, 0.5, self.now[room].upper_k);
+        for jet in &self.jet_burns {
+            let fuel = &building.fuels[jet.fuel];
+            let (index, oxygen, products) = (jet.fuel, jet.oxygen_kg_s, &jet.products);
             let burnt = oxygen / products.oxygen();
-            let upper = layout.species_of(room, 0);
+            let upper = layout.species_of(jet.room, 0);
             for species in 0..PRODUCTS {
                 out[upper + species] += burnt * products.made[species];
             }
@@ -853,9 +909,9 @@ pub(super) fn held_kg(building: &Building, state: &[f64], room: usize, layer: us
 
 /// Share of arriving gas that goes to the hot layer, by its temperature between those of the layers.
 #[inline]
-fn share_to_upper(now: &Derived<f64>, temperature_k: f64) -> f64 {
-    let spread = (now.upper_k - now.lower_k).max(5.0);
-    ((temperature_k - now.lower_k) / spread).smooth_step(0.0, 1.0)
+fn share_to_upper<R: Real>(upper_k: R, lower_k: R, arrives_k: R) -> R {
+    let spread = (upper_k - lower_k).at_least(5.0);
+    ((arrives_k - lower_k) / spread).smooth_step(0.0, 1.0)
 }
 
 /// The variables of a room from the state.
