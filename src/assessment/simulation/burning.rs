@@ -8,10 +8,7 @@ use crate::domain::properties::FuelProperties;
 use crate::domain::room::Place;
 use crate::domain::simulation::{self as asked, HeatRelease, Ignition, Supply};
 use crate::fire::design_fire::{DECAY_FROM_SHARE, DesignFire};
-use crate::fire::two_zone as engine;
-
-/// Most fuels that the engine keeps apart in one run.
-const MAX_FUELS: usize = 4;
+use crate::fire::two_zone::{self as engine, FUELS_MAX};
 
 impl Making<'_> {
     pub(super) fn fire(
@@ -35,12 +32,12 @@ impl Making<'_> {
         self.fuel_notes(burns, at);
         let index = match fuels.iter().position(|fuel| *fuel == made) {
             Some(known) => known,
-            None if fuels.len() < MAX_FUELS => {
+            None if fuels.len() < FUELS_MAX => {
                 fuels.push(made);
                 fuels.len() - 1
             }
             None => {
-                let detail = format!("a run burns at most {MAX_FUELS} different fuels");
+                let detail = format!("a run burns at most {FUELS_MAX} different fuels");
                 self.fault(at.member("fuel"), "too_many_fuels", detail);
                 return None;
             }

@@ -22,7 +22,7 @@ pub(super) const SOOT: usize = 5;
 /// Species that are not fuels.
 pub(super) const PRODUCTS: usize = 6;
 /// Most fuels one run may burn.
-pub(super) const FUELS_MAX: usize = 4;
+pub const FUELS_MAX: usize = 4;
 /// Most species of a layer.
 pub(super) const SPECIES_MAX: usize = PRODUCTS + FUELS_MAX;
 

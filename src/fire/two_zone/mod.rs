@@ -29,6 +29,7 @@ mod surfaces;
 mod vents;
 
 pub use drive::run;
+pub use gas::FUELS_MAX;
 pub use network::{
     Ambient, Detector, Element, Fan, Fire, Fuel, GivesWay, HeatRelease, Ignition, Lie, Linings, Move,
     Network, Opening, Position, Room, Side, Slab, Sprinkler, Supply, Zoning,
