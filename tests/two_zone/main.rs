@@ -10,4 +10,5 @@ mod limits;
 mod support;
 mod symmetry;
 mod threads;
+mod variants;
 mod wide;
