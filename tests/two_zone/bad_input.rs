@@ -3,19 +3,19 @@
 use std::ops::ControlFlow;
 
 use sootline::fire::two_zone::{
-    Ambient, Detector, Element, Ended, Failed, FailureReason, Fan, HeatRelease, Move, Network, Note, Opening, Plan,
-    Sample, run,
+    Ambient, Detector, Element, Ended, Failed, FailureReason, Fan, HeatRelease, Move, Network, Note, Opening,
+    Plan, Sample, run,
 };
 
 use super::cases;
 use super::support::{
-    OUTSIDE, bare_room, board, board_room, constant, grown, hole, is_finite, lined, one_room, room, told, try_run, wood,
+    OUTSIDE, bare_room, board, board_room, constant, grown, hole, is_finite, lined, one_room, room, told,
+    try_run, wood,
 };
 
 /// A room with a burning item and a door.
 fn plain() -> Network {
-    let mut network =
-        one_room(board_room(4.0, 3.0, 2.5), vec![hole([room(0), OUTSIDE], 0.8, 2.0)], 0.0);
+    let mut network = one_room(board_room(4.0, 3.0, 2.5), vec![hole([room(0), OUTSIDE], 0.8, 2.0)], 0.0);
     network.fuels = vec![wood()];
     network.fires = vec![cases::a().network.fires[0].clone()];
     network

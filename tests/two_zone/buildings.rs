@@ -5,7 +5,8 @@ use proptest::collection::vec;
 use proptest::prelude::*;
 use sootline::fire::DesignFire;
 use sootline::fire::two_zone::{
-    Fan, Fire, Fuel, HeatRelease, Ignition, Linings, Move, Network, Opening, Position, Room, Slab, Supply, Zoning,
+    Fan, Fire, Fuel, HeatRelease, Ignition, Linings, Move, Network, Opening, Position, Room, Slab, Supply,
+    Zoning,
 };
 
 use super::support::{OUTSIDE, air, bare_room, constant, hatch, hole, lined, room, told, wood};
@@ -62,36 +63,55 @@ fn any_fire() -> impl Strategy<Value = Fire> {
     let supply = prop_oneof![Just(Supply::Fed), Just(Supply::HeatFed { without_flame: 0.2, fades_s: 60.0 })];
     let ignites = prop_oneof![3 => (0.0..100.0_f64).prop_map(Ignition::At), 1 => Just(Ignition::Flux(15.0))];
     let position = prop_oneof![Just(Position::Centre), Just(Position::Wall), Just(Position::Corner)];
-    (curve, supply, ignites, position, 0.0..1.0_f64, 0.2..1.5_f64, 0.0..0.5_f64, any::<prop::sample::Index>(), 0..2_usize)
-        .prop_map(|(heat_release, supply, ignites, position, base_height_m, diameter_m, radiative, at, fuel)| Fire {
-            // Any room; made to fit when the rooms are known.
-            room: at.index(1000),
-            fuel,
-            base_height_m,
-            diameter_m,
-            position,
-            radiative_fraction: radiative,
-            oxygen_limited: true,
-            supply,
-            ignites,
-            ..told(heat_release)
-        })
+    (
+        curve,
+        supply,
+        ignites,
+        position,
+        0.0..1.0_f64,
+        0.2..1.5_f64,
+        0.0..0.5_f64,
+        any::<prop::sample::Index>(),
+        0..2_usize,
+    )
+        .prop_map(
+            |(heat_release, supply, ignites, position, base_height_m, diameter_m, radiative, at, fuel)| {
+                Fire {
+                    // Any room; made to fit when the rooms are known.
+                    room: at.index(1000),
+                    fuel,
+                    base_height_m,
+                    diameter_m,
+                    position,
+                    radiative_fraction: radiative,
+                    oxygen_limited: true,
+                    supply,
+                    ignites,
+                    ..told(heat_release)
+                }
+            },
+        )
 }
 
 /// A door or window by what it is told: its wall is found when the rooms are known.
 fn any_hole() -> impl Strategy<Value = Opening> {
-    (0.2..2.5_f64, 0.3..2.0_f64, 0.0..1.0_f64, 0..3_usize).prop_map(|(width_m, height_m, sill_m, stands)| Opening {
-        sill_m: if height_m > 1.2 { 0.0 } else { sill_m },
-        open_fraction: [0.0, 0.4, 1.0][stands],
-        leakage_area_m2: 0.01,
-        ..hole([OUTSIDE, OUTSIDE], width_m, height_m)
+    (0.2..2.5_f64, 0.3..2.0_f64, 0.0..1.0_f64, 0..3_usize).prop_map(|(width_m, height_m, sill_m, stands)| {
+        Opening {
+            sill_m: if height_m > 1.2 { 0.0 } else { sill_m },
+            open_fraction: [0.0, 0.4, 1.0][stands],
+            leakage_area_m2: 0.01,
+            ..hole([OUTSIDE, OUTSIDE], width_m, height_m)
+        }
     })
 }
 
 /// A building.
 pub fn any_building() -> impl Strategy<Value = Network> {
     let floors = vec(vec(any_room(), 1..4), 1..4);
-    let fans = vec((any::<prop::sample::Index>(), any::<bool>(), 0.02..0.8_f64, 0.2..2.0_f64, 20.0..400.0_f64), 0..3);
+    let fans = vec(
+        (any::<prop::sample::Index>(), any::<bool>(), 0.02..0.8_f64, 0.2..2.0_f64, 20.0..400.0_f64),
+        0..3,
+    );
     (
         floors,
         vec(any_hole(), 24),

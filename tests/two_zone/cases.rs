@@ -1,9 +1,7 @@
 //! The reference cases: one room with its door open (A) or shut at first (B), rooms in a row (Cn), rooms on a
 //! corridor (Dn), and a grid of rooms with loops (for growth).
 
-use sootline::fire::two_zone::{
-    Fire, Move, Network, Opening, Plan, Room, Side, Supply,
-};
+use sootline::fire::two_zone::{Fire, Move, Network, Opening, Plan, Room, Side, Supply};
 
 use super::support::{OUTSIDE, board_room, grown, hole, room, told, wood};
 
@@ -24,10 +22,7 @@ impl Case {
 /// Leakage of a room: a slot over its whole height, 0.001 of its walls and floor.
 fn slot(index: usize, of: &Room) -> Opening {
     let area_m2 = 0.001 * (2.0 * (of.length_m + of.width_m) * of.height_m + of.length_m * of.width_m);
-    Opening {
-        discharge_coefficient: 0.6,
-        ..hole([room(index), OUTSIDE], area_m2 / of.height_m, of.height_m)
-    }
+    Opening { discharge_coefficient: 0.6, ..hole([room(index), OUTSIDE], area_m2 / of.height_m, of.height_m) }
 }
 
 /// 0.0469 kW/s² to 1 MW at the middle of the floor of the first room.
@@ -43,8 +38,7 @@ fn fire() -> Fire {
 
 fn case(name: String, rooms: Vec<Room>, mut openings: Vec<Opening>, duration_s: f64) -> Case {
     openings.extend(rooms.iter().enumerate().map(|(index, of)| slot(index, of)));
-    let network =
-        Network { rooms, openings, fuels: vec![wood()], fires: vec![fire()], ..Network::default() };
+    let network = Network { rooms, openings, fuels: vec![wood()], fires: vec![fire()], ..Network::default() };
     Case { name, network, duration_s }
 }
 

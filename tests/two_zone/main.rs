@@ -6,6 +6,8 @@ mod bad_input;
 mod balances;
 mod buildings;
 mod cases;
+mod claims;
+mod house;
 mod limits;
 mod support;
 mod symmetry;

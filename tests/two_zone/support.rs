@@ -4,8 +4,8 @@ use std::ops::ControlFlow;
 
 use sootline::fire::DesignFire;
 use sootline::fire::two_zone::{
-    Ambient, Ended, Failed, Fire, Fuel, GivesWay, HeatRelease, Ignition, Lie, Linings, Network, Opening, Plan,
-    Position, Room, Sample, Side, Slab, Supply, Zoning, run,
+    Ambient, Ended, Failed, Fire, Fuel, GivesWay, HeatRelease, Ignition, Lie, Linings, Network, Opening,
+    Plan, Position, Room, Sample, Side, Slab, Supply, Zoning, run,
 };
 
 /// Gas constant of air and its specific heat at constant pressure for a ratio of heats of 1.4, J/(kg K):

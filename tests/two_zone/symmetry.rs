@@ -20,7 +20,10 @@ fn renumbered(network: &Network, to: &[usize]) -> Network {
         .openings
         .iter()
         .rev()
-        .map(|o| sootline::fire::two_zone::Opening { between: [side(o.between[1]), side(o.between[0])], ..o.clone() })
+        .map(|o| sootline::fire::two_zone::Opening {
+            between: [side(o.between[1]), side(o.between[0])],
+            ..o.clone()
+        })
         .collect();
     let last = openings.len() - 1;
     let mut other = Network { rooms, openings, ..network.clone() };

@@ -44,10 +44,7 @@ pub fn variant(number: u64) -> Case {
         specific_heat_j_kgk: 900.0,
     };
     let room = &mut case.network.rooms[0];
-    *room = Room {
-        linings: lined(vec![slab]),
-        ..bare_room(length_m, width_m, height_m)
-    };
+    *room = Room { linings: lined(vec![slab]), ..bare_room(length_m, width_m, height_m) };
     let leaks_m2 = chance.scale(1e-4, 1e-2) * (2.0 * (length_m + width_m) * height_m + length_m * width_m);
     let slot = &mut case.network.openings[1];
     slot.height_m = height_m;

@@ -13,6 +13,8 @@ mod gas;
 mod jets;
 mod matrix;
 mod network;
+#[cfg(test)]
+mod order;
 mod outcome;
 mod plume;
 mod radiation;

@@ -20,7 +20,11 @@ use clock::{cpu_time, median_ms};
 
 fn error_k(samples: &[Sample], exact: &[Sample]) -> f64 {
     let apart = |(a, b): (&Sample, &Sample)| {
-        a.rooms.iter().zip(&b.rooms).map(|(x, y)| (x.upper.temperature_k - y.upper.temperature_k).abs()).fold(0.0, f64::max)
+        a.rooms
+            .iter()
+            .zip(&b.rooms)
+            .map(|(x, y)| (x.upper.temperature_k - y.upper.temperature_k).abs())
+            .fold(0.0, f64::max)
     };
     samples.iter().zip(exact).map(apart).fold(0.0, f64::max)
 }

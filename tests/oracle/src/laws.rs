@@ -4,8 +4,8 @@ use std::cell::{Cell, RefCell};
 use std::time::{Duration, Instant};
 
 use diffsol::{
-    ConstantOp, Matrix, NonLinearOp, NonLinearOpJacobian, OdeEquations, OdeEquationsRef, Op,
-    UnitCallable, Vector,
+    ConstantOp, Matrix, NonLinearOp, NonLinearOpJacobian, OdeEquations, OdeEquationsRef, Op, UnitCallable,
+    Vector,
 };
 
 use diffsol::matrix::sparsity::MatrixSparsity;

@@ -5,8 +5,8 @@ use std::time::Duration;
 use diffsol::matrix::MatrixRef;
 use diffsol::vector::VectorRef;
 use diffsol::{
-    DefaultDenseMatrix, FaerSparseLU, FaerSparseMat, LinearSolver, Matrix, NalgebraLU, NalgebraMat, OdeBuilder, OdeSolverMethod,
-    OdeSolverStopReason, Vector,
+    DefaultDenseMatrix, FaerSparseLU, FaerSparseMat, LinearSolver, Matrix, NalgebraLU, NalgebraMat,
+    OdeBuilder, OdeSolverMethod, OdeSolverStopReason, Vector,
 };
 
 use crate::cases::Case;
@@ -39,7 +39,9 @@ pub struct Second {
 pub fn follow(case: &Case, events: &[Event], tolerance: f64, algebra: Algebra, between: bool) -> Second {
     match algebra {
         Algebra::Dense => follow_by::<NalgebraMat<f64>, NalgebraLU<f64>>(case, events, tolerance, between),
-        Algebra::Sparse => follow_by::<FaerSparseMat<f64>, FaerSparseLU<f64>>(case, events, tolerance, between),
+        Algebra::Sparse => {
+            follow_by::<FaerSparseMat<f64>, FaerSparseLU<f64>>(case, events, tolerance, between)
+        }
     }
 }
 
@@ -87,9 +89,14 @@ where
         for event in events.iter().filter(|event| event.at_s <= from_s) {
             one.happen(event, &first);
         }
-        let (end, steps, slopes_time) = run_stretch::<M, L>(&mut one, &structure, &state, &stretch, &mut || {
-            samples.next_if(|at| *at < to_s)
-        }, &mut read);
+        let (end, steps, slopes_time) = run_stretch::<M, L>(
+            &mut one,
+            &structure,
+            &state,
+            &stretch,
+            &mut || samples.next_if(|at| *at < to_s),
+            &mut read,
+        );
         for (at_s, at) in read {
             second.samples.push(right.sample(at_s, &at));
         }
