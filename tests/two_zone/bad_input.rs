@@ -3,8 +3,8 @@
 use std::ops::ControlFlow;
 
 use sootline::fire::two_zone::{
-    Ambient, Detector, Element, Ended, Failed, FailureReason, Fan, HeatRelease, Move, Network, Note, Opening,
-    Plan, Sample, run,
+    Ambient, Detector, Element, Ended, Failed, FailureReason, Fan, HeatRelease, Move, Network, Note, Plan,
+    Sample, run,
 };
 
 use super::cases;

@@ -49,7 +49,7 @@ fn adds_up(network: &Network) -> Result<(), TestCaseError> {
         ("energy", balance.energy_error_relative),
         ("elements", balance.element_error_relative),
     ] {
-        if !(error <= 1e-8) {
+        if error.is_nan() || error > 1e-8 {
             return Err(TestCaseError::fail(format!("{what} off by {error:e}")));
         }
     }

@@ -112,35 +112,26 @@ pub fn any_building() -> impl Strategy<Value = Network> {
         (any::<prop::sample::Index>(), any::<bool>(), 0.02..0.8_f64, 0.2..2.0_f64, 20.0..400.0_f64),
         0..3,
     );
-    (
-        floors,
-        vec(any_hole(), 24),
-        vec(0.3..1.3_f64, 3),
-        vec(any_fire(), 1..4),
-        [any_fuel(), any_fuel()],
-        fans,
-        vec((any::<prop::sample::Index>(), 5.0..200.0_f64, 0..2_usize), 0..4),
-        (263.0..308.0_f64, 0.0..8.0_f64),
+    let fires = (vec(any_fire(), 1..4), [any_fuel(), any_fuel()]);
+    let moves = vec((any::<prop::sample::Index>(), 5.0..200.0_f64, 0..2_usize), 0..4);
+    let outside = (263.0..308.0_f64, 0.0..8.0_f64);
+    (floors, vec(any_hole(), 24), vec(0.3..1.3_f64, 3), fires, fans, moves, outside).prop_map(
+        |(floors, holes, hatches, (fires, fuels), fans, moves, (outside_k, wind_m_s))| {
+            let mut network = rooms_and_openings(floors, holes, &hatches);
+            network.fuels = fuels.to_vec();
+            network.ambient = air(293.0);
+            network.ambient.temperature_k = outside_k;
+            network.ambient.wind_m_s = wind_m_s;
+            burn_and_blow(&mut network, fires, &fans, &moves);
+            network
+        },
     )
-        .prop_map(|(floors, holes, hatches, fires, fuels, fans, moves, (outside_k, wind_m_s))| {
-            assemble(floors, holes, &hatches, fires, fuels, &fans, &moves, outside_k, wind_m_s)
-        })
 }
 
 type AnyFan = (prop::sample::Index, bool, f64, f64, f64);
 type AnyMove = (prop::sample::Index, f64, usize);
 
-fn assemble(
-    floors: Vec<Vec<Room>>,
-    holes: Vec<Opening>,
-    hatches: &[f64],
-    mut fires: Vec<Fire>,
-    fuels: [Fuel; 2],
-    fans: &[AnyFan],
-    moves: &[AnyMove],
-    outside_k: f64,
-    wind_m_s: f64,
-) -> Network {
+fn rooms_and_openings(floors: Vec<Vec<Room>>, holes: Vec<Opening>, hatches: &[f64]) -> Network {
     let mut holes = holes.into_iter().cycle();
     let mut rooms: Vec<Room> = Vec::new();
     let mut openings = Vec::new();
@@ -173,13 +164,18 @@ fn assemble(
     for (two, side_m) in first_of_floor.windows(2).zip(hatches) {
         openings.push(hatch([room(two[0]), room(two[1])], *side_m));
     }
-    let count = rooms.len();
+    Network { rooms, openings, ..Network::default() }
+}
+
+fn burn_and_blow(network: &mut Network, mut fires: Vec<Fire>, fans: &[AnyFan], moves: &[AnyMove]) {
+    let count = network.rooms.len();
     for fire in &mut fires {
         fire.room %= count;
     }
     // One burns from the start, so that every building has a fire.
     fires[0].ignites = Ignition::At(0.0);
-    let fans = fans
+    network.fires = fires;
+    network.fans = fans
         .iter()
         .map(|(at, blows_in, volume_flow_m3_s, height_m, stall_pa)| {
             let (inside, outside) = (room(at.index(count)), OUTSIDE);
@@ -195,16 +191,13 @@ fn assemble(
             }
         })
         .collect();
-    let schedule = moves
+    let openings = network.openings.len();
+    network.schedule = moves
         .iter()
         .map(|(which, at_s, to)| Move {
             at_s: *at_s,
-            opening: which.index(openings.len()),
+            opening: which.index(openings),
             open_fraction: [0.0, 1.0][*to],
         })
         .collect();
-    let mut ambient = air(293.0);
-    ambient.temperature_k = outside_k;
-    ambient.wind_m_s = wind_m_s;
-    Network { rooms, openings, fuels: fuels.to_vec(), fires, fans, schedule, ambient, ..Network::default() }
 }

@@ -149,7 +149,7 @@ pub fn run_all(network: &Network, plan: &Plan) -> (Vec<Sample>, Ended) {
 /// The state at the end of a run of a tolerance.
 pub fn at_end(network: &Network, duration_s: f64, tolerance: f64) -> Sample {
     let plan = Plan { tolerance, ..Plan::every(duration_s, duration_s) };
-    run_all(network, &plan).0.pop().unwrap()
+    run_all(network, &plan).0.pop().expect("a plan samples its end")
 }
 
 /// Is every number of a sample a number?
