@@ -63,7 +63,7 @@ where
     for event in events.iter().filter(|event| event.at_s <= 0.0) {
         right.happen(event, &first);
     }
-    let structure = Structure::new(&mut right, network.rooms.len(), network.fuels.len(), 60.0);
+    let structure = Structure::new(&mut right, network, 60.0);
 
     let mut corners: Vec<f64> = events
         .iter()

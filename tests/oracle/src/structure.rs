@@ -1,6 +1,6 @@
 //! Which rate depends on which number of the state, and which numbers can be moved together to see it.
 
-use crate::fire::two_zone::RightSide;
+use crate::fire::two_zone::{Network, RightSide};
 
 /// The pattern of the slopes of a network's laws, by columns.
 pub struct Structure {
@@ -27,7 +27,8 @@ impl Structure {
     /// Looks at how the rates answer at a few states in which everything is astir.
     ///
     /// Within a room every number of its gas is taken to change what any of them changes.
-    pub fn new(laws: &mut RightSide<'_>, rooms: usize, fuels: usize, time_s: f64) -> Self {
+    pub fn new(laws: &mut RightSide<'_>, network: &Network, time_s: f64) -> Self {
+        let (rooms, fuels) = (network.rooms.len(), network.fuels.len());
         let start = laws.start();
         let whole = start.len();
         let len = whole - sums_len(fuels);
@@ -38,18 +39,20 @@ impl Structure {
         for index in 0..len {
             depends[index][index] = true;
         }
-        for round in 0..4 {
-            let state = stirred(&start, rooms, of_room, len, round);
+        for round in 0..6 {
+            let mut state = stirred(&start, rooms, of_room, len, round);
+            // The clocks of the fires come last; early, while they grow.
+            state[len - network.fires.len()..len].fill(40.0);
             let mut before = vec![0.0; whole];
             let mut after = vec![0.0; whole];
             laws.rates(time_s, &state, &mut before);
             let mut moved = state.clone();
             for column in 0..len {
-                moved[column] += 1e-5 * scale[column];
+                moved[column] += 1e-3 * scale[column];
                 laws.rates(time_s, &moved, &mut after);
                 moved[column] = state[column];
                 for row in 0..len {
-                    if (after[row] - before[row]).abs() > 1e-14 * before[row].abs() {
+                    if after[row] != before[row] {
                         depends[column][row] = true;
                     }
                 }
