@@ -1,6 +1,6 @@
 //! A run by the second solver, from event to event of ours.
 
-use std::time::Duration;
+use std::time::{Duration, Instant};
 
 use diffsol::matrix::MatrixRef;
 use diffsol::vector::VectorRef;
@@ -27,6 +27,8 @@ pub enum Algebra {
 pub struct Second {
     pub samples: Vec<Sample>,
     pub steps: usize,
+    /// Time spent on finding the pattern of the slopes: needed once for a building, so not a part of a run.
+    pub pattern_time: Duration,
     /// Time spent on slopes by differences: a solver with its slopes given would not spend it.
     pub slopes_time: Duration,
 }
@@ -63,7 +65,9 @@ where
     for event in events.iter().filter(|event| event.at_s <= 0.0) {
         right.happen(event, &first);
     }
+    let begun = Instant::now();
     let structure = Structure::new(&mut right, network, 60.0);
+    let pattern_time = begun.elapsed();
 
     let mut corners: Vec<f64> = events
         .iter()
@@ -74,7 +78,7 @@ where
     corners.sort_by(f64::total_cmp);
     corners.dedup();
 
-    let mut second = Second { samples: Vec::new(), steps: 0, slopes_time: Duration::ZERO };
+    let mut second = Second { samples: Vec::new(), steps: 0, pattern_time, slopes_time: Duration::ZERO };
     let mut samples = plan.samples_s.iter().copied().peekable();
     let mut from_s = 0.0;
     for to_s in corners {
