@@ -25,7 +25,11 @@ fn an14_without_a_fire_nothing_moves() {
         let first = &samples[0];
         for sample in &samples {
             for opening in &sample.openings {
-                assert!(opening.inflow_kg_s.abs() < 1e-9 && opening.outflow_kg_s.abs() < 1e-9, "{opening:?}");
+                assert!(
+                    opening.inflow_kg_s.abs() < 1e-9 && opening.outflow_kg_s.abs() < 1e-9,
+                    "{opening:?} at {}, {network:?}",
+                    sample.time_s
+                );
             }
             for (room, before) in sample.rooms.iter().zip(&first.rooms) {
                 assert!((room.upper.temperature_k - 293.0).abs() < 293.0e-9, "{room:?}");
