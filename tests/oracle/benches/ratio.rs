@@ -9,14 +9,10 @@
 use std::hint::black_box;
 
 use sootline::cases::{self, Case};
+use sootline::clock::{cpu_time, median_ms};
 use sootline::fire::two_zone::{Event, Plan, Sample};
 use sootline::second::{Algebra, follow};
 use sootline::support::run_all;
-
-#[path = "../../../benches/two_zone/clock.rs"]
-mod clock;
-
-use clock::{cpu_time, median_ms};
 
 fn error_k(samples: &[Sample], exact: &[Sample]) -> f64 {
     let apart = |(a, b): (&Sample, &Sample)| {

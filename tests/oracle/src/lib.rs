@@ -11,6 +11,9 @@ pub mod cases;
 #[path = "../../two_zone/support.rs"]
 pub mod support;
 
+#[path = "../../../benches/two_zone/clock.rs"]
+pub mod clock;
+
 pub mod laws;
 pub mod second;
 pub mod structure;
