@@ -11,18 +11,27 @@ pub fn cpu_time() -> Duration {
         .map_or_else(|| START.with(Instant::elapsed), Duration::from_nanos)
 }
 
-/// Median CPU time of one run, ms, over measurements of several runs each.
-pub fn median_ms(measurements: usize, runs: u32, mut run: impl FnMut()) -> f64 {
+/// Least CPU time of a measurement: the system counts by ticks of some milliseconds.
+const LEAST: Duration = Duration::from_millis(150);
+
+/// CPU time of one run, ms, over as many as make a measurement.
+pub fn mean_ms(mut run: impl FnMut()) -> f64 {
+    let before = cpu_time();
+    let mut runs = 0_u32;
+    loop {
+        run();
+        runs += 1;
+        let whole = cpu_time() - before;
+        if whole >= LEAST {
+            return 1e3 * whole.as_secs_f64() / f64::from(runs);
+        }
+    }
+}
+
+/// Median of several measurements of the CPU time of one run, ms.
+pub fn median_ms(measurements: usize, mut run: impl FnMut()) -> f64 {
     run();
-    let mut all: Vec<f64> = (0..measurements)
-        .map(|_| {
-            let before = cpu_time();
-            for _ in 0..runs {
-                run();
-            }
-            1e3 * (cpu_time() - before).as_secs_f64() / f64::from(runs)
-        })
-        .collect();
+    let mut all: Vec<f64> = (0..measurements).map(|_| mean_ms(&mut run)).collect();
     all.sort_by(f64::total_cmp);
     all[all.len() / 2]
 }

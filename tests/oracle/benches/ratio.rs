@@ -7,6 +7,7 @@
 //! its time is also printed without any time for slopes: better than it could ever do.
 
 use std::hint::black_box;
+use std::time::Duration;
 
 use sootline::cases::{self, Case};
 use sootline::clock::{cpu_time, median_ms};
@@ -30,6 +31,21 @@ fn ours(case: &Case, tolerance: f64) -> (Vec<Sample>, Vec<Event>) {
     (samples, ended.events)
 }
 
+/// CPU time of a run of the second solver, whole and without any for slopes, over as many as make a measurement: the
+/// system counts by ticks of some milliseconds.
+fn second_ms(case: &Case, events: &[Event], tolerance: f64, algebra: Algebra) -> (f64, f64) {
+    let mut runs = 0.0;
+    let (mut whole, mut slopes) = (Duration::ZERO, Duration::ZERO);
+    while whole < Duration::from_millis(500) {
+        let before = cpu_time();
+        let second = follow(case, events, tolerance, algebra, true);
+        whole += (cpu_time() - before).saturating_sub(second.pattern_time);
+        slopes += second.slopes_time;
+        runs += 1.0;
+    }
+    (1e3 * whole.as_secs_f64() / runs, 1e3 * whole.saturating_sub(slopes).as_secs_f64() / runs)
+}
+
 fn main() {
     if std::env::args().any(|argument| argument == "--test") {
         return;
@@ -45,7 +61,7 @@ fn main() {
         let mut best_ours = f64::INFINITY;
         for tolerance in [3e-3, 1e-3, 3e-4, 1e-4] {
             let error = error_k(&ours(&case, tolerance).0, &exact);
-            let ms = median_ms(7, 3, || drop(black_box(ours(&case, tolerance))));
+            let ms = median_ms(7, || drop(black_box(ours(&case, tolerance))));
             println!("{} ours {tolerance:e}: {ms:.2} ms, {error:.2} K", case.name);
             if error <= 1.0 {
                 best_ours = best_ours.min(ms);
@@ -53,18 +69,11 @@ fn main() {
         }
         let (mut best, mut best_bare) = (f64::INFINITY, f64::INFINITY);
         for tolerance in [1e-3, 3e-4, 1e-4, 3e-5] {
-            let mut all = Vec::new();
-            let mut last = None;
-            for _ in 0..3 {
-                let before = cpu_time();
-                let second = follow(&case, &events, tolerance, algebra, true);
-                let ms = 1e3 * (cpu_time() - before).saturating_sub(second.pattern_time).as_secs_f64();
-                all.push((ms, ms - 1e3 * second.slopes_time.as_secs_f64()));
-                last = Some(second);
-            }
+            let second = follow(&case, &events, tolerance, algebra, true);
+            let mut all: Vec<(f64, f64)> =
+                (0..3).map(|_| second_ms(&case, &events, tolerance, algebra)).collect();
             all.sort_by(|a, b| a.0.total_cmp(&b.0));
             let (ms, bare_ms) = all[1];
-            let second = last.expect("it ran");
             let error = error_k(&second.samples, &exact);
             println!(
                 "{} second ({algebra:?}) {tolerance:e}: {ms:.1} ms, {bare_ms:.1} ms without slopes, {error:.2} K, {} steps",
