@@ -3,8 +3,8 @@
 use super::support::{is_finite, try_run};
 use super::variants::variant;
 
-/// Runs variants; steps of each, sorted, and what failed.
-fn steps(numbers: std::ops::Range<u64>) -> (Vec<usize>, Vec<String>) {
+/// Runs variants; steps of each with its number, sorted, and what failed.
+fn steps(numbers: std::ops::Range<u64>) -> (Vec<(usize, u64)>, Vec<String>) {
     let mut taken = Vec::new();
     let mut failures = Vec::new();
     for number in numbers {
@@ -14,7 +14,7 @@ fn steps(numbers: std::ops::Range<u64>) -> (Vec<usize>, Vec<String>) {
                 if !samples.iter().all(is_finite) {
                     failures.push(format!("{number}: not finite"));
                 }
-                taken.push(ended.work.steps + ended.work.rejected);
+                taken.push((ended.work.steps + ended.work.rejected, number));
             }
             Err(failed) => failures.push(format!("{number}: {failed:?}")),
         }
@@ -25,10 +25,11 @@ fn steps(numbers: std::ops::Range<u64>) -> (Vec<usize>, Vec<String>) {
 
 fn holds(numbers: std::ops::Range<u64>) {
     let (taken, failures) = steps(numbers);
-    let (median, slowest) = (taken[taken.len() / 2], taken[taken.len() - 1]);
+    let (median, slowest) = (taken[taken.len() / 2].0, taken[taken.len() - 1].0);
+    let longest = &taken[taken.len() - taken.len().min(10)..];
     println!("{} runs, median {median} steps, slowest {slowest}", taken.len());
     assert!(failures.is_empty(), "{} failed: {:#?}", failures.len(), &failures[..failures.len().min(10)]);
-    assert!(slowest <= 5 * median, "slowest {slowest}, median {median}");
+    assert!(slowest <= 5 * median, "median {median}; the longest, steps and number: {longest:?}");
 }
 
 #[test]

@@ -24,9 +24,13 @@ fn sums_len(fuels: usize) -> usize {
 }
 
 impl Structure {
+<<<<<<< HEAD
     /// Looks at how the rates answer at a few states in which everything is astir.
     ///
     /// Within a room every number of its gas is taken to change what any of them changes.
+=======
+    /// Looks at how the rates answer at a dozen states in which everything is astir.
+>>>>>>> verify
     pub fn new(laws: &mut RightSide<'_>, network: &Network, time_s: f64) -> Self {
         let (rooms, fuels) = (network.rooms.len(), network.fuels.len());
         let start = laws.start();
@@ -39,7 +43,11 @@ impl Structure {
         for index in 0..len {
             depends[index][index] = true;
         }
+<<<<<<< HEAD
         for round in 0..6 {
+=======
+        for round in 0..12 {
+>>>>>>> verify
             let mut state = stirred(&start, rooms, of_room, len, round);
             // The clocks of the fires come last; early, while they grow.
             state[len - network.fires.len()..len].fill(40.0);
@@ -58,6 +66,7 @@ impl Structure {
                 }
             }
         }
+<<<<<<< HEAD
         for room in 0..rooms {
             let own = room * of_room..(room + 1) * of_room;
             let mut any = vec![false; len];
@@ -73,6 +82,8 @@ impl Structure {
                 depends[column].clone_from(&any);
             }
         }
+=======
+>>>>>>> verify
         let rows: Vec<Vec<usize>> =
             depends.iter().map(|column| (0..len).filter(|&row| column[row]).collect()).collect();
         let groups = groups(&rows, len);
