@@ -39,11 +39,7 @@ fn any_room() -> impl Strategy<Value = Room> {
 }
 
 fn any_fuel() -> impl Strategy<Value = Fuel> {
-<<<<<<< HEAD
-    (0.4..0.85_f64, 0.05..0.14_f64, 0.0..0.05_f64, 0.0..0.1_f64, 0.0..0.1_f64).prop_map(
-=======
     (0.4..0.8_f64, 0.05..0.14_f64, 0.0..0.05_f64, 0.0..0.1_f64, 0.0..0.1_f64).prop_map(
->>>>>>> verify
         |(carbon, hydrogen, nitrogen, carbon_monoxide_yield, soot_yield)| Fuel {
             carbon,
             hydrogen,

@@ -59,11 +59,7 @@ fn main() {
     ] {
         let (exact, events) = ours(&case, 1e-7);
         let mut best_ours = f64::INFINITY;
-<<<<<<< HEAD
-        for tolerance in [3e-3, 1e-3, 3e-4, 1e-4] {
-=======
         for tolerance in [3e-3, 1e-3, 7e-4, 5e-4, 3e-4, 1e-4] {
->>>>>>> verify
             let error = error_k(&ours(&case, tolerance).0, &exact);
             let ms = median_ms(7, || drop(black_box(ours(&case, tolerance))));
             println!("{} ours {tolerance:e}: {ms:.2} ms, {error:.2} K", case.name);

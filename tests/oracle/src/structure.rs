@@ -24,13 +24,7 @@ fn sums_len(fuels: usize) -> usize {
 }
 
 impl Structure {
-<<<<<<< HEAD
-    /// Looks at how the rates answer at a few states in which everything is astir.
-    ///
-    /// Within a room every number of its gas is taken to change what any of them changes.
-=======
     /// Looks at how the rates answer at a dozen states in which everything is astir.
->>>>>>> verify
     pub fn new(laws: &mut RightSide<'_>, network: &Network, time_s: f64) -> Self {
         let (rooms, fuels) = (network.rooms.len(), network.fuels.len());
         let start = laws.start();
@@ -43,11 +37,7 @@ impl Structure {
         for index in 0..len {
             depends[index][index] = true;
         }
-<<<<<<< HEAD
-        for round in 0..6 {
-=======
         for round in 0..12 {
->>>>>>> verify
             let mut state = stirred(&start, rooms, of_room, len, round);
             // The clocks of the fires come last; early, while they grow.
             state[len - network.fires.len()..len].fill(40.0);
@@ -66,24 +56,6 @@ impl Structure {
                 }
             }
         }
-<<<<<<< HEAD
-        for room in 0..rooms {
-            let own = room * of_room..(room + 1) * of_room;
-            let mut any = vec![false; len];
-            for column in own.clone() {
-                for row in 0..len {
-                    any[row] |= depends[column][row];
-                }
-            }
-            for row in own.clone() {
-                any[row] = true;
-            }
-            for column in own {
-                depends[column].clone_from(&any);
-            }
-        }
-=======
->>>>>>> verify
         let rows: Vec<Vec<usize>> =
             depends.iter().map(|column| (0..len).filter(|&row| column[row]).collect()).collect();
         let groups = groups(&rows, len);
