@@ -177,7 +177,8 @@ pub(super) fn through_ceiling<R: Real>(
     flow.from[giver][layer] = own;
     flow.from[giver][1 - layer] = mass - own;
 
-    let heavier = above.lower_kg_m3 - below.upper_kg_m3;
+    // A millionth, a few ten-thousandths of a kelvin, is rounding.
+    let heavier = above.lower_kg_m3 - below.upper_kg_m3 - 1e-6;
     if heavier.value() > 0.0 && open_area_m2 > 0.0 {
         const EXCHANGE: f64 = 0.055 * 4.0 / std::f64::consts::PI;
         // Below a kelvin of difference it falls faster than the root, without slope at nothing, and pressures below
