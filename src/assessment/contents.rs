@@ -91,6 +91,8 @@ pub(super) struct Contents {
     pub radiative_share: f64,
     /// Of what the contents burn as.
     pub heat_of_combustion_kj_kg: f64,
+    /// What they burn as; none where it is not known.
+    pub fuel: Option<FuelProperties>,
     pub packages: Vec<Package>,
     pub pile: Option<Pile>,
     pub origin: Option<usize>,
@@ -160,6 +162,7 @@ impl Contents {
             radiative_share,
             heat_of_combustion_kj_kg: fuel
                 .map_or(CONTENTS_KJ_KG, |fuel| fuel.properties.heat_of_combustion_mj_kg * 1e3),
+            fuel: fuel.map(|fuel| fuel.properties.clone()),
             packages,
             pile,
             origin,

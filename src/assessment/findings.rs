@@ -436,6 +436,29 @@ pub struct BackdraftFinding {
     pub clauses: Vec<&'static str>,
 }
 
+/// The room of origin at one moment of a run.
+#[derive(Debug, Clone, Copy, PartialEq)]
+pub struct Point {
+    /// On the fire clock.
+    pub at_s: f64,
+    /// Hot layer.
+    pub upper_temperature_c: f64,
+    /// Cool layer.
+    pub lower_temperature_c: f64,
+    /// Lower face of the hot layer above the floor.
+    pub layer_height_m: f64,
+    /// On the floor.
+    pub floor_flux_kw_m2: f64,
+    /// Of the hot layer, by volume of wet gas.
+    pub oxygen_percent: f64,
+    /// Of the hot layer.
+    pub carbon_monoxide_ppm: f64,
+    /// At the floor, against outside air.
+    pub pressure_pa: f64,
+    /// In the room.
+    pub heat_release_kw: f64,
+}
+
 /// How long a crew that opens up has got.
 #[derive(Debug, Clone, PartialEq)]
 pub struct EntryFinding {

@@ -16,6 +16,7 @@ mod cautions;
 mod clocks;
 mod contents;
 mod digest;
+mod engine_fuel;
 mod entry;
 mod flashover;
 mod geometry;
@@ -35,6 +36,7 @@ mod room;
 mod scenarios;
 mod smoke;
 mod timeline;
+pub mod transient;
 mod watchers;
 mod water;
 
