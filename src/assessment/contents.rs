@@ -84,6 +84,7 @@ pub(super) struct TakesFire {
 pub(super) struct Contents {
     pub use_key: String,
     pub way_out: bool,
+    pub sleeping: bool,
     pub load: Load,
     pub growth: Growth,
     pub heat_release_per_area_kw_m2: f64,
@@ -155,6 +156,7 @@ impl Contents {
         Ok(Self {
             use_key: found.key().to_owned(),
             way_out: use_of.way_out,
+            sleeping: use_of.sleeping,
             load,
             growth,
             heat_release_per_area_kw_m2: use_of.heat_release_per_area_kw_m2,

@@ -504,6 +504,16 @@ pub const ALL: &[Method] = &[
         validation: "A grading of the public supply for hours, not a rate of attack.",
     },
     Method {
+        key: "two_layer_network",
+        title: "Two layers in every room of a network",
+        equation: "mass, energy and species of each layer, one pressure a room; plumes by Heskestad, vents by Bernoulli, conduction into linings, grey radiation, yields by the global equivalence ratio",
+        quantity: "layer_temperature_c",
+        unit: "C",
+        sources: &[&sources::HESKESTAD_1984, &sources::ROCKETT_1976],
+        range: &["rooms in which a layer forms evenly: up to 5 times as long as wide, 300 m2", "gas up to 1500 K"],
+        validation: "Compared with measured rooms in the record of the validation, quantity by quantity.",
+    },
+    Method {
         key: "dose_of_asphyxiants",
         title: "Dose of gases that stun by ISO 13571 and Purser",
         equation: "FED = integral of (([CO]/35000 + [HCN]^2.36/1.2e6) v + exp(0.54 (20.9 - [O2]) - 8.13)) dt, ppm, % and min; v = exp([CO2]/5) above 2 %; low oxygen below 20 %",

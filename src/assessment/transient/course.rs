@@ -22,6 +22,10 @@ const STEP_BUDGET: usize = 6_000;
 /// Tolerances that a run is tried with, one after the other, until it comes to its end: another step often passes where one
 /// got stuck.
 const TOLERANCES: [f64; 3] = [Plan::TOLERANCE, 0.3 * Plan::TOLERANCE, 3.0 * Plan::TOLERANCE];
+/// A run that shows nothing more ends when no flame has burned for so long, s, and the layer has cooled to this, K: what is
+/// out and cold stays so.
+const OUT_S: f64 = 900.0;
+const COLD_K: f64 = 423.15;
 /// Far rooms count as at rest up to this rise, K, and this extinction of light, 1/m: a third of what smoke that one sees
 /// 10 m through has.
 const REST_K: f64 = 3.0;
@@ -29,7 +33,7 @@ const REST_EXTINCTION_1_M: f64 = 0.1;
 
 /// How much of a run is wanted.
 #[derive(Debug, Clone, Copy, PartialEq, Eq)]
-pub(super) enum Depth {
+pub(in crate::assessment) enum Depth {
     /// Until flashover by both criteria, or the horizon.
     Flashover,
     /// To the horizon.
@@ -81,7 +85,7 @@ fn crossing_s(from: (f64, f64), to: (f64, f64), limit: f64) -> f64 {
 
 /// Pressures over a run, Pa; positive against outside or against what lies behind.
 #[derive(Debug, Clone, Copy, PartialEq, Default)]
-pub(super) struct Pressures {
+pub(in crate::assessment) struct Pressures {
     pub peak_pa: f64,
     pub suction_pa: f64,
 }
@@ -95,7 +99,7 @@ impl Pressures {
 
 /// What became of a room.
 #[derive(Debug, Clone, PartialEq)]
-pub(super) struct RoomCourse {
+pub(in crate::assessment) struct RoomCourse {
     /// Number in the building.
     pub number: usize,
     /// Smoke that one sees less than 10 m through hangs below its ceiling.
@@ -110,7 +114,7 @@ pub(super) struct RoomCourse {
 
 /// What is kept of a run. Times are on the fire clock.
 #[derive(Debug, Clone, PartialEq)]
-pub(super) struct Course {
+pub(in crate::assessment) struct Course {
     pub layer_600_c_s: Option<f64>,
     pub floor_20_kw_m2_s: Option<f64>,
     pub layer_400_c_s: Option<f64>,
@@ -144,7 +148,7 @@ pub(super) struct Course {
 
 /// How an opening gave way.
 #[derive(Debug, Clone, Copy, PartialEq, Eq)]
-pub(super) enum GaveWay {
+pub(in crate::assessment) enum GaveWay {
     Glass,
     BurnedThrough,
     Pressure,
@@ -172,6 +176,9 @@ struct Recorder<'m> {
     floor: Held,
     hot: Held,
     before: Option<(f64, f64, f64)>,
+    /// When a flame last burned, s, and how warm the layer is, K.
+    burned_s: f64,
+    gas_k: f64,
     index: u32,
     course: Course,
 }
@@ -198,6 +205,8 @@ impl<'m> Recorder<'m> {
             floor: Held::default(),
             hot: Held::default(),
             before: None,
+            burned_s: 0.0,
+            gas_k: 0.0,
             index: 0,
             course: Course {
                 layer_600_c_s: None,
@@ -236,6 +245,10 @@ impl<'m> Recorder<'m> {
         self.floor.follow((from_s, from_kw_m2), (at_s, flux_kw_m2), LIMIT_20_KW_M2_FLOOR);
         self.hot.follow((from_s, from_k), (at_s, gas_k), super::stand::SHUT_LATE_K);
         self.before = Some((at_s, gas_k, flux_kw_m2));
+        self.gas_k = gas_k;
+        if sample.fires.iter().any(|fire| fire.alight) {
+            self.burned_s = at_s;
+        }
 
         let air = TwoLayers::from(origin);
         let course = &mut self.course;
@@ -291,7 +304,10 @@ impl<'m> Recorder<'m> {
     }
 
     fn enough(&self) -> bool {
-        self.depth == Depth::Flashover && self.gas.met_s.is_some() && self.floor.met_s.is_some()
+        let known = self.depth == Depth::Flashover && self.gas.met_s.is_some() && self.floor.met_s.is_some();
+        let now_s = self.before.map_or(0.0, |before| before.0);
+        let over = now_s - self.burned_s > OUT_S && self.gas_k < COLD_K;
+        known || (over && !self.depth.follows_people())
     }
 }
 
@@ -312,7 +328,7 @@ fn follow_people(
 }
 
 /// Runs a network to its horizon on the fire clock. Asks `watch` at every step.
-pub(super) fn follow(
+pub(in crate::assessment) fn follow(
     made: &Made,
     horizon_s: f64,
     depth: Depth,

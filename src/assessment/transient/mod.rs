@@ -1,38 +1,98 @@
 //! The transient level: the whole building as a network of two-layer rooms.
+//!
+//! `wing` says which rooms stand one by one and which count as one; `shell` and `fires` turn rooms, openings and contents
+//! into the engine's; `stand` says how openings stand in a scenario; `network` joins them; `course` runs one and keeps what
+//! is asked for; `study` makes the runs of a room; `findings`, `place`, `disagreements` and `holds` tell what came out.
 
 mod course;
+mod disagreements;
+mod findings;
 mod fires;
+mod holds;
 mod network;
 mod people;
+mod place;
+mod rating;
 mod shell;
 mod stand;
 mod study;
 mod wing;
 
-/// For trials.
-pub fn trial(
-    building: &crate::domain::Building,
-    catalogue: &crate::catalogue::Catalogue,
-    wide: bool,
-) {
-    use std::ops::ControlFlow;
-    use course::Course;
-    let assumptions = crate::domain::Assumptions::default();
-    let plan = super::plan::Plan::of(building, catalogue);
-    let (spans, _) = super::clocks::Spans::of(building, &assumptions);
-    let inputs: Vec<_> = (0..building.rooms.len())
-        .map(|n| super::inputs::Inputs::of(n, &plan, catalogue, &assumptions, &mut super::assumed::Account::default()).ok())
-        .collect();
-    let whole = network::Whole { plan: &plan, rooms: &inputs, catalogue, assumptions: &assumptions };
-    for origin in inputs.iter().flatten() {
-        let clock = super::clocks::Clock::of(origin, spans);
-        let started = std::time::Instant::now();
-        let _ = wide;
-        match study::Study::of(&whole, origin, None, &clock, &mut || ControlFlow::Continue(())) {
-            Ok(study) => println!("{:12} {:?} by {:?} {:?} corners {:?} elsewhere {:?} whole {}+{} stirred {} runs {} steps {} {:.0} ms",
-                origin.key, study.rating, study.scenario(), study.band(Course::flashover_s), study.corners.iter().map(|c| c.flashover_s().map(f64::round)).collect::<Vec<_>>(),
-                study.elsewhere, study.whole.made.rooms.len(), study.whole.made.far.len(), study.whole.course.far_stirred, study.runs, study.steps, started.elapsed().as_secs_f64() * 1e3),
-            Err(no) => println!("{:12} {no:?}", origin.key),
+use std::ops::ControlFlow;
+
+use super::clocks::Clock;
+use super::findings::{FlashoverFinding, FlashoverRating, Reason, Stop, TransientFinding};
+use super::inputs::Inputs;
+use super::scenarios::Screened;
+use crate::domain::assumptions::Scenario;
+
+pub(in crate::assessment) use network::Whole;
+pub(in crate::assessment) use study::Study;
+
+/// The runs of a room, or the reason why there are none.
+pub(in crate::assessment) enum Studied {
+    /// At level screening.
+    NotAsked,
+    /// The engine gave no answer for this room.
+    Without(Reason),
+    /// All of them.
+    Done(Box<Study>),
+}
+
+impl Studied {
+    /// Makes the runs of a room; [`Stop`] only where `watch` breaks.
+    pub(in crate::assessment) fn of<'a>(
+        whole: &Whole<'a>,
+        origin: &Inputs<'a>,
+        asked: Option<&[Scenario]>,
+        clock: &Clock,
+        watch: &mut dyn FnMut() -> ControlFlow<Stop>,
+    ) -> Result<Self, Stop> {
+        match Study::of(whole, origin, asked, clock, watch) {
+            Ok(study) => Ok(Self::Done(Box::new(study))),
+            Err(study::NoStudy::Stopped) => Err(Stop),
+            Err(none) => Ok(Self::Without(rating::no_study(&none))),
+        }
+    }
+
+    /// The study, where there is one.
+    pub(in crate::assessment) fn done(&self) -> Option<&Study> {
+        match self {
+            Self::Done(study) => Some(study),
+            Self::NotAsked | Self::Without(_) => None,
+        }
+    }
+}
+
+/// The flashover finding by the runs, and what else they say.
+pub(in crate::assessment) fn findings(
+    inputs: &Inputs<'_>,
+    studied: &Studied,
+    screened: &[Screened],
+    clock: &Clock,
+    large: &[&'static str],
+    by_screen: FlashoverFinding,
+) -> (FlashoverFinding, Option<TransientFinding>) {
+    match studied {
+        Studied::NotAsked => (by_screen, None),
+        Studied::Without(reason) => {
+            let finding = FlashoverFinding {
+                rating: FlashoverRating::NotAssessed,
+                time_s: None,
+                time_to_600_c_s: None,
+                time_to_20_kw_m2_s: None,
+                reason: Some(reason.clone()),
+                before_water: None,
+                before_water_case: None,
+                holds_while: Vec::new(),
+                clauses: vec!["2.1", "2.13"],
+                ..by_screen
+            };
+            (finding, None)
+        }
+        Studied::Done(study) => {
+            let found = findings::finding(inputs, study, screened);
+            (rating::finding(inputs, study, &found, clock, large, by_screen), Some(found))
         }
     }
 }

@@ -25,7 +25,7 @@ const FAN_STALLS_PA: f64 = 300.0;
 const DEFAULT_FUEL: &str = "general_contents";
 
 /// The building as every run of it needs it.
-pub(super) struct Whole<'a> {
+pub(in crate::assessment) struct Whole<'a> {
     pub plan: &'a Plan<'a>,
     /// By number; none where a room names what the catalogue does not have.
     pub rooms: &'a [Option<Inputs<'a>>],
@@ -35,7 +35,7 @@ pub(super) struct Whole<'a> {
 
 /// Ends of the uncertain inputs.
 #[derive(Debug, Clone, Copy, PartialEq, Eq)]
-pub(super) struct Corner {
+pub(in crate::assessment) struct Corner {
     /// Fire load and growth.
     pub fire: Lean,
     /// Heat into linings, and leakage.
@@ -55,7 +55,7 @@ impl Corner {
 
 /// A network and what its parts are in the building.
 #[derive(Debug, Clone, PartialEq)]
-pub(super) struct Made {
+pub(in crate::assessment) struct Made {
     pub network: Network,
     /// Rooms by number, in the order of the network; the room of origin first. The far rooms, if any, come after.
     pub rooms: Vec<usize>,

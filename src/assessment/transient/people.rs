@@ -6,7 +6,7 @@ use crate::fire::two_zone::RoomState;
 
 /// A person standing, one crawling and a crew in one room, from the moment that anything comes to it.
 #[derive(Debug, Clone, PartialEq)]
-pub(super) struct People {
+pub(in crate::assessment) struct People {
     standing: WayOut,
     crawling: WayOut,
     pub crew: Crew,

@@ -22,7 +22,7 @@ const BOARD_M: f64 = 0.03;
 
 /// Which end of an uncertain input.
 #[derive(Debug, Clone, Copy, PartialEq, Eq)]
-pub(super) enum Lean {
+pub(in crate::assessment) enum Lean {
     Low,
     Typical,
     High,
@@ -39,7 +39,7 @@ impl Lean {
 }
 
 /// Height of a floor above the entrance level, m: recorded, else storeys of 3 m from the nearest that is.
-pub(super) fn elevation_m(floors: &[FloorLevel], floor: i32) -> f64 {
+pub(in crate::assessment) fn elevation_m(floors: &[FloorLevel], floor: i32) -> f64 {
     let nearest = floors
         .iter()
         .filter_map(|level| Some((level.floor, level.elevation_m?.get())))
@@ -49,7 +49,7 @@ pub(super) fn elevation_m(floors: &[FloorLevel], floor: i32) -> f64 {
 }
 
 /// Whether the air of a room counts as one mixed zone.
-pub(super) fn is_mixed(kind: RoomKind) -> bool {
+pub(in crate::assessment) fn is_mixed(kind: RoomKind) -> bool {
     matches!(kind, RoomKind::Stair | RoomKind::Shaft)
 }
 
@@ -76,7 +76,7 @@ fn levels(plan: &Plan<'_>, number: usize) -> (f64, f64) {
 }
 
 /// A room.
-pub(super) fn room(plan: &Plan<'_>, inputs: &Inputs<'_>, lean: Lean) -> Room {
+pub(in crate::assessment) fn room(plan: &Plan<'_>, inputs: &Inputs<'_>, lean: Lean) -> Room {
     let geometry = &inputs.geometry;
     let (floor_elevation_m, height_m) = levels(plan, inputs.number);
     let leak_m2 = inputs.envelope_leak_m2 * lean.of(spread_of_leaks(inputs));
@@ -110,7 +110,7 @@ fn sheets(surface: &Surface, heat: f64, on_studs: bool) -> Vec<Slab> {
 }
 
 /// The far rooms as one mixed volume: their air, their cracks, and the cracks of their shut openings to outside.
-pub(super) fn rest(plan: &Plan<'_>, far: &[usize], leaks_m2: impl Fn(usize) -> f64) -> Room {
+pub(in crate::assessment) fn rest(plan: &Plan<'_>, far: &[usize], leaks_m2: impl Fn(usize) -> f64) -> Room {
     let mut bottom_m = f64::INFINITY;
     let mut top_m = f64::NEG_INFINITY;
     let (mut volume_m3, mut leak_m2) = (0.0, 0.0);
@@ -138,7 +138,7 @@ pub(super) fn rest(plan: &Plan<'_>, far: &[usize], leaks_m2: impl Fn(usize) -> f
 
 /// How an opening is to stand in the network.
 #[derive(Debug, Clone, Copy)]
-pub(super) struct Hung {
+pub(in crate::assessment) struct Hung {
     pub number: usize,
     pub between: [Side; 2],
     /// Floors of the first of what it joins in the building and in the network, m.
@@ -150,7 +150,7 @@ pub(super) struct Hung {
 }
 
 /// An opening.
-pub(super) fn opening(plan: &Plan<'_>, hung: Hung) -> Opening {
+pub(in crate::assessment) fn opening(plan: &Plan<'_>, hung: Hung) -> Opening {
     let recorded = &plan.building.openings[hung.number];
     let hole = &plan.openings[hung.number];
     let sill_m = recorded.sill_m.get() + hung.floors_m[0] - hung.floors_m[1];

@@ -8,13 +8,13 @@ use crate::domain::assumptions::Scenario;
 use crate::fire::two_zone::Position;
 
 /// Gas at which the door of `shut_late` is shut, K: 400 °C.
-pub(super) const SHUT_LATE_K: f64 = 673.15;
+pub(in crate::assessment) const SHUT_LATE_K: f64 = 673.15;
 /// The other moment at which it is, after flashover, s.
-pub(super) const SHUT_LATE_AFTER_S: f64 = 60.0;
+pub(in crate::assessment) const SHUT_LATE_AFTER_S: f64 = 60.0;
 
 /// One way in which the building may stand.
 #[derive(Debug, Clone, PartialEq)]
-pub(super) struct Standing {
+pub(in crate::assessment) struct Standing {
     pub scenario: Scenario,
     pub stand: Stand,
     /// Doors that somebody who fled has left open.

@@ -3,7 +3,7 @@
 use std::ops::ControlFlow;
 
 use super::super::clocks::Clock;
-use super::super::findings::{Band, FlashoverRating, Stop};
+use super::super::findings::{Band, FlashoverRating, HoldsWhile, Stop};
 use super::super::inputs::Inputs;
 use super::course::{Course, Depth, Pressures, follow};
 use super::network::{Corner, Made, Whole};
@@ -14,7 +14,7 @@ use crate::fire::two_zone::{Failed, Position};
 
 /// A scenario as it was run with typical inputs.
 #[derive(Debug, Clone, PartialEq)]
-pub(super) struct Ran {
+pub(in crate::assessment) struct Ran {
     pub standing: Standing,
     pub made: Made,
     pub course: Course,
@@ -22,7 +22,7 @@ pub(super) struct Ran {
 
 /// All runs of a room of origin.
 #[derive(Debug, Clone, PartialEq)]
-pub(super) struct Study {
+pub(in crate::assessment) struct Study {
     pub ran: Vec<Ran>,
     /// Place of the scenario that governs.
     pub governing: usize,
@@ -35,13 +35,15 @@ pub(super) struct Study {
     pub rating: FlashoverRating,
     /// Flashover came in another scenario at a corner only.
     pub elsewhere: Option<Scenario>,
+    /// What a rating `not_indicated` hangs on.
+    pub holds: Vec<HoldsWhile>,
     pub runs: usize,
     pub steps: usize,
 }
 
 /// Why a room has no study.
 #[derive(Debug, Clone, PartialEq)]
-pub(super) enum NoStudy {
+pub(in crate::assessment) enum NoStudy {
     Stopped,
     /// No scenario that was asked for can be run.
     NoScenario,
@@ -64,6 +66,7 @@ struct Runner<'r, 'a> {
     clock: &'r Clock,
     watch: &'r mut dyn FnMut() -> ControlFlow<Stop>,
     done: Vec<(Made, Depth, Course)>,
+    position: Position,
     runs: usize,
     steps: usize,
 }
@@ -76,10 +79,20 @@ impl Runner<'_, '_> {
         reach: Reach,
         depth: Depth,
     ) -> Result<(Made, Course), NoStudy> {
-        let made = self
-            .whole
-            .network(self.origin, standing, corner, self.clock, reach)
-            .map_err(NoStudy::Unfit)?;
+        self.run_of(self.origin, standing, corner, reach, depth)
+    }
+
+    /// With the room of origin as it might be.
+    fn run_of(
+        &mut self,
+        origin: &Inputs<'_>,
+        standing: &Standing,
+        corner: Corner,
+        reach: Reach,
+        depth: Depth,
+    ) -> Result<(Made, Course), NoStudy> {
+        let made =
+            self.whole.network(origin, standing, corner, self.clock, reach).map_err(NoStudy::Unfit)?;
         if let Some((_, _, course)) = self.done.iter().find(|(other, deep, _)| *deep == depth && *other == made) {
             return Ok((made, course.clone()));
         }
@@ -100,21 +113,26 @@ impl Runner<'_, '_> {
         // How a shut room breathes is asked for to its end.
         let shut = matches!(standing.scenario, Scenario::Shut | Scenario::ShutLate);
         let depth = if shut { Depth::Whole } else { Depth::Flashover };
+        let standing = Standing { position: self.position, ..standing };
         let (made, course) = self.run(&standing, Corner::TYPICAL, Reach::FIRST, depth)?;
-        // In a corner a plume draws least air and the layer gets hottest; but where the fire starves a free one, which
-        // draws more, may get further.
-        if course.flashover_s().is_none() {
-            let free = Standing { position: Position::Centre, ..standing.clone() };
-            let (free_made, free_course) = self.run(&free, Corner::TYPICAL, Reach::FIRST, depth)?;
+        Ok(Ran { standing, made, course })
+    }
+
+    /// Where the first fire is worse: in a corner, where a plume draws least air and the layer gets hottest; or free, where
+    /// it draws more, which takes a starved fire further. Tried in the scenario with most air, and kept for all.
+    fn place(&mut self) -> Result<(), NoStudy> {
+        let standing = Standing::of(self.whole.plan, self.origin.number, Scenario::DoorOpen);
+        let (made, corner) = self.run(&standing, Corner::TYPICAL, Reach::FIRST, Depth::Flashover)?;
+        if corner.flashover_s().is_none() {
+            let free = Standing { position: Position::Centre, ..standing };
+            let (_, centre) = self.run(&free, Corner::TYPICAL, Reach::FIRST, Depth::Flashover)?;
             let ambient_k = made.network.ambient.indoor_temperature_k;
-            let nearer = free_course.nearness(ambient_k) > course.nearness(ambient_k);
-            if free_course.failed.is_none()
-                && (course.failed.is_some() || free_course.flashover_s().is_some() || nearer)
-            {
-                return Ok(Ran { standing: free, made: free_made, course: free_course });
+            let nearer = centre.nearness(ambient_k) > corner.nearness(ambient_k);
+            if centre.failed.is_none() && (centre.flashover_s().is_some() || nearer) {
+                self.position = Position::Centre;
             }
         }
-        Ok(Ran { standing, made, course })
+        Ok(())
     }
 
     /// `shut_late`: the room as with the door open, shut at 400 °C; and once more, shut a minute after flashover.
@@ -122,7 +140,10 @@ impl Runner<'_, '_> {
         use super::super::scenarios::reason;
 
         let plan = self.whole.plan;
-        let standing = Standing::of(plan, self.origin.number, Scenario::ShutLate);
+        let standing = Standing {
+            position: self.position,
+            ..Standing::of(plan, self.origin.number, Scenario::ShutLate)
+        };
         let can_be_shut = plan.of_room[self.origin.number]
             .iter()
             .any(|&number| standing.share(plan, number) > 0.0 && !plan.openings[number].stays_open());
@@ -170,7 +191,7 @@ fn worst(ran: &[Ran]) -> Option<usize> {
 }
 
 /// Clause 2.13 as a function: corners of the worst scenario that flash over, and whether any other run does.
-pub(super) fn rate(corners: usize, any: bool) -> FlashoverRating {
+pub(in crate::assessment) fn rate(corners: usize, any: bool) -> FlashoverRating {
     match corners {
         4 => FlashoverRating::Expected,
         3 => FlashoverRating::Likely,
@@ -188,7 +209,17 @@ impl Study {
         clock: &Clock,
         watch: &mut dyn FnMut() -> ControlFlow<Stop>,
     ) -> Result<Self, NoStudy> {
-        let mut runner = Runner { whole, origin, clock, watch, done: Vec::new(), runs: 0, steps: 0 };
+        let mut runner = Runner {
+            whole,
+            origin,
+            clock,
+            watch,
+            done: Vec::new(),
+            position: Position::Corner,
+            runs: 0,
+            steps: 0,
+        };
+        runner.place()?;
         let wanted = |scenario: Scenario| asked.is_none_or(|asked| asked.contains(&scenario));
         let plan = whole.plan;
         let mut ran = Vec::new();
@@ -221,9 +252,14 @@ impl Study {
             elsewhere = flashes_elsewhere(&mut runner, &ran, governing)?;
         }
         let rating = rate(flashed, typically || elsewhere.is_some());
+        let holds = if rating == FlashoverRating::NotIndicated {
+            vec![holds(&mut runner, &standing, &corners)?]
+        } else {
+            Vec::new()
+        };
         let whole = series(&mut runner, &standing)?;
         let (runs, steps) = (runner.runs, runner.steps);
-        Ok(Self { ran, governing, whole, corners, shut_corners, rating, elsewhere, runs, steps })
+        Ok(Self { ran, governing, whole, corners, shut_corners, rating, elsewhere, holds, runs, steps })
     }
 
     /// The scenario that governs.
@@ -307,17 +343,33 @@ fn flashes_elsewhere(
     Ok(None)
 }
 
-/// The run that is shown: wider until the far rooms stay at rest, or as wide as it may be.
+/// More fire load in the governing scenario, at the corner of much fuel that comes nearest.
+fn holds(
+    runner: &mut Runner<'_, '_>,
+    standing: &Standing,
+    corners: &[Course],
+) -> Result<HoldsWhile, NoStudy> {
+    let ambient_k = runner.origin.ambient_k;
+    let near = |place: usize| corners.get(place).map_or(0.0, |course| course.nearness(ambient_k));
+    let corner = Corner::FOUR[usize::from(near(1) > near(0))];
+    super::holds::fire_load(runner.origin.contents.load.typical_mj_m2, |factor| {
+        let fuller = runner.origin.with_load(factor);
+        let (_, course) = runner.run_of(&fuller, standing, corner, Reach::FIRST, Depth::Flashover)?;
+        // What comes to no end does not hold.
+        Ok(course.flashover_s().is_some() || course.failed.is_some())
+    })
+}
+
+/// The run that is shown: once more as wide as it may be where the far rooms do not stay at rest.
 fn series(runner: &mut Runner<'_, '_>, standing: &Standing) -> Result<Ran, NoStudy> {
-    let mut reach = Reach::FIRST;
-    loop {
-        let (made, course) = runner.run(standing, Corner::TYPICAL, reach, Depth::Series)?;
-        let wider = reach.wider().filter(|_| course.far_stirred);
-        let Some(wider) = wider else {
+    let (made, course) = runner.run(standing, Corner::TYPICAL, Reach::FIRST, Depth::Series)?;
+    if course.far_stirred {
+        let (made, course) = runner.run(standing, Corner::TYPICAL, Reach::WIDEST, Depth::Series)?;
+        if course.failed.is_none() {
             return Ok(Ran { standing: standing.clone(), made, course });
-        };
-        reach = wider;
+        }
     }
+    Ok(Ran { standing: standing.clone(), made, course })
 }
 
 #[cfg(test)]

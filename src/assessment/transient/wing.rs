@@ -13,7 +13,7 @@ const SHUT_COST: u32 = 2;
 /// Far rooms are one mixed volume with the sum of their air and cracks. They count as at rest: a run in which they do
 /// not stay so is made again with a wider wing.
 #[derive(Debug, Clone, PartialEq, Eq)]
-pub(super) struct Wing {
+pub(in crate::assessment) struct Wing {
     /// Rooms one by one, by number; the room of origin first.
     pub near: Vec<usize>,
     /// Rooms that count as one.
@@ -22,7 +22,7 @@ pub(super) struct Wing {
 
 /// How far the near rooms reach.
 #[derive(Debug, Clone, Copy, PartialEq, Eq)]
-pub(super) struct Reach {
+pub(in crate::assessment) struct Reach {
     /// Sum of costs on the way.
     pub cost: u32,
     /// Most rooms.
@@ -33,15 +33,7 @@ impl Reach {
     /// Where every study begins: through one open and one shut opening.
     pub const FIRST: Self = Self { cost: OPEN_COST + SHUT_COST, rooms: 8 };
     /// As far as a study goes.
-    pub const WIDEST: Self = Self { cost: 12, rooms: 24 };
-
-    /// The next wider.
-    pub fn wider(self) -> Option<Self> {
-        (self != Self::WIDEST).then(|| Self {
-            cost: (self.cost + SHUT_COST).min(Self::WIDEST.cost),
-            rooms: (2 * self.rooms).min(Self::WIDEST.rooms),
-        })
-    }
+    pub const WIDEST: Self = Self { cost: 8, rooms: 16 };
 }
 
 impl Wing {

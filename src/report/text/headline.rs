@@ -6,7 +6,7 @@ use crate::assessment::findings::{
     BackdraftFinding, BackdraftRating, BeforeWater, BuildingFindings, FlashoverFinding, FlashoverRating,
     HoldsWhile, LargeSpaceFinding, Reason, RoomFindings,
 };
-use crate::domain::assumptions::Scenario;
+use crate::domain::assumptions::{Level, Scenario};
 use crate::domain::room::Hazard;
 
 /// The headline of a room.
@@ -48,10 +48,10 @@ pub fn building(findings: &BuildingFindings) -> String {
     let open = count(findings, |room| room.flashover.rating == FlashoverRating::NotAssessed);
 
     let mut sentence = match before {
-        0 => format!(
-            "In none of {} does the screen put flashover before water, as they are recorded",
-            rooms(all)
-        ),
+        0 => {
+            let by = if findings.level == Level::Screening { "does the screen" } else { "do the runs" };
+            format!("In none of {} {by} put flashover before water, as they are recorded", rooms(all))
+        }
         n if n == all && all == 1 => "Its one room may flash over before water is on the fire".to_owned(),
         n => format!("{n} of {} may flash over before water is on the fire", rooms(all)),
     };
