@@ -84,7 +84,10 @@ fn only_what_is_there(level: Option<Level>) -> Result<(), ApiError> {
 fn over_budget(steps: u64) -> ApiError {
     ApiError::new(
         Slug::OverBudget,
-        format!("The assessment takes more than the {steps} steps that are computed while somebody waits."),
+        format!(
+            "The assessment takes more than the {steps} steps that are computed while somebody waits. Level `screening` \
+             takes one a room."
+        ),
     )
 }
 

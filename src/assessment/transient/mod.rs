@@ -96,3 +96,36 @@ pub(in crate::assessment) fn findings(
         }
     }
 }
+
+#[cfg(test)]
+pub(in crate::assessment) use wing::Reach;
+
+/// One run with typical inputs, for tests.
+#[cfg(test)]
+pub(in crate::assessment) fn trial(
+    building: &crate::domain::Building,
+    origin: usize,
+    scenario: Scenario,
+    reach: Reach,
+) -> study::Ran {
+    use super::assumed::Account;
+    use super::clocks::Spans;
+    use super::plan::Plan;
+    use crate::catalogue::Catalogue;
+    use crate::domain::Assumptions;
+
+    let (catalogue, assumptions) = (Catalogue::embedded(), Assumptions::default());
+    let plan = Plan::of(building, catalogue);
+    let (spans, _) = Spans::of(building, &assumptions);
+    let rooms: Vec<_> = (0..building.rooms.len())
+        .map(|number| Inputs::of(number, &plan, catalogue, &assumptions, &mut Account::default()).ok())
+        .collect();
+    let whole = Whole { plan: &plan, rooms: &rooms, catalogue, assumptions: &assumptions };
+    let inputs = rooms[origin].as_ref().unwrap();
+    let standing = stand::Standing::of(&plan, origin, scenario);
+    let clock = Clock::of(inputs, spans);
+    let made = whole.network(inputs, &standing, network::Corner::TYPICAL, &clock, reach).unwrap();
+    let course =
+        course::follow(&made, 3600.0, course::Depth::Flashover, &mut || ControlFlow::Continue(())).unwrap();
+    study::Ran { standing, made, course }
+}
