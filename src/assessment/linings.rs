@@ -98,7 +98,11 @@ impl<'c> Lined<'c> {
 
     /// The surfaces of walls and ceiling that burn.
     pub fn burning(&self) -> impl Iterator<Item = &Surface> {
-        self.surfaces.iter().zip(&self.growths).filter(|(_, growth)| growth.is_some()).map(|(surface, _)| surface)
+        self.surfaces
+            .iter()
+            .zip(&self.growths)
+            .filter(|(_, growth)| growth.is_some())
+            .map(|(surface, _)| surface)
     }
 
     /// What the report says of each.

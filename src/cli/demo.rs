@@ -5,9 +5,9 @@ use std::sync::Arc;
 use serde::Deserialize;
 
 use super::{Failure, documents};
+use crate::domain::assumptions::Level;
 use crate::domain::ids::{AssessmentId, BuildingId};
 use crate::domain::time::Timestamp;
-use crate::domain::assumptions::Level;
 use crate::domain::{Assumptions, Caller};
 use crate::http::App;
 use crate::http::assessing::{Order, Record, make};

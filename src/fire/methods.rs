@@ -510,7 +510,10 @@ pub const ALL: &[Method] = &[
         quantity: "layer_temperature_c",
         unit: "C",
         sources: &[&sources::HESKESTAD_1984, &sources::ROCKETT_1976],
-        range: &["rooms in which a layer forms evenly: up to 5 times as long as wide, 300 m2", "gas up to 1500 K"],
+        range: &[
+            "rooms in which a layer forms evenly: up to 5 times as long as wide, 300 m2",
+            "gas up to 1500 K",
+        ],
         validation: "Compared with measured rooms in the record of the validation, quantity by quantity.",
     },
     Method {

@@ -41,7 +41,8 @@ impl Series {
     /// None where no run is kept.
     pub(super) fn of(found: &findings::TransientFinding) -> Option<Self> {
         let points = &found.series;
-        let list = |of: fn(&findings::Point) -> f64| points.iter().map(|point| Number::of(of(point))).collect();
+        let list =
+            |of: fn(&findings::Point) -> f64| points.iter().map(|point| Number::of(of(point))).collect();
         (!points.is_empty()).then(|| Self {
             scenario: found.scenario.into(),
             time_s: list(|point| point.at_s),

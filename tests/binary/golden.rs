@@ -59,7 +59,8 @@ fn results_of_the_district_move_only_with_the_engine_version() {
     let mut engine = String::new();
     for file in &files {
         let name = file.file_name().unwrap().to_string_lossy();
-        let levels: &[&str] = if RUN.contains(&&*name) { &["screening", "transient"] } else { &["screening"] };
+        let levels: &[&str] =
+            if RUN.contains(&&*name) { &["screening", "transient"] } else { &["screening"] };
         for level in levels {
             let report = assessed(file, level);
             engine = report["engine_version"].as_str().unwrap().to_owned();

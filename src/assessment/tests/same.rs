@@ -9,8 +9,8 @@ use super::super::testing::{building, opening, q, room};
 use super::super::{ENGINE_VERSION, RATING_RULE, assess};
 use super::{assessed, assessed_with};
 use crate::catalogue::Catalogue;
-use crate::domain::opening::OpeningKind::{Door, DoubleDoor, Gap, Window};
 use crate::domain::assumptions::Level;
+use crate::domain::opening::OpeningKind::{Door, DoubleDoor, Gap, Window};
 use crate::domain::{Assumptions, Building};
 
 /// A house whose rooms hang together in several ways.

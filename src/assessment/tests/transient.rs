@@ -43,7 +43,8 @@ fn a_furnished_room_with_its_door_open_to_outside_is_expected_to_flash_over() {
     assert!(runs.corners.len() == 4 && runs.corners.iter().all(|corner| corner.flashover_s.is_some()));
     let time_s = room.flashover.time_s.unwrap();
     assert!(time_s.low < time_s.typical && time_s.typical < time_s.high, "{time_s:?}");
-    let both = [room.flashover.time_to_600_c_s, room.flashover.time_to_20_kw_m2_s].map(|t| t.unwrap().typical);
+    let both =
+        [room.flashover.time_to_600_c_s, room.flashover.time_to_20_kw_m2_s].map(|t| t.unwrap().typical);
     assert_eq!(time_s.typical, both[0].min(both[1]));
 }
 
@@ -98,7 +99,10 @@ fn a_door_that_opens_into_the_shut_room_is_held_by_the_pressure_and_one_that_ope
 
     assert_eq!((inwards.swing, outwards.swing), (Some("in"), Some("out")));
     assert!(inwards.force_at_peak_n.typical > 0.0 && inwards.force_at_suction_n.typical < 0.0, "{inwards:?}");
-    assert!(outwards.force_at_peak_n.typical < 0.0 && outwards.force_at_suction_n.typical > 0.0, "{outwards:?}");
+    assert!(
+        outwards.force_at_peak_n.typical < 0.0 && outwards.force_at_suction_n.typical > 0.0,
+        "{outwards:?}"
+    );
 }
 
 #[test]
@@ -108,9 +112,10 @@ fn smoke_of_an_open_bedroom_reaches_the_hall_and_its_way_out_is_lost() {
 
     assert_eq!(runs.reached.iter().map(|reached| &reached.room).collect::<Vec<_>>(), [&key("hall")]);
     let lost = |room: &str, posture: &str| {
-        let found = runs.way_out.iter().find(|way| {
-            way.room == key(room) && way.posture == posture && (way.dose - 0.3).abs() < 1e-9
-        });
+        let found = runs
+            .way_out
+            .iter()
+            .find(|way| way.room == key(room) && way.posture == posture && (way.dose - 0.3).abs() < 1e-9);
         found.and_then(|way| way.lost_s).map(|band| band.typical)
     };
     let (bed_s, hall_s) = (lost("bed", "standing").unwrap(), lost("hall", "standing").unwrap());
@@ -127,8 +132,12 @@ fn every_class_of_crews_is_reached_in_its_order() {
     let crew = &of(&found, "den").1.crew;
 
     for scheme in ["donnelly", "foster_roberts", "utech"] {
-        let at_s: Vec<f64> =
-            crew.iter().filter(|c| c.scheme == scheme).filter_map(|c| c.reached_s).map(|t| t.typical).collect();
+        let at_s: Vec<f64> = crew
+            .iter()
+            .filter(|c| c.scheme == scheme)
+            .filter_map(|c| c.reached_s)
+            .map(|t| t.typical)
+            .collect();
         assert!(at_s.len() >= 3 && at_s.is_sorted(), "{scheme} {at_s:?}");
     }
 }

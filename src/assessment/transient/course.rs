@@ -8,9 +8,7 @@ use super::people::People;
 use crate::fire::constants::ICE_POINT_K;
 use crate::fire::flashover::{LIMIT_20_KW_M2_FLOOR, LIMIT_600_C_GAS_K};
 use crate::fire::tenability::TwoLayers;
-use crate::fire::two_zone::{
-    EventKind, Failed, FailureReason, Note, Plan, RoomState, Sample, Side, run,
-};
+use crate::fire::two_zone::{EventKind, Failed, FailureReason, Note, Plan, RoomState, Sample, Side, run};
 
 /// Samples of a run; every [`KEPT_EVERY`]th is kept where the run's series is.
 const SAMPLES: u32 = 720;
@@ -179,6 +177,8 @@ struct Recorder<'m> {
     /// When a flame last burned, s, and how warm the layer is, K.
     burned_s: f64,
     gas_k: f64,
+    /// When the first flame was first seen out though its fuel went on: a run that is ended early tells no events.
+    seen_out_s: Option<f64>,
     index: u32,
     course: Course,
 }
@@ -207,6 +207,7 @@ impl<'m> Recorder<'m> {
             before: None,
             burned_s: 0.0,
             gas_k: 0.0,
+            seen_out_s: None,
             index: 0,
             course: Course {
                 layer_600_c_s: None,
@@ -248,6 +249,13 @@ impl<'m> Recorder<'m> {
         self.gas_k = gas_k;
         if sample.fires.iter().any(|fire| fire.alight) {
             self.burned_s = at_s;
+        }
+
+        if let Some(first) = sample.fires.first()
+            && !first.alight
+            && first.fuel_kg_s > 0.0
+        {
+            self.seen_out_s = self.seen_out_s.or(Some(at_s));
         }
 
         let air = TwoLayers::from(origin);
@@ -312,13 +320,7 @@ impl<'m> Recorder<'m> {
 }
 
 /// A room that nothing has come to yet changes nobody.
-fn follow_people(
-    people: &mut Option<People>,
-    at_s: f64,
-    state: &RoomState,
-    ambient_k: f64,
-    origin: bool,
-) {
+fn follow_people(people: &mut Option<People>, at_s: f64, state: &RoomState, ambient_k: f64, origin: bool) {
     let stirred = state.upper.temperature_k > ambient_k + 1.0 || state.upper_extinction_1_m > 1e-3;
     match people {
         Some(people) => people.follow(at_s, state),
@@ -367,23 +369,18 @@ fn once(
     let recorder = std::cell::RefCell::new(Recorder::new(made, depth));
     let mut stopped = false;
     let mut steps = 0;
-    let ended = run(
-        &made.network,
-        &plan,
-        &mut |sample| recorder.borrow_mut().hear(sample),
-        &mut || {
-            steps += 1;
-            if watch().is_break() {
-                stopped = true;
-                return ControlFlow::Break(());
-            }
-            if recorder.borrow().enough() { ControlFlow::Break(()) } else { ControlFlow::Continue(()) }
-        },
-    );
+    let ended = run(&made.network, &plan, &mut |sample| recorder.borrow_mut().hear(sample), &mut || {
+        steps += 1;
+        if watch().is_break() {
+            stopped = true;
+            return ControlFlow::Break(());
+        }
+        if recorder.borrow().enough() { ControlFlow::Break(()) } else { ControlFlow::Continue(()) }
+    });
     if stopped {
         return Err(Stop);
     }
-    let Recorder { gas, floor, hot, mut course, .. } = recorder.into_inner();
+    let Recorder { gas, floor, hot, seen_out_s, mut course, .. } = recorder.into_inner();
     course.layer_600_c_s = gas.met_s;
     course.floor_20_kw_m2_s = floor.met_s;
     course.layer_400_c_s = hot.met_s;
@@ -401,6 +398,7 @@ fn once(
         Err(failed) if course.flashover_s().is_none() => course.failed = Some(failed),
         Err(_) => {}
     }
+    course.flame_out_s = course.flame_out_s.or(seen_out_s);
     Ok(course)
 }
 

@@ -43,9 +43,9 @@ pub(super) fn of(inputs: &Inputs<'_>, study: &Study, screened: &[Screened]) -> V
         Some(_) if screen.p95.to_lowest < NOT_INDICATED_RATIO => {
             Some("The run flashes over; by the screen the room has less than 0.6 times the heat that takes.")
         }
-        None if share >= EXPECTED_RATIO => {
-            Some("The run does not flash over; by the screen the room has more than 1.4 times the heat that takes.")
-        }
+        None if share >= EXPECTED_RATIO => Some(
+            "The run does not flash over; by the screen the room has more than 1.4 times the heat that takes.",
+        ),
         _ => None,
     };
     if let Some(words) = words {

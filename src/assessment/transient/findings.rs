@@ -1,8 +1,8 @@
 //! What the runs of a room say.
 
 use super::super::findings::{
-    Band, CornerFinding, CrewFinding, DoorForceFinding, GaveWayFinding, NotCovered, ReachedFinding, RunFinding,
-    TransientFinding, WayOutFinding,
+    Band, CornerFinding, CrewFinding, DoorForceFinding, GaveWayFinding, NotCovered, ReachedFinding,
+    RunFinding, TransientFinding, WayOutFinding,
 };
 use super::super::inputs::Inputs;
 use super::super::methods::figure;
@@ -42,10 +42,8 @@ pub(super) fn finding(inputs: &Inputs<'_>, study: &Study, screened: &[Screened])
         figures.push(figure("way_out_lost", "time_s", lost_s.typical, &none, true, Some(study.scenario())));
     }
     if let Some(door) = doors.first() {
-        let limits = door_force::klote_milke_limits(
-            leaf(inputs, &door.opening),
-            door.peak_pressure_pa.typical,
-        );
+        let limits =
+            door_force::klote_milke_limits(leaf(inputs, &door.opening), door.peak_pressure_pa.typical);
         let worst_n = door.force_at_peak_n.typical.max(door.force_at_suction_n.typical);
         figures.push(figure("door_opening_force", "force_n", worst_n, &limits, true, None));
     }
@@ -57,7 +55,11 @@ pub(super) fn finding(inputs: &Inputs<'_>, study: &Study, screened: &[Screened])
     TransientFinding {
         scenario: study.scenario(),
         runs: study.ran.iter().map(run).collect(),
-        corners: Corner::FOUR.iter().zip(&study.corners).map(|(corner, course)| at_corner(*corner, course)).collect(),
+        corners: Corner::FOUR
+            .iter()
+            .zip(&study.corners)
+            .map(|(corner, course)| at_corner(*corner, course))
+            .collect(),
         peak_pressure_pa: study.shut_band(|p| p.peak_pa),
         suction_pa: study.shut_band(|p| p.suction_pa),
         doors,
@@ -237,9 +239,7 @@ const fn cause(cause: Cause) -> &'static str {
 
 fn crew(study: &Study) -> Vec<CrewFinding> {
     let mut found = Vec::new();
-    for (scheme, name) in
-        Scheme::ALL.into_iter().zip(["donnelly", "foster_roberts", "utech"])
-    {
+    for (scheme, name) in Scheme::ALL.into_iter().zip(["donnelly", "foster_roberts", "utech"]) {
         for (place, class) in scheme.classes().iter().enumerate() {
             let of = |course: &Course| course.rooms[0].people.as_ref()?.crew.reached_s(scheme)[place];
             found.push(CrewFinding {
@@ -270,7 +270,8 @@ fn reached(inputs: &Inputs<'_>, study: &Study) -> Vec<ReachedFinding> {
             lowest_layer_m: room.lowest_layer_m,
         })
         .collect();
-    let at_s = |room: &ReachedFinding| room.smoke_s.or(room.fire_s).map_or(f64::INFINITY, |band| band.typical);
+    let at_s =
+        |room: &ReachedFinding| room.smoke_s.or(room.fire_s).map_or(f64::INFINITY, |band| band.typical);
     found.sort_by(|a, b| at_s(a).total_cmp(&at_s(b)).then_with(|| a.room.cmp(&b.room)));
     found
 }
@@ -302,7 +303,10 @@ fn not_covered(inputs: &Inputs<'_>, study: &Study) -> Vec<NotCovered> {
             "Fire that goes by the facade, ducts, voids, shafts not entered, or through walls and floors: rooms are reached \
              through openings only.",
         ),
-        item("rooms_not_named", "Rooms that are not named as reached were not shown to stay free of smoke or fire."),
+        item(
+            "rooms_not_named",
+            "Rooms that are not named as reached were not shown to stay free of smoke or fire.",
+        ),
         item("other_givings_way", "Light partitions, ceilings and roofs that give way."),
     ];
     if study.whole.made.rest().is_some() {

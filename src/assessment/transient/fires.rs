@@ -181,7 +181,9 @@ mod tests {
     fn gas_after_the_flame_is_as_much_as_the_screen_counts() {
         // By hand: half of typical heat released in 240 s of t² growth is 0.5 · Q · 80 s = 40 Q; half of Q fading in 80 s
         // is 40 Q too.
-        let Supply::HeatFed { without_flame, fades_s } = supply(false) else { panic!("solids are fed by heat") };
+        let Supply::HeatFed { without_flame, fades_s } = supply(false) else {
+            panic!("solids are fed by heat")
+        };
 
         assert!((without_flame * fades_s - 40.0).abs() < 1e-9);
     }

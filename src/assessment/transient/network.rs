@@ -184,7 +184,8 @@ impl<'a> Whole<'a> {
         let row = || self.catalogue.fuel(DEFAULT_FUEL).map(|row| &row.properties);
         let given = origin.contents.fuel.as_ref();
         let properties = given.or_else(row).ok_or("the catalogue lacks the fuel of the contents")?;
-        engine_fuel::fuel(properties).map_err(|_| "the formula of the fuel contradicts its yields or its heat")
+        engine_fuel::fuel(properties)
+            .map_err(|_| "the formula of the fuel contradicts its yields or its heat")
     }
 
     fn schedule(
@@ -255,10 +256,9 @@ fn sprinklers(origin: &Inputs<'_>) -> Vec<Sprinkler> {
 
 fn detector(watcher: &Watcher) -> Detector {
     let element = match watcher.acts {
-        Acts::Element(element) => Element::Heat {
-            rti_m05s05: element.rti_m05s05,
-            answers_k: element.activation_temperature_k,
-        },
+        Acts::Element(element) => {
+            Element::Heat { rti_m05s05: element.rti_m05s05, answers_k: element.activation_temperature_k }
+        }
         Acts::Rise { usual_k, .. } => Element::Rise(usual_k),
     };
     Detector { room: 0, from_fire_m: watcher.place.radius_m, element }

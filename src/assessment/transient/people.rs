@@ -53,7 +53,8 @@ impl People {
     /// Every line is passed, by dose as by sight.
     fn is_settled(&self) -> bool {
         [&self.standing, &self.crawling].iter().all(|way| {
-            way.gas().reached_s(Line::ThreeTenths).is_some() || way.heat().reached_s(Line::ThreeTenths).is_some()
+            way.gas().reached_s(Line::ThreeTenths).is_some()
+                || way.heat().reached_s(Line::ThreeTenths).is_some()
         })
     }
 }

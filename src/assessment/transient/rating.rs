@@ -3,9 +3,7 @@
 use std::borrow::Cow;
 
 use super::super::clocks::{Clock, before_water};
-use super::super::findings::{
-    Band, FlashoverFinding, FlashoverRating, NotCovered, Reason, TransientFinding,
-};
+use super::super::findings::{Band, FlashoverFinding, FlashoverRating, NotCovered, Reason, TransientFinding};
 use super::super::inputs::Inputs;
 use super::super::{hazards, large_spaces};
 use super::course::Course;
@@ -95,7 +93,10 @@ pub(super) fn no_study(none: &NoStudy) -> Reason {
             let scenario = crate::domain::word::Word::word(*scenario);
             Reason {
                 key: "no_convergence",
-                text: format!("no_convergence: the run of {scenario} came to no end; after {at_s:.0} s {why}").into(),
+                text: format!(
+                    "no_convergence: the run of {scenario} came to no end; after {at_s:.0} s {why}"
+                )
+                .into(),
             }
         }
     }

@@ -206,11 +206,8 @@ mod tests {
 
     #[test]
     fn floors_that_nobody_measured_lie_three_metres_apart_from_the_nearest_that_is() {
-        let level = |floor, metres| FloorLevel {
-            floor,
-            name: String::new(),
-            elevation_m: Elevation::new(metres),
-        };
+        let level =
+            |floor, metres| FloorLevel { floor, name: String::new(), elevation_m: Elevation::new(metres) };
         let recorded = [level(-1, -2.8), level(2, 7.5)];
 
         // By hand: 7.5 + 3; -2.8 - 3; with none recorded 3 each.

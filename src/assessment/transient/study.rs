@@ -91,9 +91,10 @@ impl Runner<'_, '_> {
         reach: Reach,
         depth: Depth,
     ) -> Result<(Made, Course), NoStudy> {
-        let made =
-            self.whole.network(origin, standing, corner, self.clock, reach).map_err(NoStudy::Unfit)?;
-        if let Some((_, _, course)) = self.done.iter().find(|(other, deep, _)| *deep == depth && *other == made) {
+        let made = self.whole.network(origin, standing, corner, self.clock, reach).map_err(NoStudy::Unfit)?;
+        if let Some((_, _, course)) =
+            self.done.iter().find(|(other, deep, _)| *deep == depth && *other == made)
+        {
             return Ok((made, course.clone()));
         }
         let horizon = self.origin.horizon;
@@ -157,9 +158,9 @@ impl Runner<'_, '_> {
         }
         let (_, open) = self.run(&standing, Corner::TYPICAL, Reach::FIRST, Depth::Flashover)?;
         let hot = open.layer_400_c_s.map(|at_s| (at_s, reason("at_400_c", "shut when the layer has 400 °C")));
-        let flashed = open.flashover_s().map(|at_s| {
-            (at_s + SHUT_LATE_AFTER_S, reason("after_flashover", "shut 60 s after flashover"))
-        });
+        let flashed = open
+            .flashover_s()
+            .map(|at_s| (at_s + SHUT_LATE_AFTER_S, reason("after_flashover", "shut 60 s after flashover")));
         let moments: Vec<_> = hot.into_iter().chain(flashed).collect();
         if moments.is_empty() {
             let reason = reason("never_hot", "the layer never has 400 °C: as with the door open");
