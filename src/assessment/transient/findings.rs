@@ -12,7 +12,7 @@ use super::network::Corner;
 use super::place;
 use super::shell::{Lean, is_mixed};
 use super::study::{Ran, Study};
-use super::{disagreements, stand};
+use super::disagreements;
 use crate::domain::Key;
 use crate::domain::opening::{Space, Swing as Recorded};
 use crate::domain::room::Place;
@@ -341,14 +341,13 @@ fn notes(study: &Study) -> Vec<&'static str> {
     for note in study.ran.iter().chain([&study.whole]).flat_map(|ran| &ran.course.notes) {
         match note {
             Note::PressureBeyondBuildings(0) => once(
-                "The pressure passes 10 kPa in a run: no real room holds that. It leaks more than was recorded, or something \
+                "The pressure is above 10 kPa in a run: no real room holds that. It leaks more than was recorded, or something \
                  gives way.",
             ),
-            Note::HotterThanTried(0) => once("The gas passes 1500 K, beyond what the physics is tried for."),
+            Note::HotterThanTried(0) => once("The gas is above 1500 K, beyond what the physics is tried for."),
             Note::FlameBeyondCeiling(0) => once("The flame is taller than the room."),
             _ => {}
         }
     }
-    let _ = stand::SHUT_LATE_K;
     notes
 }

@@ -47,7 +47,7 @@ pub(super) fn finding(
     let assessed = rating != FlashoverRating::NotAssessed;
     let criterion = |of: fn(&Course) -> Option<f64>| if assessed { study.band(of) } else { None };
     let order = time_s.map(|time_s| (time_s, clock.finding.water_on_fire_s));
-    let mut not_covered = not_covered(inputs, rating, !screened.clauses.is_empty());
+    let mut not_covered = not_covered(inputs, rating);
     not_covered.extend(found.not_covered.iter().cloned());
     let mut figures = screened.figures;
     figures.extend(found.figures.iter().cloned());
@@ -171,7 +171,7 @@ fn provisional_because(inputs: &Inputs<'_>, study: &Study) -> Vec<Cow<'static, s
 }
 
 /// What the runs leave out of flashover.
-fn not_covered(inputs: &Inputs<'_>, rating: FlashoverRating, _screened: bool) -> Vec<NotCovered> {
+fn not_covered(inputs: &Inputs<'_>, rating: FlashoverRating) -> Vec<NotCovered> {
     let item = |key, text: &'static str| NotCovered { key, text: text.into() };
     let mut left_out = vec![
         item("smouldering", "Smouldering before flames: the clock begins at established burning."),
