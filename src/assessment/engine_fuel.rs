@@ -1,4 +1,4 @@
-//! A fuel as the transient engine takes it: mass fractions of its elements, and the heat it
+//! A fuel of the catalogue as the engine takes it: mass fractions of its elements, and the heat it
 //! gives when it gets all the air it wants.
 
 use crate::domain::properties::{FuelProperties, PropertyFault};

@@ -8,11 +8,11 @@ use super::super::inputs::Inputs;
 use super::super::methods::figure;
 use super::super::scenarios::Screened;
 use super::course::{Course, GaveWay, RoomCourse};
+use super::disagreements;
 use super::network::Corner;
 use super::place;
 use super::shell::{Lean, is_mixed};
 use super::study::{Ran, Study};
-use super::disagreements;
 use crate::domain::Key;
 use crate::domain::opening::{Space, Swing as Recorded};
 use crate::domain::room::Place;
@@ -344,7 +344,9 @@ fn notes(study: &Study) -> Vec<&'static str> {
                 "The pressure is above 10 kPa in a run: no real room holds that. It leaks more than was recorded, or something \
                  gives way.",
             ),
-            Note::HotterThanTried(0) => once("The gas is above 1500 K, beyond what the physics is tried for."),
+            Note::HotterThanTried(0) => {
+                once("The gas is above 1500 K, beyond what the physics is tried for.")
+            }
             Note::FlameBeyondCeiling(0) => once("The flame is taller than the room."),
             _ => {}
         }

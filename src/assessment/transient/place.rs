@@ -99,3 +99,22 @@ pub(super) fn outside(inputs: &Inputs<'_>, study: &Study) -> Exceeded {
         },
     )
 }
+
+#[cfg(test)]
+mod tests {
+    use super::*;
+
+    #[test]
+    fn the_ends_are_those_of_the_record_of_the_validation() {
+        let record = include_str!("../../../tests/reference/validation_summary.json");
+        let record: serde_json::Value = serde_json::from_str(record).unwrap();
+        let set = ValidationSet::spanning(&ENDS);
+
+        for compared in set.compare(&ENDS[0]) {
+            let ranges = record["range"].as_array().unwrap();
+            let range = ranges.iter().find(|range| range["key"] == compared.number).unwrap();
+            assert_eq!(range["low"].as_f64(), compared.lowest, "{}", compared.number);
+            assert_eq!(range["high"].as_f64(), compared.highest, "{}", compared.number);
+        }
+    }
+}
