@@ -8,6 +8,7 @@ use std::ops::ControlFlow;
 use criterion::{Criterion, criterion_group, criterion_main};
 use sootline::assessment::assess;
 use sootline::catalogue::Catalogue;
+use sootline::domain::assumptions::Level;
 use sootline::domain::opening::{Opening, OpeningKind, Space};
 use sootline::domain::quantity::{Kind, Quantity};
 use sootline::domain::room::{FloorPlan, FuelPackage, Hazard, Lining, Linings, Place, RoomKind};
@@ -148,7 +149,7 @@ fn twenty_rooms() -> Building {
 }
 
 fn screening(c: &mut Criterion) {
-    let assumptions = Assumptions::default();
+    let assumptions = Assumptions { level: Some(Level::Screening), ..Assumptions::default() };
     let catalogue = Catalogue::embedded();
     for (name, house) in [("one room", one_room()), ("twenty rooms", twenty_rooms())] {
         c.bench_function(&format!("screening, {name}"), |b| {
@@ -157,5 +158,19 @@ fn screening(c: &mut Criterion) {
     }
 }
 
-criterion_group!(benches, screening);
+/// Every scenario and corner of every room, through the whole building.
+fn transient(c: &mut Criterion) {
+    let assumptions = Assumptions::default();
+    let catalogue = Catalogue::embedded();
+    let mut group = c.benchmark_group("transient");
+    group.sample_size(10);
+    for (name, house) in [("one room", one_room()), ("twenty rooms", twenty_rooms())] {
+        group.bench_function(name, |b| {
+            b.iter(|| assess(black_box(&house), catalogue, &assumptions, &mut || ControlFlow::Continue(())));
+        });
+    }
+    group.finish();
+}
+
+criterion_group!(benches, screening, transient);
 criterion_main!(benches);

@@ -381,14 +381,14 @@ fn figures(inputs: &Inputs<'_>, worst: &Starved) -> Vec<Figure> {
     ]
 }
 
-/// Clause 1.9.
+/// Clause 2.9.
 fn hazard_barred(inputs: &Inputs<'_>, found: BackdraftFinding) -> BackdraftFinding {
     match hazards::bar(inputs) {
         Some((key, words)) if found.rating == BackdraftRating::NotIndicated => BackdraftFinding {
             rating: BackdraftRating::CannotBeExcluded,
             reason: Some(Reason { key, text: format!("{key}: {words}").into() }),
             holds_while: Vec::new(),
-            clauses: vec!["1.1", "1.6", "1.9"],
+            clauses: vec!["2.1", "2.6", "2.9"],
             ..found
         },
         _ => found,
@@ -429,7 +429,7 @@ pub(super) fn bare(reason: Reason) -> BackdraftFinding {
         holds_while: Vec::new(),
         not_covered: Vec::new(),
         figures: Vec::new(),
-        clauses: vec!["1.1", "1.6"],
+        clauses: vec!["2.1", "2.6"],
     }
 }
 

@@ -1,10 +1,10 @@
 //! Cautions that travel with the findings.
 
-use super::findings::{Caution, FlashoverRating, Wanted};
+use super::findings::{Caution, FlashoverFinding, FlashoverRating, TransientFinding, Wanted};
 use super::hazards;
 use super::inputs::Inputs;
 use crate::domain::Building;
-use crate::domain::assumptions::Assumptions;
+use crate::domain::assumptions::{Assumptions, Level};
 use crate::domain::building::SprinklerState;
 use crate::domain::opening::{OpeningKind, Space};
 
@@ -23,13 +23,16 @@ const CONDITIONAL: Caution = caution(
 );
 
 /// Cautions for the building as a whole.
-pub(super) fn of_building(building: &Building, assumptions: &Assumptions) -> Vec<Caution> {
+pub(super) fn of_building(building: &Building, assumptions: &Assumptions, level: Level) -> Vec<Caution> {
     let mut cautions = vec![PLANNING_ONLY, CONDITIONAL];
     if collapses_early(building) {
         cautions.push(COLLAPSE);
     }
     if assumptions.ambient.wind_m_s.is_some_and(|wind| wind > 0.0) {
-        cautions.push(WIND_NOT_COMPUTED);
+        cautions.push(if level == Level::Screening { WIND_NOT_COMPUTED } else { WIND_COMPUTED });
+    }
+    if level != Level::Screening {
+        cautions.push(BY_SCREENING);
     }
     if building.sprinklers.state == SprinklerState::OutOfService {
         cautions.push(caution(
@@ -55,6 +58,16 @@ const WIND_NOT_COMPUTED: Caution = caution(
     "wind",
     "Wind is given but not computed at screening: it can drive fire through a room that stands open.",
 );
+const WIND_COMPUTED: Caution = caution(
+    "wind",
+    "Wind is computed as given, steady, on openings whose direction is recorded: gusts and openings of unknown direction can \
+     do worse.",
+);
+const BY_SCREENING: Caution = caution(
+    "by_screening",
+    "Backdraft, the filling with smoke, the strip of growth classes and what protection changes are by screening: they can \
+     differ from the runs.",
+);
 const WIND_EXPOSED: Caution = caution(
     "wind",
     "The room has windows or doors to outside: wind, taken as zero, can drive its fire inwards once they are open or broken.",
@@ -74,7 +87,12 @@ fn collapses_early(building: &Building) -> bool {
 }
 
 /// Cautions for one room, beside those of the building.
-pub(super) fn of_room(inputs: &Inputs<'_>, building: &[Caution], flashover: FlashoverRating) -> Vec<Caution> {
+pub(super) fn of_room(
+    inputs: &Inputs<'_>,
+    building: &[Caution],
+    flashover: &FlashoverFinding,
+    transient: Option<&TransientFinding>,
+) -> Vec<Caution> {
     let mut cautions = building.to_vec();
     let plan = inputs.plan;
     let exposed = plan.of_room[inputs.number].iter().any(|&number| {
@@ -98,11 +116,25 @@ pub(super) fn of_room(inputs: &Inputs<'_>, building: &[Caution], flashover: Flas
             "Walls or ceiling burn: the lining joins the fire and sets its growth.",
         ));
     }
-    if flashover == FlashoverRating::NotIndicated {
+    if flashover.rating == FlashoverRating::NotIndicated {
         cautions.push(caution(
             "not_indicated",
             "Not indicated holds only while the inputs named beside it stay so, and says nothing of what was not computed.",
         ));
+    }
+    if let Some(found) = transient {
+        if !found.disagreements.is_empty() {
+            cautions.push(caution(
+                "screening_disagrees",
+                "The screen and the runs differ by more than hand methods scatter: see the disagreements.",
+            ));
+        }
+        if found.place.iter().any(|number| !number.inside) {
+            cautions.push(caution(
+                "beyond_validation",
+                "The room and its fire lie outside the experiments that the runs were compared with: see its place.",
+            ));
+        }
     }
     cautions.extend(hazards::cautions(inputs));
     cautions

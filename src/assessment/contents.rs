@@ -84,6 +84,7 @@ pub(super) struct TakesFire {
 pub(super) struct Contents {
     pub use_key: String,
     pub way_out: bool,
+    pub sleeping: bool,
     pub load: Load,
     pub growth: Growth,
     pub heat_release_per_area_kw_m2: f64,
@@ -91,6 +92,8 @@ pub(super) struct Contents {
     pub radiative_share: f64,
     /// Of what the contents burn as.
     pub heat_of_combustion_kj_kg: f64,
+    /// What they burn as; none where it is not known.
+    pub fuel: Option<FuelProperties>,
     pub packages: Vec<Package>,
     pub pile: Option<Pile>,
     pub origin: Option<usize>,
@@ -153,6 +156,7 @@ impl Contents {
         Ok(Self {
             use_key: found.key().to_owned(),
             way_out: use_of.way_out,
+            sleeping: use_of.sleeping,
             load,
             growth,
             heat_release_per_area_kw_m2: use_of.heat_release_per_area_kw_m2,
@@ -160,6 +164,7 @@ impl Contents {
             radiative_share,
             heat_of_combustion_kj_kg: fuel
                 .map_or(CONTENTS_KJ_KG, |fuel| fuel.properties.heat_of_combustion_mj_kg * 1e3),
+            fuel: fuel.map(|fuel| fuel.properties.clone()),
             packages,
             pile,
             origin,

@@ -31,6 +31,8 @@ impl Gathered {
             building.water_available_l_min,
             &building.construction_type,
         ));
+        gathered
+            .add(&building.floors.iter().map(|floor| (floor.floor, floor.elevation_m)).collect::<Vec<_>>());
         for (opening, hole) in building.openings.iter().zip(&plan.openings) {
             gathered.add(&(
                 &opening.key,
@@ -40,6 +42,7 @@ impl Gathered {
                 opening.entry,
                 opening.glazing,
             ));
+            gathered.add(&(opening.sill_m, opening.fire_rating_min, opening.swing, opening.azimuth_deg));
         }
         gathered
     }

@@ -1,4 +1,4 @@
-//! How long a crew that opens up has got: not assessed by screening.
+//! How long a crew that opens up has got: not assessed yet.
 
 use super::findings::{EntryFinding, FlashoverRating, Reason};
 use super::inputs::Inputs;
@@ -6,18 +6,24 @@ use super::not_covered;
 use crate::domain::assumptions::Scenario;
 
 /// The finding: which openings a crew could use, and why there is no rating.
-pub(super) fn finding(inputs: &Inputs<'_>) -> EntryFinding {
+pub(super) fn finding(inputs: &Inputs<'_>, transient: bool) -> EntryFinding {
     let plan = inputs.plan;
     let usable = plan.of_room[inputs.number]
         .iter()
         .filter(|&&number| plan.building.openings[number].entry)
         .map(|&number| plan.opening_key(number).clone())
         .collect();
-    EntryFinding { openings_tried: usable, scenario: Some(Scenario::Entry), ..bare(needs_transient()) }
+    let reason = if transient { not_run() } else { needs_transient() };
+    EntryFinding { openings_tried: usable, scenario: Some(Scenario::Entry), ..bare(reason) }
 }
 
 fn needs_transient() -> Reason {
     Reason { key: "needs_level_transient", text: "needs level transient".into() }
+}
+
+fn not_run() -> Reason {
+    let text = "not_run: no run is made yet in which a crew opens the room";
+    Reason { key: "not_run", text: text.into() }
 }
 
 /// A finding of which only the reason is known.

@@ -204,6 +204,14 @@ words! {
         ItemIgnites = "item_ignites",
         /// Glass falls by its criterion.
         GlassFalls = "glass_falls",
+        /// A door burns through.
+        DoorBurnsThrough = "door_burns_through",
+        /// An opening gives way to pressure.
+        GivesWay = "gives_way",
+        /// The way out of the room is lost to a person upright.
+        WayOutLost = "way_out_lost",
+        /// The contents of another room take fire.
+        FireNextDoor = "fire_next_door",
         /// Hot layer 600 °C.
         Layer600C = "layer_600_c",
         /// Floor flux 20 kW/m².
@@ -434,6 +442,221 @@ pub struct BackdraftFinding {
     pub figures: Vec<Figure>,
     /// Clauses of the rating rule that gave the rating.
     pub clauses: Vec<&'static str>,
+}
+
+/// The room of origin at one moment of a run.
+#[derive(Debug, Clone, Copy, PartialEq)]
+pub struct Point {
+    /// On the fire clock.
+    pub at_s: f64,
+    /// Hot layer.
+    pub upper_temperature_c: f64,
+    /// Cool layer.
+    pub lower_temperature_c: f64,
+    /// Lower face of the hot layer above the floor.
+    pub layer_height_m: f64,
+    /// On the floor.
+    pub floor_flux_kw_m2: f64,
+    /// Of the hot layer, by volume of wet gas.
+    pub oxygen_percent: f64,
+    /// Of the hot layer.
+    pub carbon_monoxide_ppm: f64,
+    /// At the floor, against outside air.
+    pub pressure_pa: f64,
+    /// In the room.
+    pub heat_release_kw: f64,
+}
+
+/// A run of a scenario with typical inputs.
+#[derive(Debug, Clone, PartialEq)]
+pub struct RunFinding {
+    /// The scenario; `shut_late` may stand twice, by when the door was shut.
+    pub scenario: Scenario,
+    /// What there is to say of it.
+    pub reason: Option<Reason>,
+    /// Where the fire burned.
+    pub place: Place,
+    /// When everything that can be shut was shut.
+    pub shut_at_s: Option<f64>,
+    /// The earlier of both criteria.
+    pub flashover_s: Option<f64>,
+    /// Hot layer 600 °C.
+    pub time_to_600_c_s: Option<f64>,
+    /// Floor flux 20 kW/m².
+    pub time_to_20_kw_m2_s: Option<f64>,
+    /// When the first flame went out for want of oxygen.
+    pub flame_out_s: Option<f64>,
+    /// Hottest layer.
+    pub peak_layer_temperature_c: f64,
+    /// Most on the floor.
+    pub peak_floor_flux_kw_m2: f64,
+    /// Least in the hot layer, by volume.
+    pub least_oxygen_percent: f64,
+    /// Most in the hot layer.
+    pub peak_carbon_monoxide_ppm: f64,
+    /// Most in the room.
+    pub peak_heat_release_kw: f64,
+    /// Most above outside air, at the floor.
+    pub peak_pressure_pa: f64,
+    /// Most below it, as a negative number.
+    pub suction_pa: f64,
+}
+
+/// The governing scenario at one corner.
+#[derive(Debug, Clone, PartialEq)]
+pub struct CornerFinding {
+    /// Fire load and growth: `low` or `high`.
+    pub fire: &'static str,
+    /// Heat into linings, and leakage: `low` or `high`.
+    pub shell: &'static str,
+    /// Flashover.
+    pub flashover_s: Option<f64>,
+    /// Hottest layer.
+    pub peak_layer_temperature_c: f64,
+}
+
+/// A door of the shut room, pressed by the fire.
+#[derive(Debug, Clone, PartialEq)]
+pub struct DoorForceFinding {
+    /// The door.
+    pub opening: Key,
+    /// `in`, `out`, `both`, seen from this room; none where it is not recorded: then as it moves worst.
+    pub swing: Option<&'static str>,
+    /// Most out of the room.
+    pub peak_pressure_pa: Band,
+    /// Most into it, as a negative number.
+    pub suction_pa: Band,
+    /// Force at the handle that opens it while the pressure is highest; negative: it is thrown open.
+    pub force_at_peak_n: Band,
+    /// The same while the suction is strongest.
+    pub force_at_suction_n: Band,
+    /// One of both is above the 133 N that practice allows.
+    pub over_limit: bool,
+}
+
+/// When a place of the way out is lost.
+#[derive(Debug, Clone, PartialEq)]
+pub struct WayOutFinding {
+    /// The room.
+    pub room: Key,
+    /// `standing` or `crawling`.
+    pub posture: &'static str,
+    /// Dose that counts: 0.3, or 0.1 where people sleep or need help.
+    pub dose: f64,
+    /// When it is lost; none where it is not.
+    pub lost_s: Option<Band>,
+    /// `gas`, `heat`, `visibility` or `layer`, with typical inputs.
+    pub cause: Option<&'static str>,
+}
+
+/// When a published thermal class is reached 1 m above the floor of the room of origin.
+#[derive(Debug, Clone, PartialEq)]
+pub struct CrewFinding {
+    /// Whose classes.
+    pub scheme: &'static str,
+    /// The class.
+    pub class: &'static str,
+    /// When it is reached; none where it is not.
+    pub reached_s: Option<Band>,
+    /// Shortest stay that is published.
+    pub stay_from_s: f64,
+    /// Longest.
+    pub stay_to_s: f64,
+}
+
+/// A room that smoke or fire reaches through openings.
+#[derive(Debug, Clone, PartialEq)]
+pub struct ReachedFinding {
+    /// The room.
+    pub room: Key,
+    /// Smoke that one sees less than 10 m through hangs below its ceiling.
+    pub smoke_s: Option<Band>,
+    /// Its contents take fire.
+    pub fire_s: Option<Band>,
+    /// Hottest layer.
+    pub peak_layer_temperature_c: f64,
+    /// Lowest that the layer hangs.
+    pub lowest_layer_m: f64,
+}
+
+/// What happened to an opening in the governing scenario.
+#[derive(Debug, Clone, PartialEq)]
+pub struct GaveWayFinding {
+    /// The opening.
+    pub opening: Key,
+    /// When.
+    pub at_s: f64,
+    /// `glass_fell`, `burned_through` or `pressure`.
+    pub how: &'static str,
+}
+
+/// A number of the room beside those of the experiments.
+#[derive(Debug, Clone, PartialEq)]
+pub struct PlaceNumber {
+    /// Its name.
+    pub number: &'static str,
+    /// Here; none where it has no meaning.
+    pub value: Option<f64>,
+    /// Least of the experiments.
+    pub lowest: Option<f64>,
+    /// Greatest.
+    pub highest: Option<f64>,
+    /// It lies within.
+    pub inside: bool,
+}
+
+/// A figure of the screen that differs from the run by more than the published scatter.
+#[derive(Debug, Clone, PartialEq)]
+pub struct Disagreement {
+    /// What differs, unit last.
+    pub quantity: &'static str,
+    /// By screening.
+    pub screening: Option<f64>,
+    /// By the run.
+    pub transient: Option<f64>,
+    /// In a sentence.
+    pub words: String,
+}
+
+/// What the transient runs of a room of origin gave.
+#[derive(Debug, Clone, PartialEq)]
+pub struct TransientFinding {
+    /// The governing scenario.
+    pub scenario: Scenario,
+    /// Every scenario with typical inputs.
+    pub runs: Vec<RunFinding>,
+    /// The governing scenario at its corners.
+    pub corners: Vec<CornerFinding>,
+    /// Most above outside air in the room shut.
+    pub peak_pressure_pa: Option<Band>,
+    /// Most below it.
+    pub suction_pa: Option<Band>,
+    /// Doors of the room shut.
+    pub doors: Vec<DoorForceFinding>,
+    /// The way out in the governing scenario, the room of origin first.
+    pub way_out: Vec<WayOutFinding>,
+    /// Crews in the room of origin.
+    pub crew: Vec<CrewFinding>,
+    /// Rooms that smoke or fire reaches through openings, in order of time. Never a list of rooms that it does not reach.
+    pub reached: Vec<ReachedFinding>,
+    /// Openings that gave way.
+    pub gave_way: Vec<GaveWayFinding>,
+    /// The room's place beside the experiments.
+    pub place: Vec<PlaceNumber>,
+    /// Where the screen disagrees.
+    pub disagreements: Vec<Disagreement>,
+    /// What was not computed.
+    pub not_covered: Vec<NotCovered>,
+    /// What a reader should know of the runs.
+    pub notes: Vec<&'static str>,
+    /// The governing scenario, at no more than 121 times.
+    pub series: Vec<Point>,
+    /// Runs made.
+    pub run_count: usize,
+    /// Steps that they took.
+    pub step_count: usize,
+    /// Figures.
+    pub figures: Vec<Figure>,
 }
 
 /// How long a crew that opens up has got.
@@ -728,6 +951,8 @@ pub struct RoomFindings {
     pub backdraft: BackdraftFinding,
     /// How long has a crew that opens up.
     pub entry: EntryFinding,
+    /// The transient runs; none at screening, or where they gave no answer.
+    pub transient: Option<TransientFinding>,
     /// Every scenario's screen, in the order of [`Scenario::ALL`].
     pub scenarios: Vec<ScenarioFinding>,
     /// The strip slow / medium / fast / ultra-fast.

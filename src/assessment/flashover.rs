@@ -11,7 +11,7 @@ use super::judge::{CORNER, Judged, Limit, Required, enclosure, judge, moments, r
 use super::methods::figure;
 use super::scenarios::{Cap, Screened, governing, spread_of_leaks, spread_of_linings};
 use super::{contents, hazards, holds_while, large_spaces, not_covered, rules};
-use crate::domain::assumptions::GrowthClass;
+use crate::domain::assumptions::{GrowthClass, Scenario};
 use crate::fire::constants::{ICE_POINT_K, air_density_kg_m3};
 use crate::fire::hot_layer::{Vented, mccaffrey_limits, mccaffrey_rise_k};
 use crate::fire::linings::{conductance_limits, total_conductance_kw_k};
@@ -19,20 +19,22 @@ use crate::fire::oxygen::{self, burn_shut_limits};
 use crate::fire::ventilation::{kawagoe_limit_kw, kawagoe_limits};
 use crate::fire::{Exceeded, growth};
 
-/// The finding, and which of the scenarios governs.
+/// The finding, and which of the scenarios governs: by clause 2.5, unless the runs name one.
 pub(super) fn finding(
     inputs: &Inputs<'_>,
     screened: &[Screened],
     clock: &Clock,
     cap: Cap,
     large: &[&'static str],
+    governs: Option<Scenario>,
 ) -> (FlashoverFinding, Option<usize>) {
-    let Some(place) = governing(screened) else {
+    let named = governs.and_then(|one| screened.iter().position(|found| found.scenario == one));
+    let Some(place) = named.or_else(|| governing(screened)) else {
         let text = "no_scenario: none of the scenarios asked for can be screened for flashover";
         return (not_assessed(inputs, Reason { key: "no_scenario", text: text.into() }), None);
     };
     let found = &screened[place];
-    let mut clauses = vec!["1.1", "1.2", if found.state.is_open() { "1.3" } else { "1.4" }, "1.5"];
+    let mut clauses = vec!["2.1", "2.2", if found.state.is_open() { "2.3" } else { "2.4" }, "2.5"];
     let mut rating = found.rating;
     let mut why = found.reason.clone();
     let mut time_s = found.time_s();
@@ -43,14 +45,14 @@ pub(super) fn finding(
     {
         rating = FlashoverRating::Possible;
         why = Some(Reason { key, text: format!("{key}: {words}").into() });
-        clauses.push("1.9");
+        clauses.push("2.9");
     }
     if !large.is_empty() {
         rating = FlashoverRating::NotAssessed;
         why = Some(large_spaces::reason(large));
         time_s = None;
         because.retain(|input| input == "hazards");
-        clauses = vec!["1.1", "1.8"];
+        clauses = vec!["2.1", "2.8"];
     }
     let assessed = rating != FlashoverRating::NotAssessed;
     if time_s.is_none() && why.as_ref().is_none_or(|why| !tells_why_no_time(why)) && assessed {
@@ -122,7 +124,7 @@ pub(super) fn bare(reason: Reason) -> FlashoverFinding {
         holds_while: Vec::new(),
         not_covered: Vec::new(),
         figures: Vec::new(),
-        clauses: vec!["1.1"],
+        clauses: vec!["2.1"],
     }
 }
 

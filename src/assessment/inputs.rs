@@ -42,7 +42,7 @@ pub(super) fn ambient_k(assumptions: &Assumptions) -> f64 {
 }
 
 /// One room, resolved.
-#[derive(Debug)]
+#[derive(Debug, Clone)]
 pub(super) struct Inputs<'a> {
     pub number: usize,
     pub room: &'a Room,
@@ -97,6 +97,16 @@ impl<'a> Inputs<'a> {
             ambient_k: ambient_k(assumptions),
             horizon: Horizon::of(assumptions),
         })
+    }
+
+    /// The same room with its fire load times a factor.
+    pub fn with_load(&self, factor: f64) -> Self {
+        let mut fuller = self.clone();
+        let load = &mut fuller.contents.load;
+        load.p50_mj_m2 *= factor;
+        load.typical_mj_m2 *= factor;
+        load.p95_mj_m2 *= factor;
+        fuller
     }
 
     /// Hazards outside the methods that are there.

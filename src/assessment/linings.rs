@@ -96,6 +96,15 @@ impl<'c> Lined<'c> {
         Surfaces::of([walls, ceiling, floor])
     }
 
+    /// The surfaces of walls and ceiling that burn.
+    pub fn burning(&self) -> impl Iterator<Item = &Surface> {
+        self.surfaces
+            .iter()
+            .zip(&self.growths)
+            .filter(|(_, growth)| growth.is_some())
+            .map(|(surface, _)| surface)
+    }
+
     /// What the report says of each.
     pub fn findings(&self) -> Vec<LiningFinding> {
         (0..3)

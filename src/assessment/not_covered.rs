@@ -65,10 +65,7 @@ pub(super) fn flashover(
 /// What the backdraft screen leaves out.
 pub(super) fn backdraft(inputs: &Inputs<'_>) -> Vec<NotCovered> {
     let mut left_out = vec![
-        item(
-            "chain",
-            "Inflow, mixing, ignition, pressure and fireball after a door is opened: needs level transient.",
-        ),
+        item("chain", "Inflow, mixing, ignition, pressure and fireball after a door is opened."),
         item("smouldering", "Gas from smouldering before or instead of flames."),
         item("smoke_explosion", "Smoke that mixes with air in rooms next door before it ignites."),
         item("glass", "Glass that falls while the room is shut and lets air in."),
@@ -81,5 +78,5 @@ pub(super) fn backdraft(inputs: &Inputs<'_>) -> Vec<NotCovered> {
 
 /// What the entry finding leaves out at screening.
 pub(super) fn entry() -> Vec<NotCovered> {
-    vec![item("entry", "The course of the room after a crew opens it: needs level transient.")]
+    vec![item("entry", "The course of the room after a crew opens it.")]
 }

@@ -231,7 +231,7 @@ impl Wall {
 
 /// Doors from the room behind a door to outside, by the fewest: those that somebody who fled has opened.
 /// None where no doors lead out.
-fn way_to_outside(plan: &Plan<'_>, origin: usize, door: usize) -> Vec<usize> {
+pub(super) fn way_to_outside(plan: &Plan<'_>, origin: usize, door: usize) -> Vec<usize> {
     let Some(behind) = plan.openings[door].behind(origin) else { return Vec::new() };
     // For each room reached, the door and the room it was reached from.
     let mut reached_by: Vec<Option<(usize, usize)>> = vec![None; plan.rooms.len()];

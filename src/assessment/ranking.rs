@@ -1,4 +1,4 @@
-//! The rooms of a building, worst first: clause 1.12.
+//! The rooms of a building, worst first: clause 2.12.
 
 use std::cmp::{Ordering, Reverse};
 

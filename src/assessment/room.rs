@@ -2,7 +2,7 @@
 
 use super::assumed::Account;
 use super::backdraft::{self, starve_all};
-use super::clocks::{Clock, INCUBATION_S, Spans};
+use super::clocks::{Clock, INCUBATION_S};
 use super::findings::{
     Assumed, Band, Caution, ClockFinding, DetectedBy, FireFinding, FlashoverRating, Joined, Reason,
     RoomFindings, SmokeFinding,
@@ -13,6 +13,7 @@ use super::openings::Stand;
 use super::protection::{self, sprinkler_cap, sprinkler_credited};
 use super::scenarios::{Cap, Screened, screen_all};
 use super::timeline::{Course, timeline};
+use super::transient::{self, Studied, Study};
 use super::{cautions, entry, flashover, hazards, large_spaces, methods, smoke, water};
 use crate::domain::assumptions::{Assumptions, Scenario};
 use crate::domain::room::Place;
@@ -20,16 +21,20 @@ use crate::domain::{Key, Room};
 
 /// What is the same for every room of a building.
 pub(super) struct Common<'c> {
-    pub spans: Spans,
     pub assumptions: &'c Assumptions,
     pub assumed: &'c [Assumed],
     pub cautions: &'c [Caution],
 }
 
 /// Assesses one room.
-pub(super) fn assess(inputs: &Inputs<'_>, common: &Common<'_>, account: Account) -> RoomFindings {
+pub(super) fn assess(
+    inputs: &Inputs<'_>,
+    common: &Common<'_>,
+    account: Account,
+    clock: Clock,
+    studied: &Studied,
+) -> RoomFindings {
     let asked = common.assumptions.scenarios.as_deref();
-    let clock = Clock::of(inputs, common.spans);
     let large = large_spaces::because(inputs);
 
     let uncredited = screen_all(inputs, asked, Cap::NONE);
@@ -47,9 +52,12 @@ pub(super) fn assess(inputs: &Inputs<'_>, common: &Common<'_>, account: Account)
     );
     let smoke = smoke::finding(inputs, &shut);
     let protection = protection::findings(inputs, &uncredited, asked, &clock, !large.is_empty());
-    let (mut flashover, place) = flashover::finding(inputs, screened, &clock, cap, &large);
+    let governs = studied.done().map(Study::scenario);
+    let (flashover, place) = flashover::finding(inputs, screened, &clock, cap, &large, governs);
+    let (mut flashover, transient) =
+        transient::findings(inputs, studied, screened, &clock, &large, flashover);
     if credit.is_some() {
-        flashover.clauses.push("1.10");
+        flashover.clauses.push("2.10");
     }
     let backdraft = backdraft::finding(inputs, &starved, cap, shut.is_open());
     let mut scenarios = flashover::scenario_findings(inputs, screened);
@@ -60,8 +68,14 @@ pub(super) fn assess(inputs: &Inputs<'_>, common: &Common<'_>, account: Account)
     let governing = place.map(|place| &screened[place]);
     let assessed = flashover.rating != FlashoverRating::NotAssessed;
     let flame_out_s = starved.iter().find(|one| one.dies()).map(|one| (one.scenario, one.flame_out_s));
-    let course =
-        Course { clock: &clock, smoke: &smoke, governing: governing.filter(|_| assessed), flame_out_s, cap };
+    let course = Course {
+        clock: &clock,
+        smoke: &smoke,
+        governing: governing.filter(|_| assessed),
+        flame_out_s,
+        cap,
+        transient: transient.as_ref().map(|found| (&flashover, found)),
+    };
     let timeline = timeline(inputs, &course);
     let large_space = (!large.is_empty()).then(|| {
         large_spaces::finding(inputs, large, clock.finding.water_on_fire_s.typical, smoke.time_to_2_m_s)
@@ -71,7 +85,7 @@ pub(super) fn assess(inputs: &Inputs<'_>, common: &Common<'_>, account: Account)
         _ => flashover::strip_not_assessed(),
     };
     let water = water::finding(inputs);
-    let entry = entry::finding(inputs);
+    let entry = entry::finding(inputs, transient.is_some());
 
     let methods = methods::used(
         flashover
@@ -88,10 +102,11 @@ pub(super) fn assess(inputs: &Inputs<'_>, common: &Common<'_>, account: Account)
     RoomFindings {
         key: inputs.key.clone(),
         name: name_of(inputs.room),
-        cautions: cautions::of_room(inputs, common.cautions, flashover.rating),
+        cautions: cautions::of_room(inputs, common.cautions, &flashover, transient.as_ref()),
         flashover,
         backdraft,
         entry,
+        transient,
         scenarios,
         growth_strip,
         fire: fire_finding(inputs),
@@ -158,6 +173,7 @@ pub(super) fn unresolved(room: &Room, key: &Key, missing: &str, common: &Common<
         flashover: flashover::bare(reason.clone()),
         backdraft: backdraft::bare(reason.clone()),
         entry: entry::bare(reason.clone()),
+        transient: None,
         scenarios: Vec::new(),
         growth_strip: flashover::strip_not_assessed(),
         fire: FireFinding {

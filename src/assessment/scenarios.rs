@@ -266,7 +266,7 @@ fn glass_falls_s(
     reached.map_or(0.0, |at_s| clock.at_s(at_s))
 }
 
-/// The scenario that governs: clause 1.5; of equals the one with more heat over what is required, then the first.
+/// The scenario that governs: clause 2.5; of equals the one with more heat over what is required, then the first.
 pub(super) fn governing(screened: &[Screened]) -> Option<usize> {
     let rank = |s: &Screened| rules::flashover_severity(s.rating);
     let time = |s: &Screened| s.time_s().map_or(f64::INFINITY, |band| band.typical);

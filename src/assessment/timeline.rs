@@ -1,7 +1,9 @@
 //! Every milestone on both clocks.
 
 use super::clocks::{Clock, crew_clock_s};
-use super::findings::{Band, FlashoverRating, Milestone, MilestoneKind, SmokeFinding};
+use super::findings::{
+    Band, FlashoverFinding, FlashoverRating, Milestone, MilestoneKind, SmokeFinding, TransientFinding,
+};
 use super::inputs::Inputs;
 use super::judge::FireClock;
 use super::scenarios::{Cap, Screened};
@@ -17,6 +19,8 @@ pub(super) struct Course<'c> {
     /// When the flame of the shut room dies.
     pub flame_out_s: Option<(Scenario, Band)>,
     pub cap: Cap,
+    /// What the runs gave, in place of the screen's governing scenario.
+    pub transient: Option<(&'c FlashoverFinding, &'c TransientFinding)>,
 }
 
 /// The milestones in order of their typical time.
@@ -60,11 +64,15 @@ pub(super) fn timeline(inputs: &Inputs<'_>, course: &Course<'_>) -> Vec<Mileston
         let package = inputs.contents.packages[taken.package].key.clone();
         list.push(MilestoneKind::ItemIgnites, at_s, None, Some(package));
     }
-    if let Some(found) = course.governing {
-        list.governing(inputs, found, course.cap);
-    }
-    if let Some((scenario, at_s)) = course.flame_out_s {
-        list.push(MilestoneKind::FlameOut, at_s, Some(scenario), None);
+    if let Some((flashover, found)) = course.transient {
+        list.transient(flashover, found);
+    } else {
+        if let Some(found) = course.governing {
+            list.governing(inputs, found, course.cap);
+        }
+        if let Some((scenario, at_s)) = course.flame_out_s {
+            list.push(MilestoneKind::FlameOut, at_s, Some(scenario), None);
+        }
     }
     list.milestones.sort_by(|a, b| a.fire_clock_s.typical.total_cmp(&b.fire_clock_s.typical));
     list.milestones
@@ -114,6 +122,41 @@ impl List {
                     Some(next.opening.clone()),
                 );
             }
+        }
+    }
+
+    fn transient(&mut self, flashover: &FlashoverFinding, found: &TransientFinding) {
+        let scenario = Some(found.scenario);
+        let moments = [
+            (MilestoneKind::Layer600C, flashover.time_to_600_c_s),
+            (MilestoneKind::Floor20KwM2, flashover.time_to_20_kw_m2_s),
+            (MilestoneKind::Flashover, flashover.time_s),
+        ];
+        for (kind, at_s) in moments {
+            if let Some(at_s) = at_s {
+                self.push(kind, at_s, scenario, None);
+            }
+        }
+        for gave_way in &found.gave_way {
+            let kind = match gave_way.how {
+                "glass_fell" => MilestoneKind::GlassFalls,
+                "burned_through" => MilestoneKind::DoorBurnsThrough,
+                _ => MilestoneKind::GivesWay,
+            };
+            self.push(kind, exactly(gave_way.at_s), scenario, Some(gave_way.opening.clone()));
+        }
+        let lost = found.way_out.iter().find(|way| way.posture == "standing");
+        if let Some(at_s) = lost.and_then(|way| way.lost_s) {
+            self.push(MilestoneKind::WayOutLost, at_s, scenario, None);
+        }
+        for reached in &found.reached {
+            if let Some(at_s) = reached.fire_s {
+                self.push(MilestoneKind::FireNextDoor, at_s, scenario, Some(reached.room.clone()));
+            }
+        }
+        let run = found.runs.iter().find(|run| run.scenario == found.scenario);
+        if let Some(at_s) = run.and_then(|run| run.flame_out_s) {
+            self.push(MilestoneKind::FlameOut, exactly(at_s), scenario, None);
         }
     }
 

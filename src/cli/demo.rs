@@ -5,6 +5,7 @@ use std::sync::Arc;
 use serde::Deserialize;
 
 use super::{Failure, documents};
+use crate::domain::assumptions::Level;
 use crate::domain::ids::{AssessmentId, BuildingId};
 use crate::domain::time::Timestamp;
 use crate::domain::{Assumptions, Caller};
@@ -85,7 +86,7 @@ pub enum Loaded {
     LeftAlone,
 }
 
-/// Fills an empty inventory and assesses every building of it.
+/// Fills an empty inventory and screens every building of it.
 pub async fn load(app: &App) -> Result<Loaded, Failure> {
     let caller = Caller::local();
     if !app.store.is_empty(&caller).await? {
@@ -119,7 +120,8 @@ async fn add(app: &App, caller: &Caller, entry: &Entry) -> Result<usize, Failure
     let record = Record { id: assessment, building: id, revision: saved.head.revision };
     let order = Order {
         building: Arc::clone(&saved.building),
-        assumptions: Assumptions::default(),
+        // By screening, so that the service answers at once: anyone may ask for more.
+        assumptions: Assumptions { level: Some(Level::Screening), ..Assumptions::default() },
         record: Some(record),
         at,
     };

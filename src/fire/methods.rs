@@ -504,6 +504,19 @@ pub const ALL: &[Method] = &[
         validation: "A grading of the public supply for hours, not a rate of attack.",
     },
     Method {
+        key: "two_layer_network",
+        title: "Two layers in every room of a network",
+        equation: "mass, energy and species of each layer, one pressure a room; plumes by Heskestad, vents by Bernoulli, conduction into linings, grey radiation, yields by the global equivalence ratio",
+        quantity: "layer_temperature_c",
+        unit: "C",
+        sources: &[&sources::HESKESTAD_1984, &sources::ROCKETT_1976],
+        range: &[
+            "rooms in which a layer forms evenly: up to 5 times as long as wide, 300 m2",
+            "gas up to 1500 K",
+        ],
+        validation: "Compared with measured rooms in the record of the validation, quantity by quantity.",
+    },
+    Method {
         key: "dose_of_asphyxiants",
         title: "Dose of gases that stun by ISO 13571 and Purser",
         equation: "FED = integral of (([CO]/35000 + [HCN]^2.36/1.2e6) v + exp(0.54 (20.9 - [O2]) - 8.13)) dt, ppm, % and min; v = exp([CO2]/5) above 2 %; low oxygen below 20 %",
@@ -556,7 +569,7 @@ pub const ALL: &[Method] = &[
     Method {
         key: "crew_thermal_classes",
         title: "Published thermal classes of crews at 1 m",
-        equation: "first time gas or radiation goes beyond the limits of a class",
+        equation: "first time gas or radiation exceeds the limits of the class before",
         quantity: "time_s",
         unit: "s",
         sources: &[&sources::DONNELLY_2006, &sources::FOSTER_ROBERTS_1994, &sources::UTECH_1973],

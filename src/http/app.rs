@@ -45,9 +45,9 @@ impl Ids for UniqueIds {
     }
 }
 
-/// Most steps of an assessment that somebody waits for. A step is what `assess` counts, one
-/// room at screening: the largest building fits, work of hours does not.
-pub const INTERACTIVE_STEPS: u64 = 100_000;
+/// Most steps of an assessment that somebody waits for. A step is what `assess` counts: one room,
+/// and at level transient each step of the solver. A building of some forty rooms fits.
+pub const INTERACTIVE_STEPS: u64 = 1_000_000;
 
 /// Most work of a simulation that somebody waits for: solver steps times rooms. A day of a hundred
 /// rooms takes about half of it, whether at rest or after a fire.

@@ -67,14 +67,14 @@ pub async fn make(app: &App, order: Order) -> Result<Made, ApiError> {
 /// A level that this version cannot compute is refused, never answered with a lower one.
 fn only_what_is_there(level: Option<Level>) -> Result<(), ApiError> {
     match level {
-        None | Some(Level::Screening) => Ok(()),
-        Some(Level::Transient | Level::Sampled) => {
-            let detail = "This level is not available in this version yet; `screening` is.";
+        None | Some(Level::Screening | Level::Transient) => Ok(()),
+        Some(Level::Sampled) => {
+            let detail = "This level is not available in this version yet; `transient` is.";
             let fault = Invalid {
                 pointer: Pointer::root().member("assumptions").member("level"),
                 code: "not_available",
                 detail: detail.to_owned(),
-                suggestion: Some("screening".to_owned()),
+                suggestion: Some("transient".to_owned()),
             };
             Err(invalid(vec![fault]))
         }
@@ -84,7 +84,10 @@ fn only_what_is_there(level: Option<Level>) -> Result<(), ApiError> {
 fn over_budget(steps: u64) -> ApiError {
     ApiError::new(
         Slug::OverBudget,
-        format!("The assessment takes more than the {steps} steps that are computed while somebody waits."),
+        format!(
+            "The assessment takes more than the {steps} steps that are computed while somebody waits. Level `screening` \
+             takes one a room."
+        ),
     )
 }
 

@@ -21,6 +21,7 @@ pub mod stored;
 pub mod table;
 pub mod text;
 pub mod timeline;
+pub mod transient;
 pub mod words;
 
 #[cfg(test)]

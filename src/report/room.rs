@@ -15,6 +15,7 @@ use super::number::{Exact, Number};
 use super::protection::{HazardFound, LargeSpace, LiningFound, Protection, Water};
 use super::text::headline;
 use super::timeline::{Clock, GrowthStep, Milestone};
+use super::transient::{Series, Transient};
 use super::words::RoomKindWord;
 use crate::assessment::findings;
 use crate::domain::{Named, Room};
@@ -109,9 +110,12 @@ pub struct RoomBody {
     pub wanted: Vec<Wanted>,
     /// Keys of the methods that the figures name.
     pub method_keys: Vec<&'static str>,
+    /// What the transient runs gave; null at level screening, and where they gave no answer.
+    #[schema(required)]
+    pub transient: Option<Transient>,
     /// Time series of the governing scenario; null at level screening.
-    #[schema(required, value_type = Option<Object>)]
-    pub series: Option<()>,
+    #[schema(required)]
+    pub series: Option<Series>,
     /// Where to go from here.
     pub links: RoomLinks,
 }
@@ -146,7 +150,8 @@ impl RoomBody {
             linings: each(&found.linings),
             wanted: each(&found.wanted),
             method_keys: found.methods.iter().map(|method| method.key).collect(),
-            series: None,
+            transient: found.transient.as_ref().map(Into::into),
+            series: found.transient.as_ref().and_then(Series::of),
             links: RoomLinks::of(head, found.key.as_str()),
         }
     }

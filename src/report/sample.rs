@@ -59,7 +59,7 @@ pub fn flashover() -> FlashoverFinding {
             figure("babrauskas_flashover", "required_heat_release_kw", 1909.376),
             figure("thomas_flashover", "required_heat_release_kw", f64::NAN),
         ],
-        clauses: vec!["1.2"],
+        clauses: vec!["2.2"],
     }
 }
 
@@ -88,7 +88,7 @@ pub fn backdraft() -> BackdraftFinding {
         holds_while: Vec::new(),
         not_covered: Vec::new(),
         figures: vec![figure("excess_fuel_gas", "excess_fuel_mj_kg", 3.456_78)],
-        clauses: vec!["1.7"],
+        clauses: vec!["2.7"],
     }
 }
 
@@ -127,6 +127,7 @@ pub fn room(name: &str) -> RoomFindings {
         flashover: flashover(),
         backdraft: backdraft(),
         entry: entry(),
+        transient: None,
         scenarios: vec![ScenarioFinding {
             scenario: Scenario::DoorOpen,
             rating: FlashoverRating::Likely,

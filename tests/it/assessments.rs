@@ -29,8 +29,8 @@ async fn an_assessment_is_kept_as_it_was_served() {
         ("assessment_id", json!("019ac000-0000-7000-8000-000000000002")),
         ("building_id", json!("019ac000-0000-7000-8000-000000000001")),
         ("building_revision", json!(1)),
-        ("level", json!("screening")),
-        ("rating_rule", json!(1)),
+        ("level", json!("transient")),
+        ("rating_rule", json!(2)),
         ("created_at", json!(NOW)),
     ] {
         assert_eq!(report[member], value, "{member}");
@@ -172,8 +172,8 @@ async fn a_level_that_is_not_there_yet_is_refused_and_not_replaced() {
     let app = TestApp::new().await;
     let building = entered(&app, small()).await;
 
-    for level in ["transient", "sampled"] {
-        let body = json!({ "assumptions": { "level": level } });
+    {
+        let body = json!({ "assumptions": { "level": "sampled" } });
         let kept = app.post(&format!("{building}/assessments"), body.clone()).await;
         let sent = app.post("/v1/assess", set(body, "/building", small())).await;
 
@@ -183,7 +183,7 @@ async fn a_level_that_is_not_there_yet_is_refused_and_not_replaced() {
             assert!(
                 problem["errors"][0]["detail"].as_str().unwrap().contains("not available in this version")
             );
-            assert_eq!(problem["errors"][0]["suggestion"], "screening");
+            assert_eq!(problem["errors"][0]["suggestion"], "transient");
         }
     }
 }
@@ -216,11 +216,13 @@ async fn assumptions_are_checked_and_echoed() {
 }
 
 #[tokio::test]
-async fn the_largest_building_fits_the_interactive_budget() {
+async fn the_largest_building_fits_the_interactive_budget_by_screening() {
     let app = TestApp::new().await;
     let rooms: Vec<_> = (0..500).map(|number| room(&format!("r{number}"))).collect();
 
-    let reply = app.post("/v1/assess", json!({ "building": { "name": "All", "rooms": rooms } })).await;
+    let assumptions = json!({ "level": "screening" });
+    let asked = json!({ "building": { "name": "All", "rooms": rooms }, "assumptions": assumptions });
+    let reply = app.post("/v1/assess", asked).await;
 
     assert_eq!(reply.status, 200, "{}", &reply.text()[..reply.text().len().min(500)]);
     assert_eq!(reply.value()["rooms"].as_array().unwrap().len(), 500);

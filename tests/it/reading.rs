@@ -30,9 +30,16 @@ pub fn texts(value: &Value, path: &str, each: &mut impl FnMut(&str, &str)) {
 /// Significant digits of a finding, by the wire contract.
 const DIGITS: usize = 4;
 
-/// Members that echo what was given; a version's or a digit's number is no finding either.
-const ECHOED: [&str; 5] =
-    ["/height_m", "/available_l_min", "/fractile", "/building_revision", "/assumptions/value"];
+/// Members that echo what was given; nor is a count, or a version's number, a finding.
+const ECHOED: [&str; 7] = [
+    "/height_m",
+    "/available_l_min",
+    "/fractile",
+    "/building_revision",
+    "/assumptions/value",
+    "/run_count",
+    "/step_count",
+];
 
 /// Every number that has more digits than a finding may have, with its path.
 pub fn not_rounded(value: &Value, path: &str, each: &mut impl FnMut(&str, f64)) {

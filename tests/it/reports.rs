@@ -9,6 +9,7 @@ use serde_json::Value;
 
 use sootline::assessment::assess;
 use sootline::catalogue::Catalogue;
+use sootline::domain::assumptions::Level;
 use sootline::domain::{Assumptions, Building};
 use sootline::fire::methods;
 use sootline::report::table::COLUMNS;
@@ -35,8 +36,10 @@ fn building(file: &Path) -> Building {
     }
 }
 
+/// By screening, but for those that are quickly run.
 fn report(building: &Building) -> BuildingReport {
-    let assumptions = Assumptions::default();
+    let level = if building.rooms.len() <= 4 { Level::Transient } else { Level::Screening };
+    let assumptions = Assumptions { level: Some(level), ..Assumptions::default() };
     let found =
         assess(building, Catalogue::embedded(), &assumptions, &mut || ControlFlow::Continue(())).unwrap();
     building_report(&found, &Head::unsaved(building, &assumptions))

@@ -1,7 +1,7 @@
 //! Fires of a run as the engine takes them.
 
+use super::super::engine_fuel::fuel;
 use super::Note;
-use super::fuel::fuel;
 use super::network::{Making, kelvin};
 use crate::domain::Pointer;
 use crate::domain::properties::FuelProperties;

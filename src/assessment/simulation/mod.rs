@@ -6,7 +6,6 @@
 
 mod burning;
 mod devices;
-mod fuel;
 mod gas;
 mod network;
 mod notes;

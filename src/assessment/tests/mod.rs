@@ -7,6 +7,7 @@ mod openings;
 mod protection;
 mod ratings;
 mod same;
+mod transient;
 mod trends;
 
 use std::ops::ControlFlow;
@@ -14,11 +15,14 @@ use std::ops::ControlFlow;
 use super::assess;
 use super::findings::{BuildingFindings, RoomFindings, ScenarioFinding};
 use crate::catalogue::Catalogue;
-use crate::domain::assumptions::Scenario;
+use crate::domain::assumptions::{Level, Scenario};
 use crate::domain::{Assumptions, Building};
 
+/// By screening, unless another level is asked for.
 fn assessed_with(building: &Building, assumptions: &Assumptions) -> BuildingFindings {
-    assess(building, Catalogue::embedded(), assumptions, &mut || ControlFlow::Continue(())).unwrap()
+    let level = assumptions.level.unwrap_or(Level::Screening);
+    let assumptions = Assumptions { level: Some(level), ..assumptions.clone() };
+    assess(building, Catalogue::embedded(), &assumptions, &mut || ControlFlow::Continue(())).unwrap()
 }
 
 fn assessed(building: &Building) -> BuildingFindings {

@@ -9,6 +9,7 @@ use super::super::testing::{building, opening, q, room};
 use super::super::{ENGINE_VERSION, RATING_RULE, assess};
 use super::{assessed, assessed_with};
 use crate::catalogue::Catalogue;
+use crate::domain::assumptions::Level;
 use crate::domain::opening::OpeningKind::{Door, DoubleDoor, Gap, Window};
 use crate::domain::{Assumptions, Building};
 
@@ -73,7 +74,8 @@ fn the_digest_follows_the_inputs_and_nothing_else() {
 #[test]
 fn work_stops_as_soon_as_nobody_wants_it() {
     let mut asked = 0;
-    let answer = assess(&house(), Catalogue::embedded(), &Assumptions::default(), &mut || {
+    let screening = Assumptions { level: Some(Level::Screening), ..Assumptions::default() };
+    let answer = assess(&house(), Catalogue::embedded(), &screening, &mut || {
         asked += 1;
         if asked < 3 { ControlFlow::Continue(()) } else { ControlFlow::Break(Stop) }
     });

@@ -4,9 +4,9 @@
 use super::span::about;
 use crate::assessment::findings::{
     BackdraftFinding, BackdraftRating, BeforeWater, BuildingFindings, FlashoverFinding, FlashoverRating,
-    HoldsWhile, LargeSpaceFinding, Reason, RoomFindings,
+    HoldsWhile, LargeSpaceFinding, Reason, RoomFindings, TransientFinding,
 };
-use crate::domain::assumptions::Scenario;
+use crate::domain::assumptions::{Level, Scenario};
 use crate::domain::room::Hazard;
 
 /// The headline of a room.
@@ -17,6 +17,9 @@ pub fn room(room: &RoomFindings) -> String {
     };
     if let Some(clause) = backdraft(&room.backdraft, room.flashover.rating) {
         sentence.push_str(clause);
+    }
+    if let Some(lost_s) = room.transient.as_ref().and_then(way_out_lost_s) {
+        sentence.push_str(&format!("; somebody upright in it has lost the way out after {}", about(lost_s)));
     }
     if room.wanted.iter().any(|wanted| wanted.key == "openings") {
         sentence.push_str("; its openings are not recorded");
@@ -29,6 +32,12 @@ pub fn room(room: &RoomFindings) -> String {
     }
     sentence.push('.');
     sentence
+}
+
+/// When the room of origin is lost to a person upright, with typical inputs.
+fn way_out_lost_s(found: &TransientFinding) -> Option<f64> {
+    let first = found.way_out.iter().find(|way| way.posture == "standing")?;
+    first.lost_s.map(|lost_s| lost_s.typical)
 }
 
 /// The headline of a building: how many rooms, and the worst of them.
@@ -48,10 +57,10 @@ pub fn building(findings: &BuildingFindings) -> String {
     let open = count(findings, |room| room.flashover.rating == FlashoverRating::NotAssessed);
 
     let mut sentence = match before {
-        0 => format!(
-            "In none of {} does the screen put flashover before water, as they are recorded",
-            rooms(all)
-        ),
+        0 => {
+            let by = if findings.level == Level::Screening { "does the screen" } else { "do the runs" };
+            format!("In none of {} {by} put flashover before water, as they are recorded", rooms(all))
+        }
         n if n == all && all == 1 => "Its one room may flash over before water is on the fire".to_owned(),
         n => format!("{n} of {} may flash over before water is on the fire", rooms(all)),
     };
