@@ -609,16 +609,18 @@ impl Look {
             }
             // A mixed zone keeps two equal halves; a vanishing layer changes places with as much of the other.
             let (hot_kg, cool_kg) = (inside.upper_kg.max(0.0), inside.lower_kg.max(0.0));
-            let (gives_hot, gives_cool) =
-                if room.mixed { (hot_kg, cool_kg) } else { (hot_kg.min(cool_kg), hot_kg.min(cool_kg)) };
-            for (from, gives_kg, temperature_k) in [(0, gives_hot, now.upper_k), (1, gives_cool, now.lower_k)]
-            {
+            let rate_1_s = share / MIXES_S;
+            let smaller = usize::from(cool_kg < hot_kg);
+            for (from, temperature_k) in [(0, now.upper_k), (1, now.lower_k)] {
+                let by = if room.mixed { from } else { smaller };
+                let mut slopes = [0.0; VENT_WAYS];
+                slopes[2 + by] = rate_1_s;
                 self.transfers.push(Transfer {
                     from: Some((index, from)),
                     to: Some((index, 1 - from)),
-                    mass_kg_s: share * gives_kg / MIXES_S,
-                    slopes: [0.0; VENT_WAYS],
-                    rooms: [None, None],
+                    mass_kg_s: rate_1_s * [hot_kg, cool_kg][by],
+                    slopes,
+                    rooms: [Some(index), None],
                     temperature_k,
                 });
             }
