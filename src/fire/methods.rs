@@ -569,7 +569,7 @@ pub const ALL: &[Method] = &[
     Method {
         key: "crew_thermal_classes",
         title: "Published thermal classes of crews at 1 m",
-        equation: "first time gas or radiation exceeds the limits of the class before",
+        equation: "first time gas or radiation goes beyond the limits of a class",
         quantity: "time_s",
         unit: "s",
         sources: &[&sources::DONNELLY_2006, &sources::FOSTER_ROBERTS_1994, &sources::UTECH_1973],
