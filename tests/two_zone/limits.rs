@@ -36,7 +36,7 @@ fn most_that_moves_kg_s(network: &Network) -> f64 {
 
 #[test]
 fn an14_without_a_fire_nothing_moves() {
-    for network in still_buildings(false) {
+    for network in still_buildings(false).into_iter().chain(still_buildings(true)) {
         let (samples, _) = run_all(&network, &Plan::every(100.0, 900.0));
 
         assert!(most_that_moves_kg_s(&network) < 1e-9, "{network:?}");
@@ -50,16 +50,6 @@ fn an14_without_a_fire_nothing_moves() {
                 assert!((room.lower.gas.oxygen - before.lower.gas.oxygen).abs() < 1e-9, "{room:?}");
             }
         }
-    }
-}
-
-/// A miss that is known: under a hatch, rounding grows in the sliver of hot layer that a room starts with,
-/// to kelvins of that sliver and to what is asserted here, where the closed form has nothing.
-#[test]
-fn without_a_fire_a_hatch_breathes_less_than_ten_grams_a_second() {
-    for network in still_buildings(true) {
-        let most = most_that_moves_kg_s(&network);
-        assert!(most < 1e-2, "{most} kg/s in {network:?}");
     }
 }
 

@@ -7,7 +7,7 @@
 //! matrix loses nothing and the method keeps mass, energy and elements to rounding.
 
 use super::building::{Building, SURFACES, ledger};
-use super::gas::{GAMMA, OXYGEN, PRODUCTS, SPECIES_MAX, SPECIFIC_HEAT_J_KGK};
+use super::gas::{GAMMA, GAS_CONSTANT_J_KGK, OXYGEN, PRODUCTS, SPECIES_MAX, SPECIFIC_HEAT_J_KGK};
 use super::rates::{CORE, JetBurn, Look, Model, Transfer, held_kg, place, remnant_1_s};
 use super::room::Inner;
 
@@ -385,7 +385,15 @@ impl Matrix {
                 block[1][way] = gain * (hot - volume * all / room.volume_m3) / (GAMMA * pressure);
             }
             if row == column {
-                block[1][1] -= rates[offset] / (GAMMA * pressure) + remnant_1_s(&look.now[row]);
+                block[1][1] -= rates[offset] / (GAMMA * pressure);
+                // A remnant is led back to what its mass takes up: in step with the mass, or the two part again.
+                let now = &look.now[row];
+                let smaller = usize::from(now.there[1] < now.there[0]);
+                let led = remnant_1_s(now) * (1.0 - now.there[smaller]);
+                let kelvin = [now.upper_k, now.lower_k][smaller];
+                let side = [1.0, -1.0][smaller];
+                block[1][1] -= led;
+                block[1][2 + smaller] += side * led * GAS_CONSTANT_J_KGK * kelvin / pressure;
                 block[1][0] -= rates[offset + 1] / pressure;
             }
         }
