@@ -13,7 +13,8 @@ fn still_buildings(hatches: bool) -> Vec<Network> {
         TestRunner::new_with_rng(Config::default(), TestRng::from_seed(RngAlgorithm::ChaCha, &[14; 32]));
     let mut found = Vec::new();
     while found.len() < 12 {
-        let mut network: Network = any_building().new_tree(&mut runner).unwrap().current();
+        let mut network: Network =
+            any_building().new_tree(&mut runner).expect("buildings are made without rejection").current();
         network.fires.clear();
         network.fans.clear();
         network.ambient.temperature_k = 293.0;
