@@ -168,7 +168,7 @@ pub struct Fire {
     pub heat_release: HeatRelease,
     /// Height of its base above the floor, m.
     pub base_height_m: f64,
-    /// Diameter, m.
+    /// Diameter, m; of a growing fire at its greatest.
     pub diameter_m: f64,
     /// Where it stands.
     pub position: Position,

@@ -8,7 +8,7 @@ use super::gas::{
     SPECIFIC_HEAT_J_KGK, WATER,
 };
 use super::jets;
-use super::network::{Fan, Lie, Network, Position, Side};
+use super::network::{Fan, Fire, HeatRelease, Lie, Network, Position, Side};
 use super::radiation::{self, Glow, Zones};
 use super::real::{Dual, Real};
 use super::room::{self, Around, Burning, Derived, Fires, Inner, Inside, Reaction, black_w_m2};
@@ -213,15 +213,16 @@ impl Look {
                 continue;
             }
             let clock_s = state[model.building.layout.clocks + index];
+            let wanted_w = control.wanted_w(fire, clock_s, time_s);
             self.burning[fire.room].push(Burning {
                 fire: index,
                 fuel: fire.fuel,
-                wanted_w: control.wanted_w(fire, clock_s, time_s),
+                wanted_w,
                 alight: control.alight,
                 oxygen_limited: fire.oxygen_limited,
                 without_flame: control.without_flame(fire, time_s),
                 base_m: fire.base_height_m,
-                diameter_m: fire.diameter_m,
+                diameter_m: burning_diameter_m(fire, wanted_w),
                 images: match fire.position {
                     Position::Centre => 1.0,
                     Position::Wall => std::f64::consts::SQRT_2,
@@ -872,6 +873,18 @@ impl Look {
             }
             out[upper + PRODUCTS + index] -= burnt;
             out[layout.ledger + ledger::RELEASED] += oxygen * fuel.heat_per_oxygen_j_kg;
+        }
+    }
+}
+
+/// Diameter of what burns now, m: a fire that grows spreads over its item, its area in step with its heat release; a
+/// burner, or a curve that was measured, has its size from the start.
+fn burning_diameter_m(fire: &Fire, wanted_w: f64) -> f64 {
+    match &fire.heat_release {
+        HeatRelease::Points(_) => fire.diameter_m,
+        HeatRelease::Grown(design) => {
+            let share = wanted_w / (1000.0 * design.phases().reached_kw.max(1e-3));
+            fire.diameter_m * share.clamp(0.0, 1.0).sqrt()
         }
     }
 }
