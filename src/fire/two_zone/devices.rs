@@ -15,8 +15,8 @@ pub(super) struct Device {
 
 /// Gas at a device: the ceiling jet of the strongest fire of its room, in the layer that has formed.
 ///
-/// The jet rises out of gas as warm as the layer at the ceiling: the layer's rise is added to the jet's,
-/// held at the plume's own temperature of 1 100 K above.
+/// The jet rises out of the cool gas, at most 1 100 K warmer, as a flame is; the device is never cooler than the
+/// layer about it. That the jet draws hot gas where a layer has formed is left out: it answers late rather than early.
 fn gas_at(network: &Network, detector: &Detector, sample: &Sample) -> (f64, f64) {
     let room = &network.rooms[detector.room];
     let state = &sample.rooms[detector.room];

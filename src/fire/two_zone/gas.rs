@@ -58,8 +58,12 @@ pub(super) fn fuel_elements(fuel: &Fuel) -> [f64; 4] {
 }
 
 /// The list of masses of a layer as named fractions.
+///
+/// Where there is no nitrogen left (a layer of fuel gas alone) species and mass, each held to the tolerance of the
+/// steps, may disagree by it: the species are then the whole.
 pub(super) fn composition(species_kg: &[f64], mass_kg: f64) -> Composition {
-    let share = |kg: f64| (kg / mass_kg).clamp(0.0, 1.0);
+    let whole_kg = mass_kg.max(species_kg.iter().map(|kg| kg.max(0.0)).sum());
+    let share = |kg: f64| (kg / whole_kg).clamp(0.0, 1.0);
     Composition {
         oxygen: share(species_kg[OXYGEN]),
         carbon_dioxide: share(species_kg[CARBON_DIOXIDE]),
