@@ -13,6 +13,7 @@ pub use csv::csv;
 pub use series::{SimulationOpening, SimulationRoom};
 
 use super::number::{Exact, Number};
+use super::text::PLANNING_ONLY;
 use super::words::{Printed, Told};
 use crate::assessment::ENGINE_VERSION;
 use crate::assessment::simulation::{self, EventKind, Simulated};
@@ -140,10 +141,15 @@ impl SimulationResult {
                 element_error_relative: Number::of(found.element_error_relative),
             },
             solver: SimulationSolver { steps: found.steps, rejected: found.rejected },
-            notes: found.notes.iter().map(note).collect(),
+            notes: std::iter::once(planning_only()).chain(found.notes.iter().map(note)).collect(),
             engine_version: ENGINE_VERSION,
         }
     }
+}
+
+/// The caution that every run carries, as every report does; it is of the whole run.
+fn planning_only() -> SimulationNote {
+    SimulationNote { key: "planning_only", pointer: String::new(), text: PLANNING_ONLY.to_owned() }
 }
 
 /// Four significant digits would put an event of the evening ten seconds off; a millisecond is finer

@@ -66,7 +66,18 @@ fn findings_have_four_digits_and_moments_are_kept() {
     assert_eq!(answer["events"][0]["at_s"], 12_345.679);
     assert_eq!(answer["balance"]["mass_error_relative"], 1.235e-12);
     assert_eq!(answer["solver"], serde_json::json!({ "steps": 70, "rejected": 2 }));
-    assert_eq!(answer["notes"], serde_json::json!([{ "key": "sealed", "pointer": "/rooms/0", "text": "x" }]));
+    assert_eq!(
+        answer["notes"][1],
+        serde_json::json!({ "key": "sealed", "pointer": "/rooms/0", "text": "x" })
+    );
+}
+
+#[test]
+fn every_run_says_that_it_is_for_planning() {
+    let answer = serde_json::to_value(SimulationResult::of(&simulated())).unwrap();
+
+    assert_eq!(answer["notes"][0]["key"], "planning_only");
+    assert!(answer["notes"][0]["text"].as_str().unwrap().contains("local codes"));
 }
 
 #[test]

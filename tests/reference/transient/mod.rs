@@ -127,6 +127,20 @@ mod tests {
     }
 
     #[test]
+    fn the_service_tells_the_figures_of_the_record() {
+        let told = sootline::fire::methods::find("two_layer_network").unwrap().validation;
+
+        for judged in bars::judge(&VALIDATION.points) {
+            let figure = match (&judged.pooled, judged.held) {
+                (Some(pool), _) => format!("{:.2} ± {:.2}", pool.bias, pool.sd),
+                (None, Some((right, of))) => format!("{right} of {of}"),
+                (None, None) => continue,
+            };
+            assert!(told.contains(&figure), "{}: {figure} is not in: {told}", judged.bar.quantity.title());
+        }
+    }
+
+    #[test]
     fn a_missed_bar_is_explained_and_a_met_one_has_nothing_to_explain() {
         for judged in bars::judge(&VALIDATION.points) {
             let quantity = judged.bar.quantity.title();
